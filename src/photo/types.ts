@@ -27,7 +27,11 @@ export interface PhotoMetadata {
   readonly takenAt?: string;
   readonly takenAtHasOffset: boolean;
   /** WGS 84. */
-  readonly position?: { readonly latitudeDeg: number; readonly longitudeDeg: number; readonly errorM?: number };
+  readonly position?: {
+    readonly latitudeDeg: number;
+    readonly longitudeDeg: number;
+    readonly errorM?: number;
+  };
   readonly altitudeM?: number;
   readonly headingDeg?: number;
   readonly headingReference?: 'true' | 'magnetic';
