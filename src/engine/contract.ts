@@ -1,7 +1,6 @@
 /** What the page asks of its workers, and what comes back. Data only: no functions cross the boundary. */
 import type { Reading, ThicknessMap } from '../match/types.ts';
 import type { PhotoMetadata } from '../photo/types.ts';
-import type { Setup } from './setup.ts';
 
 /** A running request. Exactly one of result or failure settles `promise`; after `cancel` it rejects with `Cancelled`. */
 export interface Job<T> {
@@ -114,14 +113,4 @@ export interface ChartView {
   readonly resolvableNm: { readonly fromNm: number; readonly toNm: number };
   /** Pairs of thicknesses in different orders whose colours are closer than the stated noise. */
   readonly lookAlikes: readonly { readonly aNm: number; readonly bNm: number; readonly deltaE: number }[];
-}
-
-/** The face the page sees. One photo is open at a time; a second `openPhoto` replaces the first. */
-export interface Engine {
-  openPhoto(file: Blob, fileName: string, onProgress?: OnProgress): Job<OpenedPhoto>;
-  estimate(setup: Setup, onProgress?: OnProgress): Job<EstimateResult>;
-  /** After `estimate`; x, y in pixels of the opened photo. Resolves null outside the photo. */
-  probe(x: number, y: number): Promise<Probe | null>;
-  chart(setup: Setup, maxThicknessNm: number): Job<ChartView>;
-  dispose(): void;
 }
