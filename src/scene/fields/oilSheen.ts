@@ -1,0 +1,74 @@
+import { hashText, type Random } from '../random.ts';
+import { fractalNoise, smoothStep } from '../smoothNoise.ts';
+import type { ThicknessField } from './thicknessField.ts';
+
+export interface OilSheenOptions {
+  /** Greatest thickness, nm. */
+  readonly thickestNm: number;
+  /** Share of the noise that is under water level: larger means less oil. */
+  readonly bareLevel: number;
+  /** Features a unit of length. */
+  readonly scale: number;
+  /** Stretch along x: 1 for patches, 3 and more for streamers. */
+  readonly stretch: number;
+  /** Holes of bare water a unit of area. */
+  readonly holes: number;
+  /** A place kept free of oil, for the clean reference; [x, y, radius]. */
+  readonly keepBare: readonly [number, number, number];
+  /** The box over which `thickestNm` is reached; [x0, y0, x1, y1]. */
+  readonly box: readonly [number, number, number, number];
+}
+
+export function drawOilSheen(random: Random): OilSheenOptions {
+  return {
+    thickestNm: random.uniform(650, 1000),
+    bareLevel: random.uniform(-0.12, 0.02),
+    scale: random.uniform(2, 3),
+    stretch: random.uniform(1, 2.2),
+    holes: 10,
+    keepBare: [0.1, 0.88, 0.16],
+    box: [0, 0, 1, 1],
+  };
+}
+
+/** A sheen with islands, holes and bare water between (0 there); smooth inside, its edges thin out steeply. */
+export function oilSheenField(options: OilSheenOptions, random: Random): ThicknessField {
+  const seed = hashText(String(random.next()));
+  const body = fractalNoise(seed, 4, 0.42);
+  const warpX = fractalNoise(seed + 1, 2);
+  const warpY = fractalNoise(seed + 2, 2);
+  const [x0, y0, x1, y1] = options.box;
+  const area = (x1 - x0) * (y1 - y0);
+  const holes = Array.from({ length: Math.round(options.holes * area) }, () => ({
+    x: random.uniform(x0, x1),
+    y: random.uniform(y0, y1),
+    radius: random.uniform(0.02, 0.06) * (2.5 / options.scale),
+  }));
+  const [bareX, bareY, bareRadius] = options.keepBare;
+
+  const level: ThicknessField = (x, y) => {
+    const u = (x * options.scale) / options.stretch;
+    const v = y * options.scale;
+    let value =
+      body(u + 0.7 * warpX(u * 0.8, v * 0.8), v + 0.7 * warpY(u * 0.8 + 5, v * 0.8)) - options.bareLevel;
+    for (const hole of holes) {
+      const distance = Math.hypot((x - hole.x) / options.stretch, y - hole.y) / hole.radius;
+      if (distance < 1.5) {
+        value -= 0.9 * (1 - smoothStep(0.7, 1.5, distance));
+      }
+    }
+    const toBare = Math.hypot(x - bareX, y - bareY) / bareRadius;
+    return toBare < 1.6 ? value - 2 * (1 - smoothStep(0.9, 1.6, toBare)) : value;
+  };
+
+  let highest = 1e-6;
+  for (let j = 0; j < 96; j++) {
+    for (let i = 0; i < 96; i++) {
+      highest = Math.max(highest, level(x0 + ((x1 - x0) * (i + 0.5)) / 96, y0 + ((y1 - y0) * (j + 0.5)) / 96));
+    }
+  }
+  return (x, y) => {
+    const share = Math.min(1, level(x, y) / highest);
+    return share <= 0 ? 0 : options.thickestNm * share ** 0.9;
+  };
+}

@@ -1,0 +1,126 @@
+import { hashText, type Random } from '../random.ts';
+import { type Field2, fractalNoise, gradientNoise, smoothStep } from '../smoothNoise.ts';
+import type { ThicknessField } from './thicknessField.ts';
+
+export interface SoapFilmOptions {
+  /** Thickness at the top and at the bottom of the frame before plumes, nm. */
+  readonly topNm: number;
+  readonly bottomNm: number;
+  /** Profile power: 0.5 is a rigid film under gravity (Mysels, Shinoda & Frankel 1959), above 1 a mobile one. */
+  readonly power: number;
+  /** Number of thin patches that rise from the sides and the bottom (marginal regeneration). */
+  readonly plumes: number;
+  /** How far the film is stirred, as a share of the film's height. */
+  readonly stir: number;
+  /** Black film from the top down to this share of the height; 0 for none. */
+  readonly blackShare: number;
+  readonly blackNm: number;
+}
+
+/** A draining film as it might be found: thin on top, 5 to 1250 nm in all. */
+export function drawSoapFilm(random: Random, black: boolean): SoapFilmOptions {
+  return {
+    topNm: black ? random.uniform(60, 160) : random.uniform(5, 60),
+    bottomNm: random.uniform(850, 1250),
+    power: random.uniform(0.9, 1.5),
+    plumes: 8 + Math.floor(8 * random.next()),
+    stir: random.uniform(0.03, 0.07),
+    blackShare: black ? random.uniform(0.12, 0.3) : 0,
+    blackNm: random.uniform(5, 30),
+  };
+}
+
+interface Plume {
+  readonly x: number;
+  readonly y: number;
+  readonly length: number;
+  readonly width: number;
+  readonly lean: number;
+  readonly depth: number;
+}
+
+function drawPlume(random: Random): Plume {
+  const fromSide = random.next() < 0.6;
+  const left = random.next() < 0.5;
+  const x = fromSide ? (left ? random.uniform(0.01, 0.09) : random.uniform(0.91, 0.99)) : random.uniform(0.1, 0.9);
+  const y = fromSide ? random.uniform(0.35, 0.98) : random.uniform(0.9, 1.02);
+  return {
+    x,
+    y,
+    length: random.uniform(0.12, 0.3),
+    width: random.uniform(0.02, 0.045),
+    lean: fromSide ? (left ? random.uniform(0, 0.35) : random.uniform(-0.35, 0)) : random.uniform(-0.2, 0.2),
+    depth: random.uniform(0.12, 0.35),
+  };
+}
+
+/** Share of thickness that a plume takes away at a place: a stalk that widens into a rounded head. */
+function plumeDepth(plume: Plume, x: number, y: number): number {
+  const rise = (plume.y - y) / plume.length;
+  if (rise < -0.3 || rise > 1.4) {
+    return 0;
+  }
+  const across = x - plume.x - plume.lean * plume.length * Math.max(0, rise);
+  const stalk = plume.width * 0.5;
+  const stalkPart =
+    0.7 * Math.exp(-0.5 * (across / stalk) ** 2) * smoothStep(-0.3, 0.1, rise) * (1 - smoothStep(0.8, 1.15, rise));
+  const head = Math.hypot(across / (plume.width * 1.1), (rise - 0.95) / (plume.width * 0.8 / plume.length));
+  return plume.depth * Math.min(1, stalkPart + Math.exp(-0.5 * head * head));
+}
+
+/** Follows a place back through a slow stirring: area-preserving steps along the curl of a noise. */
+function stirrer(stream: Field2, stir: number, marginWeight: (x: number, y: number) => number) {
+  const steps = 5;
+  const eps = 0.004;
+  return (place: { x: number; y: number }) => {
+    for (let i = 0; i < steps; i++) {
+      const weight = (stir / steps) * marginWeight(place.x, place.y);
+      const dy = (stream(place.x, place.y + eps) - stream(place.x, place.y - eps)) / (2 * eps);
+      const dx = (stream(place.x + eps, place.y) - stream(place.x - eps, place.y)) / (2 * eps);
+      place.x += weight * dy * 0.12;
+      place.y -= weight * dx * 0.12;
+    }
+  };
+}
+
+/** The thickness of a vertical draining soap film over the unit square (the inside of its frame); never NaN. */
+export function soapFilmField(options: SoapFilmOptions, random: Random): ThicknessField {
+  const seed = hashText(String(random.next()));
+  const wide = fractalNoise(seed, 2);
+  const fine = gradientNoise(seed + 7);
+  const stream: Field2 = (x, y) => wide(x * 4, y * 3) + 0.25 * fine(x * 11, y * 8);
+  const margin = (x: number, y: number) => {
+    const side = Math.min(x, 1 - x);
+    return 0.35 + 1.1 * (1 - smoothStep(0.04, 0.3, side)) + 0.9 * smoothStep(0.55, 1, y);
+  };
+  const stir = stirrer(stream, options.stir, margin);
+  const plumes = Array.from({ length: options.plumes }, () => drawPlume(random));
+  const borderNoise = fractalNoise(seed + 13, 3);
+  const spots = Array.from({ length: options.blackShare > 0 ? 5 : 0 }, () => ({
+    x: random.uniform(0.1, 0.9),
+    y: options.blackShare + random.uniform(0.02, 0.09),
+    radius: random.uniform(0.008, 0.025),
+  }));
+  const place = { x: 0, y: 0 };
+
+  return (x, y) => {
+    if (options.blackShare > 0) {
+      const border = options.blackShare + 0.02 * borderNoise(x * 3, 0.5) + 0.01 * borderNoise(x * 9, 3.5);
+      const inSpot = spots.some((spot) => Math.hypot(x - spot.x, y - spot.y) < spot.radius);
+      if (y < border || inSpot) {
+        return Math.max(5, options.blackNm * (1 + 0.05 * borderNoise(x * 2, y * 2)));
+      }
+    }
+    place.x = x;
+    place.y = y;
+    stir(place);
+    const depth = Math.min(1, Math.max(0, (place.y - options.blackShare) / (1 - options.blackShare)));
+    let nm = options.topNm + (options.bottomNm - options.topNm) * depth ** options.power;
+    let left = 1;
+    for (const plume of plumes) {
+      left *= 1 - plumeDepth(plume, place.x, place.y);
+    }
+    nm *= left;
+    return Math.min(1250, Math.max(5, nm));
+  };
+}
