@@ -13,8 +13,16 @@ function bell(nm: number, peak: number, left: number, right: number): number {
 export function outsideSensorCurves(wavelengthNm: Float64Array, random: Random): Float64Array {
   const n = wavelengthNm.length;
   const red = { peak: random.uniform(592, 608), left: random.uniform(22, 32), right: random.uniform(34, 48) };
-  const green = { peak: random.uniform(528, 541), left: random.uniform(30, 40), right: random.uniform(34, 44) };
-  const blue = { peak: random.uniform(453, 467), left: random.uniform(20, 28), right: random.uniform(26, 38) };
+  const green = {
+    peak: random.uniform(528, 541),
+    left: random.uniform(30, 40),
+    right: random.uniform(34, 44),
+  };
+  const blue = {
+    peak: random.uniform(453, 467),
+    left: random.uniform(20, 28),
+    right: random.uniform(26, 38),
+  };
   const leak = Array.from({ length: 4 }, () => random.uniform(0.01, 0.07));
   const cut = { at: random.uniform(645, 668), width: random.uniform(5, 11) };
   const curves = new Float64Array(3 * n);

@@ -9,7 +9,8 @@ function fade(t: number): number {
 }
 
 function latticeGradient(seed: number, ix: number, iy: number, x: number, y: number): number {
-  const angle = (scramble32(seed ^ Math.imul(ix, 0x27d4eb2d) ^ Math.imul(iy, 0x165667b1)) / 4294967296) * 2 * Math.PI;
+  const angle =
+    (scramble32(seed ^ Math.imul(ix, 0x27d4eb2d) ^ Math.imul(iy, 0x165667b1)) / 4294967296) * 2 * Math.PI;
   return Math.cos(angle) * x + Math.sin(angle) * y;
 }
 

@@ -10,6 +10,8 @@ export const TRUE_KIND = {
   film: 1,
   /** Bare surface: thickness 0. */
   bare: 2,
+  /** Film or bare water that mirrors something solid instead of the sky: its colour is not the sky's light. */
+  mirrorsSolid: 3,
 } as const;
 
 /** Everything that was drawn at random and that the reader is not told. */

@@ -24,7 +24,12 @@ describe('developing', () => {
   });
 
   it('applies matrix, exposure and veil on linear light, in that order', () => {
-    const development = { ...plain, matrix: Float64Array.of(1.5, -0.4, -0.1, 0, 1, 0, 0, 0, 1), exposure: 2, veil: [0.01, 0, 0.02] as const };
+    const development = {
+      ...plain,
+      matrix: Float64Array.of(1.5, -0.4, -0.1, 0, 1, 0, 0, 0, 1),
+      exposure: 2,
+      veil: [0.01, 0, 0.02] as const,
+    };
     const [r, g, b] = codesOfRaw([0.2, 0.1, 0.05], development);
     const [er, eg, eb] = codesOfRaw([2 * (0.3 - 0.04 - 0.005) + 0.01, 0.2, 0.12], plain);
     expect(r).toBeCloseTo(er, 9);
@@ -107,7 +112,9 @@ describe('the in-camera matrix', () => {
   });
 
   it('refuses colours that are all alike', () => {
-    expect(() => fitCameraMatrix(new Float64Array(9).fill(0.5), new Float64Array(9).fill(0.5))).toThrow(/alike/);
+    expect(() => fitCameraMatrix(new Float64Array(9).fill(0.5), new Float64Array(9).fill(0.5))).toThrow(
+      /alike/,
+    );
   });
 
   it('gives white for a perfect reflector', () => {

@@ -64,7 +64,10 @@ export function oilSheenField(options: OilSheenOptions, random: Random): Thickne
   let highest = 1e-6;
   for (let j = 0; j < 96; j++) {
     for (let i = 0; i < 96; i++) {
-      highest = Math.max(highest, level(x0 + ((x1 - x0) * (i + 0.5)) / 96, y0 + ((y1 - y0) * (j + 0.5)) / 96));
+      highest = Math.max(
+        highest,
+        level(x0 + ((x1 - x0) * (i + 0.5)) / 96, y0 + ((y1 - y0) * (j + 0.5)) / 96),
+      );
     }
   }
   return (x, y) => {

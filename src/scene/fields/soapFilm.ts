@@ -1,5 +1,5 @@
 import { hashText, type Random } from '../random.ts';
-import { type Field2, fractalNoise, gradientNoise, smoothStep } from '../smoothNoise.ts';
+import { fractalNoise, smoothStep } from '../smoothNoise.ts';
 import type { ThicknessField } from './thicknessField.ts';
 
 export interface SoapFilmOptions {
@@ -10,8 +10,9 @@ export interface SoapFilmOptions {
   readonly power: number;
   /** Number of thin patches that rise from the sides and the bottom (marginal regeneration). */
   readonly plumes: number;
-  /** How far the film is stirred, as a share of the film's height. */
-  readonly stir: number;
+  /** Turning cells along the margins, and how far a strong one has turned. */
+  readonly swirls: number;
+  readonly turnRad: number;
   /** Black film from the top down to this share of the height; 0 for none. */
   readonly blackShare: number;
   readonly blackNm: number;
@@ -24,7 +25,8 @@ export function drawSoapFilm(random: Random, black: boolean): SoapFilmOptions {
     bottomNm: random.uniform(850, 1250),
     power: random.uniform(0.9, 1.5),
     plumes: 8 + Math.floor(8 * random.next()),
-    stir: random.uniform(0.03, 0.07),
+    swirls: 18 + Math.floor(14 * random.next()),
+    turnRad: random.uniform(0.9, 1.7),
     blackShare: black ? random.uniform(0.12, 0.3) : 0,
     blackNm: random.uniform(5, 30),
   };
@@ -42,7 +44,11 @@ interface Plume {
 function drawPlume(random: Random): Plume {
   const fromSide = random.next() < 0.6;
   const left = random.next() < 0.5;
-  const x = fromSide ? (left ? random.uniform(0.01, 0.09) : random.uniform(0.91, 0.99)) : random.uniform(0.1, 0.9);
+  const x = fromSide
+    ? left
+      ? random.uniform(0.01, 0.09)
+      : random.uniform(0.91, 0.99)
+    : random.uniform(0.1, 0.9);
   const y = fromSide ? random.uniform(0.35, 0.98) : random.uniform(0.9, 1.02);
   return {
     x,
@@ -63,37 +69,59 @@ function plumeDepth(plume: Plume, x: number, y: number): number {
   const across = x - plume.x - plume.lean * plume.length * Math.max(0, rise);
   const stalk = plume.width * 0.5;
   const stalkPart =
-    0.7 * Math.exp(-0.5 * (across / stalk) ** 2) * smoothStep(-0.3, 0.1, rise) * (1 - smoothStep(0.8, 1.15, rise));
-  const head = Math.hypot(across / (plume.width * 1.1), (rise - 0.95) / (plume.width * 0.8 / plume.length));
+    0.7 *
+    Math.exp(-0.5 * (across / stalk) ** 2) *
+    smoothStep(-0.3, 0.1, rise) *
+    (1 - smoothStep(0.8, 1.15, rise));
+  const head = Math.hypot(across / (plume.width * 1.1), (rise - 0.95) / ((plume.width * 0.8) / plume.length));
   return plume.depth * Math.min(1, stalkPart + Math.exp(-0.5 * head * head));
 }
 
-/** Follows a place back through a slow stirring: area-preserving steps along the curl of a noise. */
-function stirrer(stream: Field2, stir: number, marginWeight: (x: number, y: number) => number) {
-  const steps = 5;
-  const eps = 0.004;
-  return (place: { x: number; y: number }) => {
-    for (let i = 0; i < steps; i++) {
-      const weight = (stir / steps) * marginWeight(place.x, place.y);
-      const dy = (stream(place.x, place.y + eps) - stream(place.x, place.y - eps)) / (2 * eps);
-      const dx = (stream(place.x + eps, place.y) - stream(place.x - eps, place.y)) / (2 * eps);
-      place.x += weight * dy * 0.12;
-      place.y -= weight * dx * 0.12;
-    }
+/** A turning cell: carries the film round its middle, most in the middle (area-preserving). */
+interface Swirl {
+  readonly x: number;
+  readonly y: number;
+  readonly radius: number;
+  readonly turnRad: number;
+}
+
+/** Cells sit along the sides and the bottom, where thin film rises past thick film that sinks. */
+function drawSwirl(random: Random, stir: number): Swirl {
+  const place = random.next();
+  const left = random.next() < 0.5;
+  const x =
+    place < 0.7 ? (left ? random.uniform(0, 0.16) : random.uniform(0.84, 1)) : random.uniform(0.1, 0.9);
+  const y = place < 0.7 ? 0.12 + 0.88 * Math.sqrt(random.next()) : random.uniform(0.82, 1);
+  const inwards = left === x < 0.5 ? 1 : -1;
+  return {
+    x,
+    y,
+    radius: random.uniform(0.022, 0.06) * (0.6 + 0.6 * y),
+    turnRad: inwards * stir * random.uniform(0.5, 1.5),
   };
+}
+
+/** Follows a place back through the cells, last one first. */
+function unstir(swirls: readonly Swirl[], place: { x: number; y: number }): void {
+  for (const swirl of swirls) {
+    const dx = place.x - swirl.x;
+    const dy = place.y - swirl.y;
+    const far = (dx * dx + dy * dy) / (swirl.radius * swirl.radius);
+    if (far < 12) {
+      const angle = swirl.turnRad * Math.exp(-0.5 * far);
+      const cos = Math.cos(angle);
+      const sin = Math.sin(angle);
+      place.x = swirl.x + cos * dx - sin * dy;
+      place.y = swirl.y + sin * dx + cos * dy;
+    }
+  }
 }
 
 /** The thickness of a vertical draining soap film over the unit square (the inside of its frame); never NaN. */
 export function soapFilmField(options: SoapFilmOptions, random: Random): ThicknessField {
   const seed = hashText(String(random.next()));
-  const wide = fractalNoise(seed, 2);
-  const fine = gradientNoise(seed + 7);
-  const stream: Field2 = (x, y) => wide(x * 4, y * 3) + 0.25 * fine(x * 11, y * 8);
-  const margin = (x: number, y: number) => {
-    const side = Math.min(x, 1 - x);
-    return 0.35 + 1.1 * (1 - smoothStep(0.04, 0.3, side)) + 0.9 * smoothStep(0.55, 1, y);
-  };
-  const stir = stirrer(stream, options.stir, margin);
+  const sway = fractalNoise(seed, 2);
+  const swirls = Array.from({ length: options.swirls }, () => drawSwirl(random, options.turnRad));
   const plumes = Array.from({ length: options.plumes }, () => drawPlume(random));
   const borderNoise = fractalNoise(seed + 13, 3);
   const spots = Array.from({ length: options.blackShare > 0 ? 5 : 0 }, () => ({
@@ -113,7 +141,8 @@ export function soapFilmField(options: SoapFilmOptions, random: Random): Thickne
     }
     place.x = x;
     place.y = y;
-    stir(place);
+    unstir(swirls, place);
+    place.y += 0.035 * sway(place.x * 2.2, place.y * 1.3);
     const depth = Math.min(1, Math.max(0, (place.y - options.blackShare) / (1 - options.blackShare)));
     let nm = options.topNm + (options.bottomNm - options.topNm) * depth ** options.power;
     let left = 1;

@@ -63,7 +63,8 @@ function farWall(seed: number): Paint {
     }
     const course = Math.floor(z / 0.38);
     const along = x / 0.95 + 0.5 * (course & 1);
-    const inJoint = Math.abs(z / 0.38 - Math.round(z / 0.38)) < 0.05 || Math.abs(along - Math.round(along)) < 0.02;
+    const inJoint =
+      Math.abs(z / 0.38 - Math.round(z / 0.38)) < 0.05 || Math.abs(along - Math.round(along)) < 0.02;
     const weather = 1 + 0.35 * stain(x * 0.7, z * 1.6) + 0.25 * streak(x * 2.2, z * 0.3);
     const stone = 1 + 0.18 * Math.sin(Math.floor(along) * 12.9898 + course * 78.233);
     const wet = smoothStep(0.15, 0.55, z);
@@ -180,7 +181,8 @@ export function buildSurroundings(options: SurroundingsOptions, random: Random):
   const paintQuay = (x: number, y: number, z: number, onTop: boolean, out: Float64Array) => {
     const across = onTop ? quayX - x : quayTopM - z;
     const fine = 1 + 0.3 * concrete(y * 5, across * 5 + (onTop ? 40 : 0));
-    const rough = 1 + 0.3 * blotch(y * 0.9, across * 0.9 + (onTop ? 9 : 3)) + 0.25 * grain(y * 60, across * 60);
+    const rough =
+      1 + 0.3 * blotch(y * 0.9, across * 0.9 + (onTop ? 9 : 3)) + 0.25 * grain(y * 60, across * 60);
     const joint = Math.abs(y / 2.5 + 0.3 - Math.round(y / 2.5 + 0.3)) < 0.004;
     if (onTop) {
       const coping = across < 0.34;
@@ -193,7 +195,15 @@ export function buildSurroundings(options: SurroundingsOptions, random: Random):
     put(out, 1.03 - 0.25 * (1 - wet), 1 + 0.05 * (1 - wet), 0.92 - 0.4 * (1 - wet), shade);
   };
 
-  const traceBoom = (ox: number, oy: number, oz: number, dx: number, dy: number, dz: number, out: Float64Array) => {
+  const traceBoom = (
+    ox: number,
+    oy: number,
+    oz: number,
+    dx: number,
+    dy: number,
+    dz: number,
+    out: Float64Array,
+  ) => {
     if (!boom || boomLength === 0) {
       return Number.POSITIVE_INFINITY;
     }
