@@ -41,7 +41,8 @@ export async function readExif(bytes: Uint8Array, exif: ByteRange | undefined): 
       reviveValues: false,
       mergeOutput: false,
     });
-    if (output)
+    // exifr passes over what it cannot follow: a block from which nothing came out was not readable.
+    if (output && (output.ifd0 || output.exif || output.gps))
       return interpret(output.ifd0 ?? {}, output.exif ?? {}, output.gps ?? {}, output.interop ?? {});
   } catch {
     // What exifr says of a broken block means nothing to a photographer; the sentence below does.
