@@ -52,9 +52,12 @@ export function oilSheenField(options: OilSheenOptions, random: Random): Thickne
     let value =
       body(u + 0.7 * warpX(u * 0.8, v * 0.8), v + 0.7 * warpY(u * 0.8 + 5, v * 0.8)) - options.bareLevel;
     for (const hole of holes) {
-      const distance = Math.hypot((x - hole.x) / options.stretch, y - hole.y) / hole.radius;
-      if (distance < 1.5) {
-        value -= 0.9 * (1 - smoothStep(0.7, 1.5, distance));
+      const dx = (x - hole.x) / options.stretch / hole.radius;
+      const dy = (y - hole.y) / hole.radius;
+      const distance = Math.hypot(dx, dy);
+      if (distance < 2.4) {
+        const ragged = distance * (1 + 0.35 * warpX(dx + 40 * hole.x, dy + 40 * hole.y));
+        value -= 0.7 * (1 - smoothStep(0.5, 1.8, ragged));
       }
     }
     const toBare = Math.hypot(x - bareX, y - bareY) / bareRadius;
