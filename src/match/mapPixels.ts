@@ -1,0 +1,231 @@
+import type { PhotoPixels } from '../photo/types.ts';
+import { type CandidateField, MOST_CANDIDATES } from './candidates.ts';
+import type { CodeChart } from './codeChart.ts';
+import type { ColourTable } from './colourTable.ts';
+import { MODE_FIELDS } from './posterior.ts';
+import { STATED_SMOOTHNESS } from './resolveOrders.ts';
+import { PIXEL_STATUS } from './types.ts';
+
+/** What is decided about pixels beyond their colour. */
+export interface ReadingRules {
+  /** Squared Mahalanobis distance beyond which a colour is no film. */
+  readonly outlierDistance: number;
+  /** Readings thinner than this are bare surface; 0 where the surface cannot be bare (a soap film in air). */
+  readonly bareNm: number;
+  /** Past this thickness colour tells nothing more: a lower bound. */
+  readonly resolvableNm: number;
+  /** A second order this close in cost leaves the pixel ambiguous. */
+  readonly ambiguityMargin: number;
+}
+
+/** Cost of a reading is capped here (minus log): one odd pixel cannot outvote its neighbours. */
+const MOST_COST = 6;
+/** 90 % of a Gaussian lies within this many standard deviations. */
+export const COVER_90 = 1.6448536;
+
+/** Marks of pixels that take no part: outside the region, clipped, painted out. One byte a pixel; 0 = takes part. */
+export type LeftOut = Uint8Array | null;
+
+function levelShift(pixels: PhotoPixels): number {
+  return pixels.maxCode === 255 ? 0 : 6;
+}
+
+/** Fills rows [fromRow, toRow) of a candidate field from the photo. */
+export function fillCandidates(
+  pixels: PhotoPixels,
+  table: ColourTable,
+  rules: ReadingRules,
+  leftOut: LeftOut,
+  field: CandidateField,
+  fromRow: number,
+  toRow: number,
+): void {
+  const shift = levelShift(pixels);
+  const { codes, channels, width } = pixels;
+  const half = field.spacing >> 1;
+  for (let row = fromRow; row < toRow; row++) {
+    const y = Math.min(pixels.height - 1, row * field.spacing + half);
+    for (let column = 0; column < field.width; column++) {
+      const x = Math.min(width - 1, column * field.spacing + half);
+      const pixel = y * width + x;
+      const place = row * field.width + column;
+      field.count[place] = 0;
+      if (leftOut?.[pixel]) continue;
+      const at = pixel * channels;
+      const offset = table.lookUp(codes[at]! >> shift, codes[at + 1]! >> shift, codes[at + 2]! >> shift);
+      const records = table.records();
+      if (records[offset + 1]! > rules.outlierDistance) continue;
+      const count = Math.min(records[offset]!, MOST_CANDIDATES);
+      field.count[place] = count;
+      const best = records[offset + 2 + 3]!;
+      for (let k = 0; k < count; k++) {
+        const mode = offset + 2 + k * MODE_FIELDS;
+        const out = place * MOST_CANDIDATES + k;
+        field.thicknessNm[out] = records[mode]!;
+        field.sdNm[out] = (records[mode + 2]! - records[mode + 1]!) / (2 * COVER_90);
+        field.cost[out] = Math.min(MOST_COST, (records[mode + 3]! - best) / 2);
+      }
+    }
+  }
+}
+
+/** The rows of a thickness map, before neighbours smooth them. */
+export interface MapRows {
+  readonly fromRow: number;
+  readonly toRow: number;
+  readonly thicknessNm: Float32Array;
+  readonly lowNm: Float32Array;
+  readonly highNm: Float32Array;
+  readonly order: Uint8Array;
+  readonly status: Uint8Array;
+}
+
+export function makeMapRows(width: number, fromRow: number, toRow: number): MapRows {
+  const size = width * (toRow - fromRow);
+  return {
+    fromRow,
+    toRow,
+    thicknessNm: new Float32Array(size).fill(Number.NaN),
+    lowNm: new Float32Array(size).fill(Number.NaN),
+    highNm: new Float32Array(size).fill(Number.NaN),
+    order: new Uint8Array(size).fill(255),
+    status: new Uint8Array(size),
+  };
+}
+
+/** Thickness settled on the candidate grid: NaN where no film; ambiguity as the margin of the order step. */
+export interface SettledField {
+  readonly width: number;
+  readonly height: number;
+  readonly spacing: number;
+  readonly thicknessNm: Float32Array;
+  readonly margin: Float32Array;
+}
+
+/**
+ * Reads every pixel of the rows: of its colour's modes the one that agrees best with the settled field around it.
+ */
+export function mapRows(
+  pixels: PhotoPixels,
+  table: ColourTable,
+  rules: ReadingRules,
+  leftOut: LeftOut,
+  settled: SettledField | null,
+  rows: MapRows,
+): void {
+  const shift = levelShift(pixels);
+  const { codes, channels, width } = pixels;
+  const nearby = new Float64Array(4);
+  for (let y = rows.fromRow; y < rows.toRow; y++) {
+    for (let x = 0; x < width; x++) {
+      const pixel = y * width + x;
+      const out = (y - rows.fromRow) * width + x;
+      if (leftOut?.[pixel]) {
+        rows.status[out] = leftOut[pixel]! === 1 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour;
+        continue;
+      }
+      const at = pixel * channels;
+      const offset = table.lookUp(codes[at]! >> shift, codes[at + 1]! >> shift, codes[at + 2]! >> shift);
+      const records = table.records();
+      if (records[offset + 1]! > rules.outlierDistance || records[offset] === 0) {
+        rows.status[out] = PIXEL_STATUS.noFilmColour;
+        continue;
+      }
+      const count = records[offset]!;
+      let chosen = 0;
+      let margin = Number.POSITIVE_INFINITY;
+      if (settled) {
+        const neighbours = settledAround(settled, x, y, nearby);
+        if (count > 1 || neighbours.margin < rules.ambiguityMargin) {
+          const choice = choose(records, offset, count, nearby, neighbours.count);
+          chosen = choice;
+          margin = neighbours.margin;
+        }
+      } else if (count > 1) {
+        margin = (records[offset + 2 + MODE_FIELDS + 3]! - records[offset + 2 + 3]!) / 2;
+      }
+      const mode = offset + 2 + chosen * MODE_FIELDS;
+      rows.thicknessNm[out] = records[mode]!;
+      rows.lowNm[out] = records[mode + 1]!;
+      rows.highNm[out] = records[mode + 2]!;
+      rows.status[out] =
+        count > 1 && margin < rules.ambiguityMargin ? PIXEL_STATUS.ambiguous : PIXEL_STATUS.measured;
+    }
+  }
+}
+
+/** Settled thicknesses of the four places about a pixel into `out`; how many, and the least margin among them. */
+function settledAround(settled: SettledField, x: number, y: number, out: Float64Array): { count: number; margin: number } {
+  const half = settled.spacing >> 1;
+  const left = Math.floor((x - half) / settled.spacing);
+  const top = Math.floor((y - half) / settled.spacing);
+  let margin = Number.POSITIVE_INFINITY;
+  let count = 0;
+  const reach = settled.spacing === 1 ? 1 : 2;
+  for (let dy = 0; dy < reach; dy++) {
+    const row = Math.max(0, Math.min(settled.height - 1, top + dy));
+    for (let dx = 0; dx < reach; dx++) {
+      const column = Math.max(0, Math.min(settled.width - 1, left + dx));
+      const place = row * settled.width + column;
+      const thickness = settled.thicknessNm[place]!;
+      if (Number.isNaN(thickness)) continue;
+      out[count++] = thickness;
+      if (settled.margin[place]! < margin) margin = settled.margin[place]!;
+    }
+  }
+  NEIGHBOURS.count = count;
+  NEIGHBOURS.margin = margin;
+  return NEIGHBOURS;
+}
+
+const NEIGHBOURS = { count: 0, margin: 0 };
+
+function choose(records: Float32Array, offset: number, count: number, nearby: Float64Array, neighbours: number): number {
+  const { perNm, edge } = STATED_SMOOTHNESS;
+  const best = records[offset + 2 + 3]!;
+  let chosen = 0;
+  let least = Number.POSITIVE_INFINITY;
+  for (let k = 0; k < count; k++) {
+    const mode = offset + 2 + k * MODE_FIELDS;
+    let cost = Math.min(MOST_COST, (records[mode + 3]! - best) / 2);
+    for (let n = 0; n < neighbours; n++) {
+      cost += Math.min(edge, perNm * Math.abs(records[mode]! - nearby[n]!));
+    }
+    if (cost < least) {
+      least = cost;
+      chosen = k;
+    }
+  }
+  return chosen;
+}
+
+/** Orders, bare surface, lower bounds and the shared part of the intervals; `ownShare` is noise variance left after smoothing. */
+export function finishRows(rows: MapRows, chart: CodeChart, rules: ReadingRules, ownShare: Float32Array | null): void {
+  const step = chart.thicknessNm[1]!;
+  for (let i = 0; i < rows.status.length; i++) {
+    const status = rows.status[i]!;
+    if (status !== PIXEL_STATUS.measured && status !== PIXEL_STATUS.ambiguous) continue;
+    const thickness = rows.thicknessNm[i]!;
+    const label = Math.max(0, Math.min(chart.count - 1, Math.round(thickness / step)));
+    const own = chart.noiseShare[label]! * (ownShare ? ownShare[i]! : 1);
+    const shared = (COVER_90 * chart.sharedSdNm[label]!) ** 2;
+    const low = thickness - Math.sqrt((thickness - rows.lowNm[i]!) ** 2 * own + shared);
+    const high = thickness + Math.sqrt((rows.highNm[i]! - thickness) ** 2 * own + shared);
+    rows.lowNm[i] = Math.max(0, low);
+    rows.highNm[i] = high;
+    if (thickness < rules.bareNm) {
+      rows.status[i] = PIXEL_STATUS.bare;
+      rows.thicknessNm[i] = 0;
+      rows.lowNm[i] = 0;
+      rows.order[i] = 0;
+    } else if (thickness > rules.resolvableNm) {
+      rows.status[i] = PIXEL_STATUS.atLeast;
+      rows.lowNm[i] = Math.min(low, rules.resolvableNm);
+      rows.thicknessNm[i] = Number.NaN;
+      rows.highNm[i] = Number.NaN;
+      rows.order[i] = 255;
+    } else {
+      rows.order[i] = chart.order[label]!;
+    }
+  }
+}

@@ -1,0 +1,125 @@
+import { type CandidateField, MOST_CANDIDATES } from './candidates.ts';
+
+/** How much neighbours are believed: a truncated-linear smoothness (edges are allowed, at a price that stops growing). */
+export interface Smoothness {
+  /** Cost (minus log probability) a nanometre of difference between adjacent pixels. */
+  readonly perNm: number;
+  /** Cost of an edge: no difference costs more. */
+  readonly edge: number;
+}
+
+export const STATED_SMOOTHNESS: Smoothness = { perNm: 0.03, edge: 6 };
+
+export interface OrderSolution {
+  /** Chosen candidate of each place; 255 where there is none. */
+  readonly choice: Uint8Array;
+  /** Cost of the best other candidate less that of the choice, per path: small means ambiguous. */
+  readonly margin: Float32Array;
+}
+
+/** Directions of the eight paths. */
+const PATHS: readonly (readonly [number, number])[] = [
+  [1, 0],
+  [-1, 0],
+  [0, 1],
+  [0, -1],
+  [1, 1],
+  [-1, -1],
+  [1, -1],
+  [-1, 1],
+];
+
+/**
+ * Chooses one candidate a place so that neighbours agree: semi-global matching (Hirschmueller 2008) over sparse
+ * candidates instead of a label grid, so its cost does not grow with the range of thickness.
+ *
+ * Places without candidates are bridged: the path goes on with what it last saw, so a fleck of glint does not cut it.
+ * @param onRow called now and then with the share done; return false to stop early (the result is then void)
+ */
+export function resolveOrders(
+  field: CandidateField,
+  smoothness: Smoothness = STATED_SMOOTHNESS,
+  onShare: (share: number) => void = () => {},
+): OrderSolution {
+  const { width, height, count, cost } = field;
+  const total = new Float32Array(width * height * MOST_CANDIDATES);
+  PATHS.forEach(([dx, dy], n) => {
+    sweep(field, smoothness, dx, dy, total);
+    onShare((n + 1) / PATHS.length);
+  });
+  const choice = new Uint8Array(width * height).fill(255);
+  const margin = new Float32Array(width * height);
+  for (let i = 0; i < width * height; i++) {
+    const n = count[i]!;
+    if (n === 0) continue;
+    let best = Number.POSITIVE_INFINITY;
+    let second = Number.POSITIVE_INFINITY;
+    let chosen = 0;
+    for (let k = 0; k < n; k++) {
+      // Each of the paths counted the place's own cost; it belongs in the sum once.
+      const c = total[i * MOST_CANDIDATES + k]! - (PATHS.length - 1) * cost[i * MOST_CANDIDATES + k]!;
+      if (c < best) {
+        second = best;
+        best = c;
+        chosen = k;
+      } else if (c < second) second = c;
+    }
+    choice[i] = chosen;
+    margin[i] = second - best;
+  }
+  return { choice, margin };
+}
+
+/** Adds the path costs of one direction to `total`. */
+function sweep(field: CandidateField, smoothness: Smoothness, dx: number, dy: number, total: Float32Array): void {
+  const { width, height, spacing, count, thicknessNm, sdNm, cost } = field;
+  const K = MOST_CANDIDATES;
+  const perNm = smoothness.perNm / (spacing * Math.hypot(dx, dy));
+  const edge = smoothness.edge;
+  // What each place passes on: path costs of the last place with candidates, and which place that was.
+  const message = new Float32Array(width * height * K);
+  const sourceOf = new Int32Array(width * height).fill(-1);
+  const forward = dy > 0 || (dy === 0 && dx > 0);
+  for (let row = 0; row < height; row++) {
+    const y = dy >= 0 ? row : height - 1 - row;
+    for (let column = 0; column < width; column++) {
+      const x = (dx === 0 ? forward : dx > 0) ? column : width - 1 - column;
+      const i = y * width + x;
+      const px = x - dx;
+      const py = y - dy;
+      const inside = px >= 0 && py >= 0 && px < width && py < height;
+      const source = inside ? sourceOf[py * width + px]! : -1;
+      const n = count[i]!;
+      if (n === 0) {
+        sourceOf[i] = source;
+        continue;
+      }
+      sourceOf[i] = i;
+      const own = i * K;
+      if (source < 0) {
+        for (let k = 0; k < n; k++) {
+          message[own + k] = cost[own + k]!;
+          total[own + k]! += cost[own + k]!;
+        }
+        continue;
+      }
+      const from = source * K;
+      const m = count[source]!;
+      let floor = Number.POSITIVE_INFINITY;
+      for (let q = 0; q < m; q++) if (message[from + q]! < floor) floor = message[from + q]!;
+      for (let k = 0; k < n; k++) {
+        const d = thicknessNm[own + k]!;
+        const w = sdNm[own + k]!;
+        let best = floor + edge;
+        for (let q = 0; q < m; q++) {
+          const gap = Math.abs(d - thicknessNm[from + q]!) - (w + sdNm[from + q]!);
+          const c = message[from + q]! + (gap > 0 ? perNm * gap : 0);
+          if (c < best) best = c;
+        }
+        const value = cost[own + k]! + best - floor;
+        message[own + k] = value;
+        total[own + k]! += value;
+      }
+    }
+  }
+}
