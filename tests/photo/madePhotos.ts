@@ -33,6 +33,17 @@ export function slopes(width = 48, height = 32): Picture {
   return { width, height, codes };
 }
 
+/** Coarse coloured noise about grey: edges everywhere, which is where decoders may differ. */
+export function speckle(width = 160, height = 120): Picture {
+  let state = 1;
+  const codes = Uint8Array.from({ length: width * height * 3 }, () => {
+    // Lehmer generator (Park and Miller 1988).
+    state = (state * 48271) % 2147483647;
+    return 60 + (state % 140);
+  });
+  return { width, height, codes };
+}
+
 export const asSharp = ({ codes, width, height }: Picture) =>
   sharp(codes, { raw: { width, height, channels: 3 } });
 
