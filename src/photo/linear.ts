@@ -28,3 +28,7 @@ export function linearLight(pixels: PhotoPixels, rectangle?: Rectangle, out?: Fl
   }
   return light;
 }
+
+// The other two ways of looking at code values, so that a reader of pixels needs this one place.
+export { EXPOSURE, exposureMask } from './exposure.ts';
+export { type RegionMean, regionMean } from './regionMean.ts';

@@ -31,6 +31,12 @@ export function sniffHeif(bytes: Uint8Array, format: 'avif' | 'heic'): SniffedPh
   const ispe = own.find(({ type }) => type === 'ispe');
   let width = ispe ? u32be(bytes, ispe.offset + 4) : 0;
   let height = ispe ? u32be(bytes, ispe.offset + 8) : 0;
+  // A clean aperture crops (ISO/IEC 14496-12, 12.1.4.2: width and height as fractions), before the picture is turned.
+  const clap = own.find(({ type }) => type === 'clap');
+  if (clap) {
+    width = Math.round(u32be(bytes, clap.offset) / u32be(bytes, clap.offset + 4)) || 0;
+    height = Math.round(u32be(bytes, clap.offset + 8) / u32be(bytes, clap.offset + 12)) || 0;
+  }
   const irot = own.find(({ type }) => type === 'irot');
   if (irot && ((bytes[irot.offset] ?? 0) & 1) === 1) [width, height] = [height, width];
   const pixi = own.find(({ type }) => type === 'pixi');

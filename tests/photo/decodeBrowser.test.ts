@@ -57,6 +57,10 @@ test('subsampled colour on hard edges', async () => {
   expect(await difference(await picture.clone().jpeg({ quality: 90 }).toBuffer())).toBe(0);
   expect(await difference(await picture.clone().jpeg({ quality: 90, progressive: true }).toBuffer())).toBe(0);
   expect(await difference(await picture.clone().webp({ quality: 90 }).toBuffer())).toBe(0);
+  expect(await difference(await picture.clone().avif({ lossless: true }).toBuffer())).toBe(0);
+  // From 10 bits to 8 there is a second rounding.
+  expect(await difference(await picture.clone().avif({ quality: 90 }).toBuffer())).toBeLessThanOrEqual(1);
+  expect(await difference(await picture.clone().avif({ bitdepth: 10 }).toBuffer())).toBeLessThanOrEqual(2);
 });
 
 test('a profile, a gamma or code points in the file change no code', async () => {

@@ -77,6 +77,27 @@ test('a picture inside a JPEG’s EXIF does not count as its end', async () => {
   expect(sniff(whole.subarray(0, whole.length - 40)).complete).toBe(false);
 });
 
+test('a cropped and turned AVIF has the size of what is shown (ISO/IEC 14496-12, 12.1.4; 23008-12, 6.5.10)', () => {
+  const u32 = (...values: number[]) =>
+    values.flatMap((v) => [v >>> 24, (v >> 16) & 255, (v >> 8) & 255, v & 255]);
+  const box = (type: string, ...body: number[][]) => {
+    const content = body.flat();
+    return [...u32(content.length + 8), ...Buffer.from(type), ...content];
+  };
+  const ispe = box('ispe', u32(0, 4000, 3000));
+  const clap = box('clap', u32(3800, 1, 5800, 2, 0, 1, 0, 1));
+  const irot = box('irot', [1]);
+  const ipma = box('ipma', u32(0, 1), [0, 1, 3, 1, 2, 3]);
+  const meta = box(
+    'meta',
+    u32(0),
+    box('pitm', u32(0), [0, 1]),
+    box('iprp', box('ipco', ispe, clap, irot), ipma),
+  );
+  const file = Uint8Array.from([...box('ftyp', [...Buffer.from('avif')], u32(0)), ...meta]);
+  expect(sniff(file)).toMatchObject({ format: 'avif', width: 2900, height: 3800 });
+});
+
 test('other kinds of file are told apart', async () => {
   expect(formatOf(await asSharp(picture).tiff().toBuffer())).toBe('tiff');
   expect(formatOf(await asSharp(picture).gif().toBuffer())).toBe('gif');
