@@ -1,6 +1,6 @@
 import { type CameraModel, modelEvaluator } from './cameraModel.ts';
-import type { CameraFit } from './fitCamera.ts';
 import { type CodeChart, invertCovariance } from './codeChart.ts';
+import type { CameraFit } from './fitCamera.ts';
 import { AT, PARAMETERS } from './parameters.ts';
 
 /** What scatters a single pixel's code about the chart, one standard deviation, codes of 255. */
@@ -63,7 +63,8 @@ export function buildCodeChart(
     for (let c = 0; c < 3; c++) {
       for (let p = 0; p < PARAMETERS; p++) {
         let sum = 0;
-        for (let q = 0; q < PARAMETERS; q++) sum += jacobian[c * PARAMETERS + q]! * fit.covariance[q * PARAMETERS + p]!;
+        for (let q = 0; q < PARAMETERS; q++)
+          sum += jacobian[c * PARAMETERS + q]! * fit.covariance[q * PARAMETERS + p]!;
         spread[c * PARAMETERS + p] = sum;
       }
     }

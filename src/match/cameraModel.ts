@@ -96,7 +96,9 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
   /** Basis entry of row j at the present index and light. */
   function entry(at: number): number {
     return (
-      basis.table[at]! + parameters[AT.index]! * basis.perIndex[at]! + parameters[AT.mired]! * basis.perMired[at]!
+      basis.table[at]! +
+      parameters[AT.index]! * basis.perIndex[at]! +
+      parameters[AT.mired]! * basis.perMired[at]!
     );
   }
 
@@ -108,7 +110,8 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
       response[c] = sum / whiteSum[c]!;
     }
     for (let c = 0; c < 3; c++) {
-      rgb[c] = matrix[c * 3]! * response[0]! + matrix[c * 3 + 1]! * response[1]! + matrix[c * 3 + 2]! * response[2]!;
+      rgb[c] =
+        matrix[c * 3]! * response[0]! + matrix[c * 3 + 1]! * response[1]! + matrix[c * 3 + 2]! * response[2]!;
       linear[c] = gain[c]! * rgb[c]! + parameters[AT.veil + c]!;
     }
   }
@@ -124,7 +127,10 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
     const row = c * PARAMETERS;
     const level = Math.min(1, Math.max(0, linear[c]!));
     const e = encoding.encode(level);
-    const slope = FULL * toneSlope(e, parameters, AT.tone) * (linear[c]! > 0 && linear[c]! < 1 ? encodeSlope(encoding, level) : 0);
+    const slope =
+      FULL *
+      toneSlope(e, parameters, AT.tone) *
+      (linear[c]! > 0 && linear[c]! < 1 ? encodeSlope(encoding, level) : 0);
     out[row + AT.logGain + c] = gain[c]! * rgb[c]!;
     out[row + AT.veil + c] = 1;
     for (let p = 0; p < PARAMETERS; p++) out[row + p]! *= slope;
@@ -153,11 +159,18 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
         out[row + AT.index]! += through * byIndex;
         out[row + AT.mired]! += through * byMired;
         for (let k = 1; k < COMPONENTS; k++) {
-          const own = basis.table[at + k]! + parameters[AT.index]! * basis.perIndex[at + k]! + mired * basis.perMired[at + k]!;
+          const own =
+            basis.table[at + k]! +
+            parameters[AT.index]! * basis.perIndex[at + k]! +
+            mired * basis.perMired[at + k]!;
           let d = through * (own - s * white[source * COMPONENTS + k]!);
           const sensor = source * 3 + k - 1;
           const by = sensor * 9 + c * 3;
-          d += gain[c]! * (matrixBySensor[by]! * response[0]! + matrixBySensor[by + 1]! * response[1]! + matrixBySensor[by + 2]! * response[2]!);
+          d +=
+            gain[c]! *
+            (matrixBySensor[by]! * response[0]! +
+              matrixBySensor[by + 1]! * response[1]! +
+              matrixBySensor[by + 2]! * response[2]!);
           out[row + AT.sensor + sensor] = d;
         }
       }

@@ -42,7 +42,8 @@ export function searchable(chart: CodeChart): SearchChart {
     const from = b * BLOCK;
     const to = Math.min(chart.count, from + BLOCK);
     const centre = [0, 0, 0];
-    for (let j = from; j < to; j++) for (let c = 0; c < 3; c++) centre[c]! += chart.codes[3 * j + c]! / (to - from);
+    for (let j = from; j < to; j++)
+      for (let c = 0; c < 3; c++) centre[c]! += chart.codes[3 * j + c]! / (to - from);
     let radius = 0;
     for (let j = from; j < to; j++) {
       radius = Math.max(
@@ -78,7 +79,12 @@ export function leastEigenvalue(m: Float64Array, at: number): number {
 }
 
 /** Precision and log determinant of a covariance xx yy zz xy xz yz, written at label j. */
-export function invertCovariance(s: ArrayLike<number>, precision: Float64Array, logDeterminant: Float64Array, j: number): void {
+export function invertCovariance(
+  s: ArrayLike<number>,
+  precision: Float64Array,
+  logDeterminant: Float64Array,
+  j: number,
+): void {
   const [xx, yy, zz, xy, xz, yz] = [s[0]!, s[1]!, s[2]!, s[3]!, s[4]!, s[5]!];
   const a = yy * zz - yz * yz;
   const b = xz * yz - xy * zz;

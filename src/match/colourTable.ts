@@ -1,4 +1,4 @@
-import { makeModes, MODE_FIELDS, type Modes } from './posterior.ts';
+import { MODE_FIELDS, type Modes, makeModes } from './posterior.ts';
 
 /**
  * Every colour met so far with its modes: a photo of millions of pixels holds a few hundred thousand colours at most,

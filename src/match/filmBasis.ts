@@ -1,4 +1,10 @@
+import { applyRows } from '../colour/applyWeights.ts';
+import { DAYLIGHT_RANGE_K } from '../colour/light.ts';
+import { cameraBasis } from '../colour/photoCamera.ts';
+import type { Light } from '../colour/types.ts';
+import { blurredReflectanceTable } from '../optics/blur.ts';
 import type { Blur, FilmStack, Polarisation } from '../optics/types.ts';
+import { withIndexShift } from '../optics/withIndexShift.ts';
 
 /** The optical side of a set-up: everything that fixes the reflectance. */
 export interface FilmScene {
@@ -30,4 +36,96 @@ export interface FilmBasis {
   /** The rows of a perfect white reflector, which normalise each channel. */
   readonly white: Float64Array;
   readonly whitePerMired: Float64Array;
+}
+
+/** Step of the index derivative; the second difference over it is below 1 % of the first. */
+const INDEX_STEP = 0.01;
+/** Step of the light derivative, mired. */
+const MIRED_STEP = 3;
+/** Where nominal and true optical path are made equal, nm. */
+const PATH_WAVELENGTH_NM = 550;
+
+/** Thickness for nominal thickness when the film index is off by `shift`: the same optical path at 550 nm. */
+export function pathRatio(scene: FilmScene, shift: number): number {
+  const n = scene.stack.film.refractiveIndex(PATH_WAVELENGTH_NM);
+  const sine = scene.stack.ambient.refractiveIndex(PATH_WAVELENGTH_NM) * Math.sin(scene.incidenceRad);
+  return Math.sqrt((n * n - sine * sine) / ((n + shift) ** 2 - sine * sine));
+}
+
+/**
+ * Computes the basis of a set-up for nominal thicknesses 0, step, 2 step ...
+ * @throws RangeError for an angle or light outside their range
+ */
+export function filmBasis(
+  scene: FilmScene,
+  light: Light,
+  stepNm: number,
+  count: number,
+  wavelengthNm: Float64Array,
+): FilmBasis {
+  const thicknessNm = Float64Array.from({ length: count }, (_, j) => j * stepNm);
+  const project = (rows: Float64Array, table: Float64Array) =>
+    applyRows(rows, ROW, wavelengthNm.length, table);
+  const reflect = (shift: number) => {
+    const ratio = pathRatio(scene, shift);
+    return blurredReflectanceTable(
+      { ...scene.stack, film: withIndexShift(scene.stack.film, shift) },
+      {
+        thicknessNm: thicknessNm.map((d) => d * ratio),
+        wavelengthNm,
+        incidenceRad: scene.incidenceRad,
+        polarisation: scene.polarisation,
+      },
+      scene.blur,
+    );
+  };
+  const nominal = reflect(0);
+  const rows = cameraBasis(light, wavelengthNm);
+  const table = project(rows, nominal);
+  const above = project(rows, reflect(INDEX_STEP));
+  const below = project(rows, reflect(-INDEX_STEP));
+  const white = sumRows(rows);
+  const perIndex = above.map((v, i) => (v - below[i]!) / (2 * INDEX_STEP));
+  const neighbours = miredNeighbours(light);
+  if (!neighbours) {
+    return {
+      stepNm,
+      count,
+      table,
+      perIndex,
+      perMired: new Float64Array(table.length),
+      white,
+      whitePerMired: new Float64Array(ROW),
+    };
+  }
+  const [cooler, warmer] = neighbours.map((k) => cameraBasis({ daylightK: k }, wavelengthNm));
+  const span = 1e6 / neighbours[1] - 1e6 / neighbours[0];
+  const perRow = warmer!.map((v, i) => (v - cooler![i]!) / span);
+  return {
+    stepNm,
+    count,
+    table,
+    perIndex,
+    perMired: project(perRow, nominal),
+    white,
+    whitePerMired: sumRows(perRow),
+  };
+}
+
+/** Temperatures a few mired to either side of a daylight, within the locus; null for a lamp. */
+function miredNeighbours(light: Light): readonly [number, number] | null {
+  if (!('daylightK' in light)) return null;
+  const mired = 1e6 / light.daylightK;
+  const coolest = Math.max(1e6 / DAYLIGHT_RANGE_K[1], mired - MIRED_STEP);
+  const warmest = Math.min(1e6 / DAYLIGHT_RANGE_K[0], mired + MIRED_STEP);
+  return [1e6 / coolest, 1e6 / warmest];
+}
+
+function sumRows(rows: Float64Array): Float64Array {
+  const n = rows.length / ROW;
+  return Float64Array.from({ length: ROW }, (_, row) => {
+    let sum = 0;
+    for (let i = 0; i < n; i++) sum += rows[row * n + i]!;
+    return sum;
+  });
 }

@@ -116,7 +116,14 @@ export function fitCamera(input: FitInput): CameraFit {
     const sd = Math.max(input.sampleSd, ANNEALING[round] ?? 0);
     drawChart(work, parameters);
     assign(work, input, sd, sampleNm);
-    step(work, input, parameters, sd, round >= SLIDE_FROM_ROUND, round < ANNEALING.length ? DAMPING : SETTLED_DAMPING);
+    step(
+      work,
+      input,
+      parameters,
+      sd,
+      round >= SLIDE_FROM_ROUND,
+      round < ANNEALING.length ? DAMPING : SETTLED_DAMPING,
+    );
   }
   drawChart(work, parameters);
   const end = assign(work, input, input.sampleSd, sampleNm);
@@ -271,7 +278,8 @@ function addEvidence(
     gradient[p]! += weight * (j0 * r0 + j1 * r1 + j2 * r2);
     const row = p * PARAMETERS;
     for (let q = 0; q <= p; q++) {
-      hessian[row + q]! += p0 * jacobian[q]! + p1 * jacobian[PARAMETERS + q]! + p2 * jacobian[2 * PARAMETERS + q]!;
+      hessian[row + q]! +=
+        p0 * jacobian[q]! + p1 * jacobian[PARAMETERS + q]! + p2 * jacobian[2 * PARAMETERS + q]!;
     }
   }
   return weight * (residual[0] * r0 + residual[1] * r1 + residual[2] * r2);
@@ -303,7 +311,11 @@ function normalEquations(
     const share = slide ? 1 / (t0 * t0 + t1 * t1 + t2 * t2 + (sd / SLIDE_NM) ** 2) : 0;
     addEvidence(
       work,
-      [chart[3 * j]! - sum[3 * j]! / w, chart[3 * j + 1]! - sum[3 * j + 1]! / w, chart[3 * j + 2]! - sum[3 * j + 2]! / w],
+      [
+        chart[3 * j]! - sum[3 * j]! / w,
+        chart[3 * j + 1]! - sum[3 * j + 1]! / w,
+        chart[3 * j + 2]! - sum[3 * j + 2]! / w,
+      ],
       (input.sampleWeight * w) / (sd * sd),
       [t0, t1, t2],
       share,
@@ -368,7 +380,14 @@ function cardLevelFor(evaluator: ModelEvaluator, seen: readonly number[], _start
 }
 
 /** One damped Gauss-Newton step on `parameters`, in place. */
-function step(work: Workspace, input: FitInput, parameters: Float64Array, sd: number, slide: boolean, damping: number): void {
+function step(
+  work: Workspace,
+  input: FitInput,
+  parameters: Float64Array,
+  sd: number,
+  slide: boolean,
+  damping: number,
+): void {
   work.evaluator.moveTo(parameters, true);
   normalEquations(work, input, parameters, sd, slide);
   const factor = work.hessian.slice();

@@ -155,7 +155,12 @@ export function mapRows(
 }
 
 /** Settled thicknesses of the four places about a pixel into `out`; how many, and the least margin among them. */
-function settledAround(settled: SettledField, x: number, y: number, out: Float64Array): { count: number; margin: number } {
+function settledAround(
+  settled: SettledField,
+  x: number,
+  y: number,
+  out: Float64Array,
+): { count: number; margin: number } {
   const half = settled.spacing >> 1;
   const left = Math.floor((x - half) / settled.spacing);
   const top = Math.floor((y - half) / settled.spacing);
@@ -180,7 +185,13 @@ function settledAround(settled: SettledField, x: number, y: number, out: Float64
 
 const NEIGHBOURS = { count: 0, margin: 0 };
 
-function choose(records: Float32Array, offset: number, count: number, nearby: Float64Array, neighbours: number): number {
+function choose(
+  records: Float32Array,
+  offset: number,
+  count: number,
+  nearby: Float64Array,
+  neighbours: number,
+): number {
   const { perNm, edge } = STATED_SMOOTHNESS;
   const best = records[offset + 2 + 3]!;
   let chosen = 0;
@@ -200,7 +211,12 @@ function choose(records: Float32Array, offset: number, count: number, nearby: Fl
 }
 
 /** Orders, bare surface, lower bounds and the shared part of the intervals; `ownShare` is noise variance left after smoothing. */
-export function finishRows(rows: MapRows, chart: CodeChart, rules: ReadingRules, ownShare: Float32Array | null): void {
+export function finishRows(
+  rows: MapRows,
+  chart: CodeChart,
+  rules: ReadingRules,
+  ownShare: Float32Array | null,
+): void {
   const step = chart.thicknessNm[1]!;
   for (let i = 0; i < rows.status.length; i++) {
     const status = rows.status[i]!;

@@ -78,7 +78,8 @@ export function statedPrior(spread: PriorSpread, mean: Float64Array): Prior {
   const b = spread.commonGain ** 2;
   for (let i = 0; i < 3; i++) {
     for (let j = 0; j < 3; j++) {
-      precision[(AT.logGain + i) * PARAMETERS + AT.logGain + j] = (i === j ? 1 / a : 0) - b / (a * (a + 3 * b));
+      precision[(AT.logGain + i) * PARAMETERS + AT.logGain + j] =
+        (i === j ? 1 / a : 0) - b / (a * (a + 3 * b));
     }
   }
   return { mean, precision };

@@ -173,7 +173,13 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
         moment += w * thicknessNm[j]!;
       }
       const evidence = best - 2 * Math.log(mass);
-      insertMode(out, moment / mass, quantile(from, to, best, mass * TAIL), quantile(from, to, best, mass * (1 - TAIL)), evidence);
+      insertMode(
+        out,
+        moment / mass,
+        quantile(from, to, best, mass * TAIL),
+        quantile(from, to, best, mass * (1 - TAIL)),
+        evidence,
+      );
     }
   }
 
@@ -211,7 +217,8 @@ function insertMode(out: Modes, thickness: number, low: number, high: number, ev
   while (place > 0 && values[(place - 1) * MODE_FIELDS + 3]! > evidence) place--;
   if (place >= MAX_MODES) return;
   const last = Math.min(out.count, MAX_MODES - 1);
-  for (let k = last; k > place; k--) values.copyWithin(k * MODE_FIELDS, (k - 1) * MODE_FIELDS, k * MODE_FIELDS);
+  for (let k = last; k > place; k--)
+    values.copyWithin(k * MODE_FIELDS, (k - 1) * MODE_FIELDS, k * MODE_FIELDS);
   values[place * MODE_FIELDS] = thickness;
   values[place * MODE_FIELDS + 1] = low;
   values[place * MODE_FIELDS + 2] = high;

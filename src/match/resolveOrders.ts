@@ -71,7 +71,13 @@ export function resolveOrders(
 }
 
 /** Adds the path costs of one direction to `total`. */
-function sweep(field: CandidateField, smoothness: Smoothness, dx: number, dy: number, total: Float32Array): void {
+function sweep(
+  field: CandidateField,
+  smoothness: Smoothness,
+  dx: number,
+  dy: number,
+  total: Float32Array,
+): void {
   const { width, height, spacing, count, thicknessNm, sdNm, cost } = field;
   const K = MOST_CANDIDATES;
   const perNm = smoothness.perNm / (spacing * Math.hypot(dx, dy));

@@ -165,7 +165,10 @@ function thin(
       let smooth = true;
       for (let c = 0; c < 3; c++) if (residual[i * 3 + c]! > 2 * pixelNoise[c]!) smooth = false;
       if (!smooth) continue;
-      const key = Math.floor(colour[i * 3]! / 6) * 10000 + Math.floor(colour[i * 3 + 1]! / 6) * 100 + Math.floor(colour[i * 3 + 2]! / 6);
+      const key =
+        Math.floor(colour[i * 3]! / 6) * 10000 +
+        Math.floor(colour[i * 3 + 1]! / 6) * 100 +
+        Math.floor(colour[i * 3 + 2]! / 6);
       const already = cells.get(key) ?? 0;
       if (already >= crowd) continue;
       cells.set(key, already + 1);

@@ -51,7 +51,7 @@ export function smoothRows(rows: MapRows, width: number, reach: 1 | 2): Float32A
       thicknessNm[i] = moved;
       lowNm[i]! += moved - centre;
       highNm[i]! += moved - centre;
-      share[i] = Math.min(1, (CORRELATION / (weight * own)));
+      share[i] = Math.min(1, CORRELATION / (weight * own));
     }
   }
   return share;
