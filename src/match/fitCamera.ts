@@ -165,7 +165,7 @@ function slideOf(work: Workspace, j: number, r: number, g: number, b: number): n
     (g - chart[3 * j + 1]!) * tangent[3 * j + 1]! +
     (b - chart[3 * j + 2]!) * tangent[3 * j + 2]!;
   const s = along / (4 * reach[j]! * reach[j]! + 1e-12);
-  return s < -0.5 ? -0.5 : s > 0.5 ? 0.5 : s;
+  return s < -0.5 ? -0.5 : Math.min(s, 0.5);
 }
 
 /** Soft assignment of every sample to the labels at noise `sd`; fills `weight`, `sum` and `sampleNm`. */

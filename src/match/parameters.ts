@@ -53,7 +53,12 @@ export interface PriorSpread {
   readonly index: number;
   /** Zero for a lamp of known spectrum. */
   readonly mired: number;
+  /** Scale of the sensor, tone and matrix spreads: 1 for a phone, near 0 for a known observer. */
+  readonly camera?: number;
 }
+
+/** Spread of an ideal camera: nothing of it is fitted but exposure, balance and veil. */
+export const FIXED_CAMERA = { camera: 1e-4, mired: 0 } as const;
 
 /**
  * The stated priors. Sensor coefficients N(0, 1): Jiang, Liu, Gu, Susstrunk 2013 and the family's own making.
@@ -63,16 +68,17 @@ export interface PriorSpread {
 export function statedPrior(spread: PriorSpread, mean: Float64Array): Prior {
   const precision = new Float64Array(PARAMETERS * PARAMETERS);
   const set = (i: number, sd: number) => {
-    precision[i * PARAMETERS + i] = 1 / Math.max(sd, 1e-9) ** 2;
+    precision[i * PARAMETERS + i] = 1 / Math.max(sd, 1e-6) ** 2;
   };
-  for (let k = 0; k < 9; k++) set(AT.sensor + k, 1);
+  const own = spread.camera ?? 1;
+  for (let k = 0; k < 9; k++) set(AT.sensor + k, own);
   for (let c = 0; c < 3; c++) set(AT.veil + c, spread.veil);
-  set(AT.tone, 0.25);
-  set(AT.tone + 1, 0.1);
-  set(AT.tone + 2, 0.05);
+  set(AT.tone, 0.25 * own);
+  set(AT.tone + 1, 0.1 * own);
+  set(AT.tone + 2, 0.05 * own);
   set(AT.index, spread.index);
   set(AT.mired, spread.mired);
-  for (let k = 0; k < 6; k++) set(AT.matrix + k, 0.12);
+  for (let k = 0; k < 6; k++) set(AT.matrix + k, 0.12 * own);
   // Gains: covariance channel^2 I + common^2 11', inverted by Sherman-Morrison.
   const a = spread.channelGain ** 2;
   const b = spread.commonGain ** 2;

@@ -6,9 +6,13 @@ export interface Smoothness {
   readonly perNm: number;
   /** Cost of an edge: no difference costs more. */
   readonly edge: number;
+  /** A draining film: a place below that is thinner than the one above costs more. */
+  readonly thickerDown: boolean;
 }
 
-export const STATED_SMOOTHNESS: Smoothness = { perNm: 0.03, edge: 6 };
+export const STATED_SMOOTHNESS: Smoothness = { perNm: 0.03, edge: 6, thickerDown: false };
+/** How much dearer a step against the trend is. */
+const AGAINST_TREND = 3;
 
 export interface OrderSolution {
   /** Chosen candidate of each place; 255 where there is none. */
@@ -34,17 +38,20 @@ const PATHS: readonly (readonly [number, number])[] = [
  * candidates instead of a label grid, so its cost does not grow with the range of thickness.
  *
  * Places without candidates are bridged: the path goes on with what it last saw, so a fleck of glint does not cut it.
- * @param onRow called now and then with the share done; return false to stop early (the result is then void)
+ * @param onShare called after each of the eight paths with the share done
  */
 export function resolveOrders(
   field: CandidateField,
-  smoothness: Smoothness = STATED_SMOOTHNESS,
+  options: Partial<Smoothness> = {},
   onShare: (share: number) => void = () => {},
 ): OrderSolution {
   const { width, height, count, cost } = field;
+  const smoothness = { ...STATED_SMOOTHNESS, ...options };
+  const message = new Float32Array(width * height * MOST_CANDIDATES);
+  const sourceOf = new Int32Array(width * height);
   const total = new Float32Array(width * height * MOST_CANDIDATES);
   PATHS.forEach(([dx, dy], n) => {
-    sweep(field, smoothness, dx, dy, total);
+    sweep(field, smoothness, dx, dy, total, message, sourceOf);
     onShare((n + 1) / PATHS.length);
   });
   const choice = new Uint8Array(width * height).fill(255);
@@ -77,14 +84,17 @@ function sweep(
   dx: number,
   dy: number,
   total: Float32Array,
+  message: Float32Array,
+  sourceOf: Int32Array,
 ): void {
   const { width, height, spacing, count, thicknessNm, sdNm, cost } = field;
   const K = MOST_CANDIDATES;
   const perNm = smoothness.perNm / (spacing * Math.hypot(dx, dy));
   const edge = smoothness.edge;
-  // What each place passes on: path costs of the last place with candidates, and which place that was.
-  const message = new Float32Array(width * height * K);
-  const sourceOf = new Int32Array(width * height).fill(-1);
+  // Each place passes on the path costs of the last place with candidates: `message` there, `sourceOf` says where.
+  sourceOf.fill(-1);
+  const trend = smoothness.thickerDown ? Math.sign(dy) : 0;
+  const edgeAgainst = edge * AGAINST_TREND;
   const forward = dy > 0 || (dy === 0 && dx > 0);
   for (let row = 0; row < height; row++) {
     const y = dy >= 0 ? row : height - 1 - row;
@@ -116,10 +126,16 @@ function sweep(
       for (let k = 0; k < n; k++) {
         const d = thicknessNm[own + k]!;
         const w = sdNm[own + k]!;
-        let best = floor + edge;
+        let best = floor + (trend === 0 ? edge : edgeAgainst);
         for (let q = 0; q < m; q++) {
-          const gap = Math.abs(d - thicknessNm[from + q]!) - (w + sdNm[from + q]!);
-          const c = message[from + q]! + (gap > 0 ? perNm * gap : 0);
+          const step = d - thicknessNm[from + q]!;
+          const gap = Math.abs(step) - (w + sdNm[from + q]!);
+          let price = gap > 0 ? perNm * gap : 0;
+          if (trend !== 0) {
+            const against = step * trend < 0;
+            price = against ? Math.min(edgeAgainst, price * AGAINST_TREND) : Math.min(edge, price);
+          }
+          const c = message[from + q]! + price;
           if (c < best) best = c;
         }
         const value = cost[own + k]! + best - floor;

@@ -1,0 +1,116 @@
+import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
+import { searchable } from '../match/codeChart.ts';
+import { type ColourTable, makeColourTable } from '../match/colourTable.ts';
+import {
+  fillCandidates,
+  finishRows,
+  type MapRows,
+  makeMapRows,
+  mapRows,
+  type SettledField,
+} from '../match/mapPixels.ts';
+import { posteriorReader } from '../match/posterior.ts';
+import { resolveOrders } from '../match/resolveOrders.ts';
+import { smoothRows } from '../match/smoothRows.ts';
+import type { ThicknessMap } from '../match/types.ts';
+import type { PhotoPixels } from '../photo/types.ts';
+import { type Calibration, calibrate, type OnStep } from './calibrate.ts';
+import type { EstimateResult } from './contract.ts';
+import { leftOutOf } from './leftOut.ts';
+import { heedPins } from './pins.ts';
+import type { Setup } from './setup.ts';
+import { summarise } from './summarise.ts';
+
+/** Places that the order step looks at, at most; larger photos are sampled evenly for it. */
+const MOST_PLACES = 400_000;
+/** Photos above this many pixels are smoothed over 3 x 3 instead of 5 x 5: finer pixels than the film's own detail. */
+const WIDE_SMOOTHING_BELOW = 3_000_000;
+
+/** The reader of one photo's colours: shared by all stages in one thread. */
+export function makeReader(pixels: PhotoPixels, calibration: Calibration): ColourTable {
+  return makeColourTable(pixels.maxCode === 255 ? 256 : 1024, posteriorReader(searchable(calibration.chart)));
+}
+
+/** Pixels between the places of the order step. */
+export function spacingFor(width: number, height: number): number {
+  return Math.max(1, Math.ceil(Math.sqrt((width * height) / MOST_PLACES)));
+}
+
+export function emptyField(pixels: PhotoPixels): CandidateField {
+  const spacing = spacingFor(pixels.width, pixels.height);
+  return makeCandidateField(Math.ceil(pixels.width / spacing), Math.ceil(pixels.height / spacing), spacing);
+}
+
+/** Settles the orders of a filled field; pins and trend are heeded. */
+export function settle(
+  field: CandidateField,
+  setup: Setup,
+  calibration: Calibration,
+  onShare: (share: number) => void = () => {},
+): SettledField {
+  heedPins(field, setup.pins ?? [], calibration);
+  const { choice, margin } = resolveOrders(field, { thickerDown: setup.trend === 'thickerDown' }, onShare);
+  const thicknessNm = new Float32Array(choice.length);
+  for (let i = 0; i < choice.length; i++) {
+    thicknessNm[i] = choice[i] === 255 ? Number.NaN : field.thicknessNm[i * MOST_CANDIDATES + choice[i]!]!;
+  }
+  return { width: field.width, height: field.height, spacing: field.spacing, thicknessNm, margin };
+}
+
+/** Reads the rows of the full map, smooths and finishes them. */
+export function readRows(
+  pixels: PhotoPixels,
+  table: ColourTable,
+  calibration: Calibration,
+  leftOut: Uint8Array,
+  settled: SettledField,
+  rows: MapRows,
+): void {
+  mapRows(pixels, table, calibration.rules, leftOut, settled, rows);
+  const reach = pixels.width * pixels.height < WIDE_SMOOTHING_BELOW ? 2 : 1;
+  finishRows(rows, calibration.chart, calibration.rules, smoothRows(rows, pixels.width, reach));
+}
+
+/** Milliseconds since any fixed moment; injected, because the pure code has no clock. */
+export type Clock = () => number;
+
+/**
+ * The whole job on one thread: photo pixels and a set-up in, thickness map and summary out.
+ * @throws SetupError, PhotoError with a sentence that says what to do
+ */
+export function estimate(
+  pixels: PhotoPixels,
+  setup: Setup,
+  clock: Clock = () => 0,
+  onStep: OnStep = () => {},
+): EstimateResult {
+  const started = clock();
+  const leftOut = leftOutOf(pixels, setup);
+  const calibration = calibrate(pixels, setup, leftOut, (share, step) => onStep(share * 0.4, step));
+  const fitted = clock();
+  const table = makeReader(pixels, calibration);
+  const field = emptyField(pixels);
+  onStep(0.4, 'matching colours');
+  fillCandidates(pixels, table, calibration.rules, leftOut, field, 0, field.height);
+  const matched = clock();
+  const settled = settle(field, setup, calibration, (share) => onStep(0.5 + 0.2 * share, 'settling orders'));
+  const ordered = clock();
+  onStep(0.7, 'reading every pixel');
+  const rows = makeMapRows(pixels.width, 0, pixels.height);
+  readRows(pixels, table, calibration, leftOut, settled, rows);
+  const map: ThicknessMap = { width: pixels.width, height: pixels.height, ...rowsOf(rows) };
+  const mapped = clock();
+  const timingsMs = {
+    calibrate: fitted - started,
+    match: matched - fitted,
+    orders: ordered - matched,
+    map: mapped - ordered,
+    total: mapped - started,
+  };
+  return { map, summary: summarise(map, calibration, timingsMs) };
+}
+
+function rowsOf(rows: MapRows): Omit<ThicknessMap, 'width' | 'height'> {
+  const { thicknessNm, lowNm, highNm, order, status } = rows;
+  return { thicknessNm, lowNm, highNm, order, status };
+}
