@@ -1,3 +1,4 @@
+import { encodeSrgb } from '../colour/rgb.ts';
 import type { Random } from './random.ts';
 import { type ToneCurve, toneFunction } from './toneCurve.ts';
 
@@ -14,12 +15,9 @@ export interface Development {
   readonly noiseCodes: number;
 }
 
-/** Linear 0..1 to sRGB encoded 0..1 (IEC 61966-2-1), clamped. */
-export function encodeSrgb(linear: number): number {
-  if (linear <= 0) {
-    return 0;
-  }
-  return linear >= 1 ? 1 : linear <= 0.0031308 ? 12.92 * linear : 1.055 * linear ** (1 / 2.4) - 0.055;
+/** Linear light to sRGB encoded 0..1, clamped at both ends as a file clamps it. */
+function encodeClamped(linear: number): number {
+  return linear <= 0 ? 0 : linear >= 1 ? 1 : encodeSrgb(linear);
 }
 
 /** The codes (0..255, not yet rounded) that raw values give without noise; for checks and for the exposure meter. */
@@ -28,7 +26,7 @@ export function codesOfRaw(raw: ArrayLike<number>, development: Development): [n
   const m = development.matrix;
   const code = (c: number) => {
     const light = m[3 * c]! * raw[0]! + m[3 * c + 1]! * raw[1]! + m[3 * c + 2]! * raw[2]!;
-    return 255 * tone(encodeSrgb(development.exposure * light + development.veil[c]!));
+    return 255 * tone(encodeClamped(development.exposure * light + development.veil[c]!));
   };
   return [code(0), code(1), code(2)];
 }
@@ -44,7 +42,7 @@ export function developPhoto(raw: Float32Array, development: Development, random
     const b = raw[i + 2]!;
     for (let c = 0; c < 3; c++) {
       const light = exposure * (m[3 * c]! * r + m[3 * c + 1]! * g + m[3 * c + 2]! * b) + veil[c]!;
-      const code = 255 * tone(encodeSrgb(light)) + noiseCodes * random.normal();
+      const code = 255 * tone(encodeClamped(light)) + noiseCodes * random.normal();
       codes[i + c] = code <= 0 ? 0 : code >= 255 ? 255 : Math.round(code);
     }
   }

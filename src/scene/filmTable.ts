@@ -1,3 +1,5 @@
+import { MAX_INCIDENCE_RAD } from '../optics/fresnel.ts';
+
 /** Raw camera values (white = 1, 1, 1) of a film against its thickness and the angle of incidence, finely tabulated. */
 export interface FilmTable {
   readonly stepNm: number;
@@ -57,7 +59,7 @@ export function buildFilmTable(input: FilmTableInput): FilmTable {
   const angleCount = single ? 1 : Math.ceil((toRad - fromRad) / angleStepRad) + 3;
   const firstRad = single ? fromRad : fromRad - angleStepRad;
   const sheets = Array.from({ length: angleCount }, (_, i) => {
-    const angle = Math.min(Math.PI / 2, Math.abs(firstRad + i * angleStepRad));
+    const angle = Math.min(MAX_INCIDENCE_RAD, Math.abs(firstRad + i * angleStepRad));
     return sumRows(input.reflectanceAt(angle), count, input.rawWeights);
   });
 

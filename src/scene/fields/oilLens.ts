@@ -17,8 +17,8 @@ export function drawOilLens(random: Random): OilLensOptions {
   return {
     edgeNm: random.uniform(120, 400),
     middleNm: random.uniform(650, 1000),
-    centre: [random.uniform(0.45, 0.6), random.uniform(0.42, 0.52)],
-    halfAxes: [random.uniform(0.27, 0.36), random.uniform(0.28, 0.38)],
+    centre: [random.uniform(0.5, 0.62), random.uniform(0.44, 0.54)],
+    halfAxes: [random.uniform(0.22, 0.3), random.uniform(0.26, 0.36)],
     satellites: 4,
   };
 }

@@ -5,8 +5,8 @@ import type { ThicknessField } from './thicknessField.ts';
 export interface OilSheenOptions {
   /** Greatest thickness, nm. */
   readonly thickestNm: number;
-  /** Share of the noise that is under water level: larger means less oil. */
-  readonly bareLevel: number;
+  /** Share of the box that is bare water. */
+  readonly bareShare: number;
   /** Features a unit of length. */
   readonly scale: number;
   /** Stretch along x: 1 for patches, 3 and more for streamers. */
@@ -22,7 +22,7 @@ export interface OilSheenOptions {
 export function drawOilSheen(random: Random): OilSheenOptions {
   return {
     thickestNm: random.uniform(650, 1000),
-    bareLevel: random.uniform(-0.12, 0.02),
+    bareShare: random.uniform(0.4, 0.65),
     scale: random.uniform(2, 3),
     stretch: random.uniform(1, 2.2),
     holes: 10,
@@ -49,8 +49,7 @@ export function oilSheenField(options: OilSheenOptions, random: Random): Thickne
   const level: ThicknessField = (x, y) => {
     const u = (x * options.scale) / options.stretch;
     const v = y * options.scale;
-    let value =
-      body(u + 0.7 * warpX(u * 0.8, v * 0.8), v + 0.7 * warpY(u * 0.8 + 5, v * 0.8)) - options.bareLevel;
+    let value = body(u + 0.7 * warpX(u * 0.8, v * 0.8), v + 0.7 * warpY(u * 0.8 + 5, v * 0.8));
     for (const hole of holes) {
       const dx = (x - hole.x) / options.stretch / hole.radius;
       const dy = (y - hole.y) / hole.radius;
@@ -61,20 +60,25 @@ export function oilSheenField(options: OilSheenOptions, random: Random): Thickne
       }
     }
     const toBare = Math.hypot(x - bareX, y - bareY) / bareRadius;
-    return toBare < 1.6 ? value - 2 * (1 - smoothStep(0.9, 1.6, toBare)) : value;
+    if (toBare > 3) {
+      return value;
+    }
+    // Ragged outside, but surely bare within the radius.
+    const ragged = toBare * (1 + 0.6 * smoothStep(1, 1.3, toBare) * warpX(3 * u + 7, 3 * v - 4));
+    return value - 2 * (1 - smoothStep(1, 1.9, ragged));
   };
 
-  let highest = 1e-6;
+  const levels = new Float64Array(96 * 96);
   for (let j = 0; j < 96; j++) {
     for (let i = 0; i < 96; i++) {
-      highest = Math.max(
-        highest,
-        level(x0 + ((x1 - x0) * (i + 0.5)) / 96, y0 + ((y1 - y0) * (j + 0.5)) / 96),
-      );
+      levels[96 * j + i] = level(x0 + ((x1 - x0) * (i + 0.5)) / 96, y0 + ((y1 - y0) * (j + 0.5)) / 96);
     }
   }
+  levels.sort();
+  const waterline = levels[Math.floor(options.bareShare * (levels.length - 1))]!;
+  const span = levels[levels.length - 1]! - waterline;
   return (x, y) => {
-    const share = Math.min(1, level(x, y) / highest);
+    const share = Math.min(1, (level(x, y) - waterline) / span);
     return share <= 0 ? 0 : options.thickestNm * share ** 0.9;
   };
 }

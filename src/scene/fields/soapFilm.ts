@@ -16,10 +16,12 @@ export interface SoapFilmOptions {
   /** Black film from the top down to this share of the height; 0 for none. */
   readonly blackShare: number;
   readonly blackNm: number;
+  /** Width over height of the frame's inside, so that spots of black film are round. */
+  readonly aspect: number;
 }
 
 /** A draining film as it might be found: thin on top, 5 to 1250 nm in all. */
-export function drawSoapFilm(random: Random, black: boolean): SoapFilmOptions {
+export function drawSoapFilm(random: Random, black: boolean, aspect: number): SoapFilmOptions {
   return {
     topNm: black ? random.uniform(60, 160) : random.uniform(5, 60),
     bottomNm: random.uniform(850, 1250),
@@ -29,6 +31,7 @@ export function drawSoapFilm(random: Random, black: boolean): SoapFilmOptions {
     turnRad: random.uniform(0.9, 1.7),
     blackShare: black ? random.uniform(0.12, 0.3) : 0,
     blackNm: random.uniform(5, 30),
+    aspect,
   };
 }
 
@@ -134,7 +137,9 @@ export function soapFilmField(options: SoapFilmOptions, random: Random): Thickne
   return (x, y) => {
     if (options.blackShare > 0) {
       const border = options.blackShare + 0.02 * borderNoise(x * 3, 0.5) + 0.01 * borderNoise(x * 9, 3.5);
-      const inSpot = spots.some((spot) => Math.hypot(x - spot.x, y - spot.y) < spot.radius);
+      const inSpot = spots.some(
+        (spot) => Math.hypot((x - spot.x) * options.aspect, y - spot.y) < spot.radius,
+      );
       if (y < border || inSpot) {
         return Math.max(5, options.blackNm * (1 + 0.05 * borderNoise(x * 2, y * 2)));
       }
