@@ -85,3 +85,15 @@ export function viewNotices(shares: ViewShares): Notice[] {
 function percent(share: number): string {
   return share < 0.01 ? 'Under 1 %' : `${Math.round(100 * share)} %`;
 }
+
+/** Takes the ground area (to NaN, in place) from every pixel that the view leaves out, and counts them. */
+export function dropExcluded(areaM2: Float32Array, status: Uint8Array): number {
+  let dropped = 0;
+  for (let i = 0; i < status.length; i++) {
+    if (status[i]! >= VIEW_STATUS.tooSlanted) {
+      areaM2[i] = Number.NaN;
+      dropped++;
+    }
+  }
+  return dropped;
+}

@@ -1,0 +1,132 @@
+import type { AreaCells } from '../view/areaCells.ts';
+import { type Alternatives, type CellSums, cellSums } from './cellSums.ts';
+import type { CommonDraw } from './commonDraw.ts';
+import type { FilmRegion } from './filmRegion.ts';
+import { type RandomNumbers, summarise } from './monteCarlo.ts';
+
+/** What was put into an interval; kept with the result. */
+export interface VolumeInputs {
+  readonly trials: number;
+  readonly coverage: number;
+  /** One standard deviation of a factor common to all thicknesses, besides index and angle: chart and fit. */
+  readonly thicknessShare: number;
+  /** One standard deviation of a shift common to all thicknesses, nm. */
+  readonly thicknessShiftNm: number;
+  /** Pixels that share one error of colour: JPEG works in blocks of 8 x 8, so 64 where nothing better is known. */
+  readonly correlatedPixels: number;
+}
+
+export const DEFAULT_VOLUME_INPUTS: VolumeInputs = {
+  trials: 2000,
+  coverage: 0.9,
+  thicknessShare: 0.02,
+  thicknessShiftNm: 2,
+  correlatedPixels: 64,
+};
+
+/** Never one bare number: ends of the coverage interval about the nominal value. */
+export interface Spread {
+  readonly least: number;
+  readonly best: number;
+  readonly most: number;
+}
+
+export interface VolumeByThickness {
+  readonly volumeM3: Spread;
+  readonly oiledM2: Spread;
+  /** True where some film is past the resolvable range: all three volumes are then "at least". */
+  readonly atLeast: boolean;
+  /** Part of the best volume that is only a lower bound, and the share of the oiled area that it comes from. */
+  readonly atLeastM3: number;
+  readonly atLeastShare: number;
+  /** Share of the oiled area whose order is not settled. */
+  readonly ambiguousShare: number;
+  /** Best volume over best area; NaN without oil. */
+  readonly meanThicknessNm: number;
+  readonly inputs: VolumeInputs;
+}
+
+/**
+ * Oil volume as the sum of thickness times area over pixels with an answer, with a Monte Carlo interval (JCGM 101:2008).
+ * What all pixels share (view, index, chart, shift) is drawn once a trial; what each pixel has to itself shrinks with
+ * their number. Pixels past the resolvable range enter with their lower bound.
+ * @param draw errors of view and index (`commonDraw`, `indexDraw`)
+ * @param alternatives second readings of ambiguous pixels; without them their likeliest reading is taken as right
+ * @throws RangeError where arrays or cells do not fit the map
+ */
+export function volumeByThickness(
+  film: FilmRegion,
+  cells: AreaCells,
+  draw: CommonDraw,
+  random: RandomNumbers,
+  inputs: Partial<VolumeInputs> = {},
+  alternatives?: Alternatives,
+): VolumeByThickness {
+  return volumeFromSums(cellSums(film, cells, alternatives), draw, random, inputs);
+}
+
+/** The same from sums at hand, for a change of the uncertainties without another pass over the pixels. */
+export function volumeFromSums(
+  sums: CellSums,
+  draw: CommonDraw,
+  random: RandomNumbers,
+  some: Partial<VolumeInputs> = {},
+): VolumeByThickness {
+  const inputs = { ...DEFAULT_VOLUME_INPUTS, ...some };
+  const { count } = sums.cells;
+  const volumes = new Float64Array(inputs.trials);
+  const areas = new Float64Array(inputs.trials);
+  const areaFactor = new Float64Array(count);
+  const thicknessFactor = new Float64Array(count);
+  for (let trial = 0; trial < inputs.trials; trial++) {
+    draw(random, areaFactor, thicknessFactor);
+    const factor = 1 + inputs.thicknessShare * random.normal();
+    const shift = inputs.thicknessShiftNm * random.normal();
+    let nmM2 = 0;
+    let m2 = 0;
+    let variance = 0;
+    for (let cell = 0; cell < count; cell++) {
+      const film = sums.filmM2[cell]!;
+      const open = sums.atLeastM2[cell]!;
+      if (film + open === 0) {
+        continue;
+      }
+      const area = areaFactor[cell]!;
+      const thickness = thicknessFactor[cell]! * factor;
+      let sum = sums.filmNmM2[cell]!;
+      if (sums.switchShare[cell]! > 0 && random.next() < sums.switchShare[cell]!) {
+        sum += sums.switchNmM2[cell]!;
+      }
+      nmM2 += area * (thickness * (sum + sums.atLeastNmM2[cell]!) + shift * (film + open));
+      m2 += area * (film + open);
+      variance += area * area * thickness * thickness * sums.varianceNm2M4[cell]!;
+    }
+    const noise = Math.sqrt(variance * inputs.correlatedPixels) * random.normal();
+    volumes[trial] = 1e-9 * Math.max(0, nmM2 + noise);
+    areas[trial] = m2;
+  }
+  const filmM2 = total(sums.filmM2);
+  const atLeastM2 = total(sums.atLeastM2);
+  const oiledM2 = filmM2 + atLeastM2;
+  const atLeastM3 = 1e-9 * total(sums.atLeastNmM2);
+  const bestM3 = 1e-9 * total(sums.filmNmM2) + atLeastM3;
+  return {
+    volumeM3: spread(volumes, bestM3, inputs.coverage),
+    oiledM2: spread(areas, oiledM2, inputs.coverage),
+    atLeast: atLeastM2 > 0,
+    atLeastM3,
+    atLeastShare: oiledM2 > 0 ? atLeastM2 / oiledM2 : 0,
+    ambiguousShare: oiledM2 > 0 ? total(sums.ambiguousM2) / oiledM2 : 0,
+    meanThicknessNm: (1e9 * bestM3) / oiledM2,
+    inputs,
+  };
+}
+
+function spread(values: Float64Array, best: number, coverage: number): Spread {
+  const { low, high } = summarise(values, coverage).symmetric;
+  return { least: low, best, most: high };
+}
+
+function total(values: Float64Array): number {
+  return values.reduce((sum, value) => sum + value, 0);
+}
