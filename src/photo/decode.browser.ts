@@ -1,9 +1,9 @@
+import { DISPLAY_P3, SRGB } from '../colour/rgb.ts';
 import type { RgbEncoding } from '../colour/types.ts';
 import { assemblePhoto } from './assemble.ts';
 import { readStrips } from './canvas.browser.ts';
 import { exifOrientation } from './exifOrientation.ts';
 import { type InspectedPhoto, inspectPhoto } from './inspect.ts';
-import { DISPLAY_P3, SRGB } from './knownEncodings.ts';
 import { decodePngExactly } from './pngPixels.ts';
 import { DAMAGED_SENTENCE, HEIC_SENTENCE } from './refusal.ts';
 import { keepsCodes } from './selfTest.browser.ts';

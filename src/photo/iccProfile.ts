@@ -1,8 +1,8 @@
+import { apply3, bradford, invert3, type Matrix3, multiply3, type Triple } from '../colour/matrix3.ts';
 import type { RgbEncoding } from '../colour/types.ts';
-import { apply, bradford, invert, type Matrix3, multiply, PCS_WHITE, type Triple } from './adapt.ts';
 import { ascii, s15Fixed16, u16be, u32be } from './bytes.ts';
 import { inverseCurve, type ToneCurve, toneCurve } from './iccCurve.ts';
-import { KNOWN_ENCODINGS, untagged } from './knownEncodings.ts';
+import { KNOWN_ENCODINGS, orUndefined, PCS_WHITE, untagged } from './knownEncodings.ts';
 
 /** What an embedded profile turned out to be. `notices` are sentences for a person. */
 export interface ProfileReading {
@@ -57,7 +57,7 @@ export function readIccProfile(profile: Uint8Array): ProfileReading {
   const curves = ['rTRC', 'gTRC', 'bTRC'].map((tag) => curveAt(profile, tags.get(tag)));
   const green = curves[1];
   // A matrix that gives white no brightness is as good as none.
-  const usable = toPcs && invert(toPcs) && toPcs[3]! + toPcs[4]! + toPcs[5]! > 0.1;
+  const usable = toPcs && orUndefined(() => invert3(toPcs)) && toPcs[3]! + toPcs[4]! + toPcs[5]! > 0.1;
   if (!usable || !green || !curves[0] || !curves[2])
     return unusable(
       'other',
@@ -87,8 +87,8 @@ function ownEncoding(
   decode: ToneCurve,
   id: string,
 ): RgbEncoding {
-  const matrix = multiply(nativeWhite(profile, tags), toPcs);
-  const [x, y, z] = apply(matrix, [1, 1, 1]);
+  const matrix = multiply3(nativeWhite(profile, tags), toPcs);
+  const [x, y, z] = apply3(matrix, [1, 1, 1]);
   return {
     id,
     toXyz: matrix.map((value) => value / y),
@@ -103,7 +103,7 @@ function nativeWhite(profile: Uint8Array, tags: Tags): Matrix3 {
   const chad = tags.get('chad');
   if (chad !== undefined && u32be(profile, chad) === 0x73663332 /* sf32 */) {
     const adapted = Float64Array.from({ length: 9 }, (_, i) => s15Fixed16(profile, chad + 8 + 4 * i));
-    const back = invert(adapted);
+    const back = orUndefined(() => invert3(adapted));
     if (back) return back;
   }
   const white = tags.get('wtpt');
@@ -169,7 +169,7 @@ function distance(a: ToneCurve, b: ToneCurve): number {
 }
 
 function colourDistance(toPcs: Matrix3, known: RgbEncoding): number {
-  const knownToPcs = multiply(bradford(known.whiteXyz, PCS_WHITE), known.toXyz);
+  const knownToPcs = multiply3(bradford(known.whiteXyz, PCS_WHITE), known.toXyz);
   return Math.max(...knownToPcs.map((value, index) => Math.abs(value - toPcs[index]!)));
 }
 

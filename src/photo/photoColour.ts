@@ -1,7 +1,7 @@
+import { D65_XY, DISPLAY_P3, SRGB } from '../colour/rgb.ts';
 import type { RgbEncoding } from '../colour/types.ts';
-import { whiteOf } from './adapt.ts';
 import { readIccProfile } from './iccProfile.ts';
-import { ADOBE_RGB, DISPLAY_P3, powerEncoding, SRGB, untagged } from './knownEncodings.ts';
+import { ADOBE_RGB, powerEncoding, untagged } from './knownEncodings.ts';
 import type { ColourTag, SniffedPhoto } from './sniffed.ts';
 import { PhotoError } from './types.ts';
 
@@ -71,17 +71,21 @@ const SRGB_GAMMA = 1 / 2.2;
 const BT709 = [0.64, 0.33, 0.3, 0.6, 0.15, 0.06] as const;
 
 function byGamma(gamma: number, chromaticities: readonly number[] | undefined): PhotoColour {
-  const [wx, wy, rx, ry, gx, gy, bx, by] = chromaticities ?? [0.3127, 0.329, ...BT709];
-  const primaries = [rx!, ry!, gx!, gy!, bx!, by!] as const;
-  const isBt709 = primaries.every((value, index) => Math.abs(value - BT709[index]!) < 1e-3);
+  const [wx, wy, rx, ry, gx, gy, bx, by] = chromaticities ?? [...D65_XY, ...BT709];
+  const isBt709 = [rx, ry, gx, gy, bx, by].every((value, index) => Math.abs(value! - BT709[index]!) < 1e-3);
   // A gamma of 1/2.2 beside these primaries is how the PNG specification has sRGB written for old readers (11.3.2.5).
   if (isBt709 && Math.abs(gamma - SRGB_GAMMA) < 1e-3)
     return { encoding: SRGB, profileName: 'sRGB (by gAMA)', notices: [] };
-  const encoding = wy! > 0 ? powerEncoding(1 / gamma, primaries, whiteOf(wx!, wy!)) : undefined;
+  const primaries = [
+    [rx!, ry!],
+    [gx!, gy!],
+    [bx!, by!],
+  ] as const;
+  const encoding = powerEncoding(1 / gamma, primaries, [wx!, wy!]);
   if (encoding) return { encoding, profileName: `gAMA ${gamma.toFixed(5)}`, notices: [] };
   return {
     encoding: untagged,
-    profileName: 'gAMA out of range, taken as sRGB',
-    notices: ['This file states an impossible gamma; its colours are read as sRGB.'],
+    profileName: 'gAMA or cHRM out of range, taken as sRGB',
+    notices: ['This file states an impossible gamma or impossible primaries; its colours are read as sRGB.'],
   };
 }

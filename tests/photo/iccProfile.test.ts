@@ -1,8 +1,8 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
+import { SRGB } from '../../src/colour/rgb.ts';
 import { toneCurve } from '../../src/photo/iccCurve.ts';
 import { readIccProfile } from '../../src/photo/iccProfile.ts';
-import { SRGB } from '../../src/photo/knownEncodings.ts';
 import { curve, parametric, phoneP3, profile, SRGB_CURVE, texts, xyz } from './madeProfile.ts';
 
 const SRGB_COLUMNS = {

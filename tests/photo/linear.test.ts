@@ -1,7 +1,7 @@
 import { converter } from 'culori';
 import { expect, test } from 'vitest';
+import { SRGB } from '../../src/colour/rgb.ts';
 import { EXPOSURE, exposureMask } from '../../src/photo/exposure.ts';
-import { SRGB } from '../../src/photo/knownEncodings.ts';
 import { linearLight } from '../../src/photo/linear.ts';
 import { linearTable, nearestCode } from '../../src/photo/toneTable.ts';
 import type { PhotoPixels } from '../../src/photo/types.ts';

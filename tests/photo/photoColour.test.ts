@@ -1,6 +1,6 @@
 import { afterAll, expect, test } from 'vitest';
 import { decodePhotoBytes, decodePhotoFile } from '../../src/cli/decodePhoto.ts';
-import { apply } from '../../src/photo/adapt.ts';
+import { apply3 } from '../../src/colour/matrix3.ts';
 import type { DecodedPhoto } from '../../src/photo/types.ts';
 import { asSharp, encode, scratch, slopes, writeTagged } from './madePhotos.ts';
 import { pngChunk, withChunks } from './pngChunks.ts';
@@ -52,14 +52,20 @@ test('PNG: a gamma of 1 is linear light, and stated primaries are used', async (
   expect(pixels.encoding.encode(0.25)).toBeCloseTo(0.25, 9);
   // Display P3's red in XYZ: SMPTE EG 432-1 primaries with D65, as the CSS Color 4 specification prints it.
   [0.4865709, 0.2289746, 0].forEach((value, index) => {
-    expect(apply(pixels.encoding.toXyz, [1, 0, 0])[index]).toBeCloseTo(value, 4);
+    expect(apply3(pixels.encoding.toXyz, [1, 0, 0])[index]).toBeCloseTo(value, 4);
   });
 });
 
-test('PNG: an impossible gamma is read as sRGB, with a notice', async () => {
-  const photo = await openPng(gamma(0));
-  expect(encodingOf(photo)).toBe('srgb');
-  expect(photo.notices.join()).toMatch(/impossible gamma/);
+test('PNG: an impossible gamma, white or set of primaries is read as sRGB, with a notice', async () => {
+  for (const chunks of [
+    [gamma(0)],
+    [gamma(0.5), chromaticities(0, 0, 0.64, 0.33, 0.3, 0.6, 0.15, 0.06)],
+    [gamma(0.5), chromaticities(0.3127, 0.329, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3)],
+  ]) {
+    const photo = await openPng(...chunks);
+    expect(encodingOf(photo)).toBe('srgb');
+    expect(photo.notices.join()).toMatch(/impossible gamma/);
+  }
 });
 
 test('code points: P3 and sRGB are known, PQ and HLG are refused, others are named', async () => {
@@ -79,7 +85,7 @@ test('a camera that marks Adobe RGB only by the DCF option-file mark', async () 
   expect(metadata.profileName).toBe('Adobe RGB (1998)');
   // Adobe RGB (1998) encoding, 4.3.5.3: green is (0.18556, 0.62736, 0.07069).
   [0.18556, 0.62736, 0.07069].forEach((value, index) => {
-    expect(apply(pixels.encoding.toXyz, [0, 1, 0])[index]).toBeCloseTo(value, 4);
+    expect(apply3(pixels.encoding.toXyz, [0, 1, 0])[index]).toBeCloseTo(value, 4);
   });
 });
 

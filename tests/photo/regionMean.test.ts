@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { SRGB } from '../../src/photo/knownEncodings.ts';
+import { SRGB } from '../../src/colour/rgb.ts';
 import { regionMean } from '../../src/photo/regionMean.ts';
 import type { PhotoPixels } from '../../src/photo/types.ts';
 

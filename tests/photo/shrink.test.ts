@@ -2,7 +2,7 @@ import { execFileSync } from 'node:child_process';
 import { readFileSync, writeFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { SRGB } from '../../src/photo/knownEncodings.ts';
+import { SRGB } from '../../src/colour/rgb.ts';
 import { areaShrinker, fittingSize } from '../../src/photo/shrink.ts';
 import { scratch } from './madePhotos.ts';
 

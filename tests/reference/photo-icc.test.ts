@@ -8,9 +8,10 @@ import { join } from 'node:path';
 import sharp from 'sharp';
 import { expect, test } from 'vitest';
 import { decodePhotoBytes } from '../../src/cli/decodePhoto.ts';
-import { apply, bradford, invert, PCS_WHITE } from '../../src/photo/adapt.ts';
+import { apply3, bradford, invert3 } from '../../src/colour/matrix3.ts';
+import { SRGB } from '../../src/colour/rgb.ts';
 import { readIccProfile } from '../../src/photo/iccProfile.ts';
-import { SRGB } from '../../src/photo/knownEncodings.ts';
+import { PCS_WHITE } from '../../src/photo/knownEncodings.ts';
 
 const data = join(import.meta.dirname, '../photo/data');
 const profiles = ['sRGB.icm', 'DisplayP3.icm', 'ClayRGB1998.icm'];
@@ -36,7 +37,7 @@ test.each(profiles)('%s: description and matrix as exiftool reads them', (name) 
     [[0, 1, 0], says.GreenMatrixColumn],
     [[0, 0, 1], says.BlueMatrixColumn],
   ] as const) {
-    const ours = apply(toPcs, apply(encoding.toXyz, channel));
+    const ours = apply3(toPcs, apply3(encoding.toXyz, channel));
     // One step of the profile's s15Fixed16 numbers (1.5e-5) and half the last printed digit (5e-6).
     const tolerance = 2.1e-5;
     String(tag)
@@ -58,13 +59,13 @@ test.each(profiles)('%s: colours come out as Little CMS converts them to sRGB, t
     .toBuffer();
   const { pixels } = await decodePhotoBytes(png, 'a.png');
   const converted = await sharp(png).raw().toBuffer();
-  const fromXyz = invert(SRGB.toXyz)!;
+  const fromXyz = invert3(SRGB.toXyz);
   const adapted = bradford(pixels.encoding.whiteXyz, SRGB.whiteXyz);
   let largest = 0;
   for (let i = 0; i < 144; i++) {
     const linear = [0, 1, 2].map((c) => pixels.encoding.decode(pixels.codes[i * 3 + c]! / 255));
-    const xyz = apply(adapted, apply(pixels.encoding.toXyz, linear as [number, number, number]));
-    apply(fromXyz, xyz).forEach((value, c) => {
+    const xyz = apply3(adapted, apply3(pixels.encoding.toXyz, linear as [number, number, number]));
+    apply3(fromXyz, xyz).forEach((value, c) => {
       largest = Math.max(largest, Math.abs(SRGB.encode(value) * 255 - converted[i * 3 + c]!));
     });
   }
