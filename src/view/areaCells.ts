@@ -1,5 +1,5 @@
-import { groundAreaAtM2 } from './waterFields.ts';
-import { incidenceAtRad, type WaterView } from './waterView.ts';
+import { straighteningFactor } from './pinholeCamera.ts';
+import type { WaterView } from './waterView.ts';
 
 /**
  * A photo cut into a few hundred rectangles, over each of which a change of height, tilt or focal length changes all
@@ -43,14 +43,20 @@ export function newCellView(cells: AreaCells): CellView {
  * Only ratios of areas between views of the same photo are of use, so the pixel size cancels.
  */
 export function lookFromCells(view: WaterView, cells: AreaCells, out: CellView): void {
-  const { widthPx, heightPx } = view.camera;
+  const { camera, axes, heightM } = view;
+  const { widthPx, heightPx, focalPx, radial } = camera;
+  const scale = heightM * heightM * focalPx;
   for (let row = 0; row < cells.rows; row++) {
-    const y = ((row + 0.5) * heightPx) / cells.rows;
+    const v = ((row + 0.5) / cells.rows - 0.5) * heightPx;
     for (let column = 0; column < cells.columns; column++) {
-      const x = ((column + 0.5) * widthPx) / cells.columns;
+      const u = ((column + 0.5) / cells.columns - 0.5) * widthPx;
       const cell = row * cells.columns + column;
-      out.areaM2[cell] = groundAreaAtM2(view, x, y);
-      out.incidenceRad[cell] = incidenceAtRad(view, x, y);
+      const factor = straighteningFactor(camera, u, v);
+      const off2 = factor * factor * (u * u + v * v);
+      const down = -factor * (u * axes.right[2] - v * axes.up[2]) - focalPx * axes.ahead[2];
+      const bend = (radial * off2) / (focalPx * focalPx);
+      out.areaM2[cell] = down > 0 ? scale / (down * down * down * (1 + bend) * (1 + 3 * bend)) : Number.NaN;
+      out.incidenceRad[cell] = Math.acos(down / Math.sqrt(off2 + focalPx * focalPx));
     }
   }
 }

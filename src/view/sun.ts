@@ -28,7 +28,10 @@ export function sunPosition(timeMs: number, latitudeDeg: number, longitudeDeg: n
 /** Below this elevation the light is reddened and changes across the frame. */
 const LOW_SUN_DEG = 10;
 
-/** What the sun's height alone gives reason to say: night, twilight, low sun; empty by day. */
+/**
+ * What the sun's height alone gives reason to say: night, twilight, low sun; empty by day. Below the horizon suncalc still
+ * adds the horizon's half degree of refraction, so night begins half a degree late, which does not matter here.
+ */
 export function sunNotices({ elevationDeg }: SunPosition): Notice[] {
   if (elevationDeg < -6) {
     return [

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { seededRandom } from '../../src/scene/random.ts';
 import { blackFilmBoundary } from '../../src/tally/blackFilm.ts';
 import { DRAINAGE_LAWS, type DrainageLawId, fitDrainageLaw } from '../../src/tally/drainageLaw.ts';
+import { drainageReadings } from '../../src/tally/drainageReadings.ts';
 import { leastSquares } from '../../src/tally/leastSquares.ts';
 import { profileAlongLine, profileByRows } from '../../src/tally/profile.ts';
 import { atLeast, bare, film, glint, madeMap } from './fields.ts';
@@ -144,6 +145,24 @@ describe('drainage laws', () => {
         },
       ),
     );
+  });
+
+  it('profiles of a rigid film at three times give the law back, black film and gaps left out', () => {
+    const a = 60_000;
+    const at = (timeS: number) => ({
+      timeS,
+      profile: profileByRows(
+        madeMap(5, 80, (x, y) =>
+          y < 20 ? bare : x === 4 ? glint : film(a * Math.sqrt(((y + 0.5 - 20) * 1e-4) / timeS), 6),
+        ),
+      ),
+    });
+    const readings = drainageReadings([at(10), at(40), at(90)], { topPx: 20, metresPerPixel: 1e-4 });
+    expect(readings.thicknessNm).toHaveLength(3 * 60);
+    expect(readings.sdNm[0]).toBeCloseTo(12 / 3.29, 2);
+    const fit = fitDrainageLaw('rigidVertical', readings);
+    expect(fit.parameters[0]!.value / a).toBeCloseTo(1, 6);
+    expect(() => drainageReadings([at(10)], { topPx: 0, metresPerPixel: 0 })).toThrow(/known length/);
   });
 
   it('refuses readings that a law cannot take, and too few of them', () => {

@@ -44,7 +44,7 @@ describe('units', () => {
     expect([12, 3e4, 4e6].map((m2) => readableAreaUnit(m2).symbol)).toEqual(['m²', 'ha', 'km²']);
   });
 
-  it('a nanometre over a square metre is a cubic nanokilometre no one wants: 1e-9 m³', () => {
+  it('1 nm over 1 m² is 1e-9 m³, 1 µm over 1 m² is 1 mL', () => {
     expect(filmVolumeM3(1, 1)).toBe(1e-9);
     expect(filmVolumeM3(1000, 1)).toBeCloseTo(fromUnit(1, VOLUME_UNITS.mL), 18);
   });

@@ -9,8 +9,8 @@ import { areaCells } from '../../src/view/areaCells.ts';
 import { horizonDipRad, horizonInPhoto } from '../../src/view/horizon.ts';
 import { focalPxFrom35mm, pinholeCamera } from '../../src/view/pinholeCamera.ts';
 import { posesFromHorizon, posesFromTilt } from '../../src/view/poseDraws.ts';
-import { groundAreaField, incidenceField } from '../../src/view/waterFields.ts';
-import { waterView } from '../../src/view/waterView.ts';
+import { groundAreaAtM2, groundAreaField, incidenceField } from '../../src/view/waterFields.ts';
+import { incidenceAtRad, waterView } from '../../src/view/waterView.ts';
 import { ambiguous, atLeast, bare, evenArea, film, madeMap } from './fields.ts';
 
 const exact = { thicknessShare: 0, thicknessShiftNm: 0, correlatedPixels: 0 };
@@ -120,6 +120,23 @@ describe('errors of the view', () => {
   const areaM2 = groundAreaField(view).map((area, i) => (incidence[i]! < 1.3 ? area : Number.NaN));
   const sums = cellSums({ map, areaM2 }, areaCells(400, 300));
   const steadyFilm = { index: 1.47, indexSd: 0 };
+
+  it('a colour keeps its phase: seen flatter than thought, the film is thicker; of higher index, thinner', () => {
+    const flatter = waterView({ ...view, pitchRad: view.pitchRad + 0.02 });
+    const [area, thickness] = [new Float64Array(sums.cells.count), new Float64Array(sums.cells.count)];
+    const still = { next: () => 0.5, normal: () => 1 };
+    commonDraw(view, sums.cells, () => flatter, steadyFilm)(still, area, thickness);
+    const cell = 40 * sums.cells.columns + 3;
+    const [x, y] = [(3.5 * 400) / sums.cells.columns, (40.5 * 300) / sums.cells.rows];
+    const phase = (v: typeof view) => Math.sqrt(1.47 ** 2 - Math.sin(incidenceAtRad(v, x, y)) ** 2);
+    expect(thickness[cell]! * phase(flatter)).toBeCloseTo(phase(view), 12);
+    expect(thickness[cell]).toBeGreaterThan(1);
+    expect(area[cell]).toBeCloseTo(groundAreaAtM2(flatter, x, y) / groundAreaAtM2(view, x, y), 12);
+    expect(area[cell]).toBeGreaterThan(1);
+    indexDraw({ index: 1.47, indexSd: 0.0147 })(still, area, thickness);
+    expect(thickness[0]).toBeCloseTo(1 / 1.01, 12);
+    expect(area[0]).toBe(1);
+  });
 
   it('a height off by 5 % alone moves areas by 10 %', () => {
     const poses = posesFromTilt(view, { heightShare: 0.05, focalShare: 0, pitchRad: 0, rollRad: 0 });

@@ -4,9 +4,9 @@ import { focalFromLength, scaleFromLength } from '../../src/view/groundScale.ts'
 import { horizonDipRad, horizonInPhoto } from '../../src/view/horizon.ts';
 import { focalPxFrom35mm, pinholeCamera } from '../../src/view/pinholeCamera.ts';
 import { straightDownFromPixelSize, straightDownView, uniformFields } from '../../src/view/straightDown.ts';
-import { VIEW_STATUS, viewNotices, viewShares, viewStatus } from '../../src/view/viewLimits.ts';
+import { dropExcluded, VIEW_STATUS, viewNotices, viewShares, viewStatus } from '../../src/view/viewLimits.ts';
 import { groundAreaAtM2, groundAreaField, incidenceField } from '../../src/view/waterFields.ts';
-import { groundAt, groundDistanceM, placeOf, waterView } from '../../src/view/waterView.ts';
+import { groundAt, groundDistanceM, incidenceAtRad, placeOf, waterView } from '../../src/view/waterView.ts';
 
 const DEGREE = Math.PI / 180;
 const camera = pinholeCamera(400, 300, focalPxFrom35mm(26, 400, 300));
@@ -35,6 +35,12 @@ describe('view limits', () => {
     ]);
     const steep = Uint8Array.from(status, (code) => (code === VIEW_STATUS.good ? 1 : 0));
     expect(viewNotices(viewShares(status, steep))).toEqual([]);
+  });
+
+  it('takes the area from every pixel that is left out, and counts them', () => {
+    const area = Float32Array.of(1, 2, 3, 4);
+    expect(dropExcluded(area, Uint8Array.of(0, 1, 2, 3))).toBe(2);
+    expect([...area]).toEqual([1, 2, Number.NaN, Number.NaN]);
   });
 
   it('a photo of nothing but far water or sky says to look further down', () => {
@@ -135,6 +141,17 @@ describe('area cells', () => {
     }
     // Half a degree changes the whole by a tenth; cells must follow that to a few thousandths.
     expect(Math.abs(byCell / byPixel - 1)).toBeLessThan(0.003);
+  });
+
+  it('a cell’s middle is seen as that place of the photo is', () => {
+    const cells = areaCells(400, 300, 5, 6);
+    const out = newCellView(cells);
+    const bent = waterView({ ...view, camera: pinholeCamera(400, 300, camera.focalPx, -0.06) });
+    lookFromCells(bent, cells, out);
+    const cell = 5 * 5 + 1;
+    expect(out.areaM2[cell]! / groundAreaAtM2(bent, 120, 275)).toBeCloseTo(1, 12);
+    expect(out.incidenceRad[cell]).toBeCloseTo(incidenceAtRad(bent, 120, 275), 12);
+    expect(out.areaM2[0]).toBeNaN();
   });
 
   it('a photo smaller than the cells has one cell a pixel', () => {
