@@ -17,7 +17,12 @@ function sum(readings: readonly SceneReading[], pick: (reading: SceneReading) =>
 /** Two lines, as read and with the index error divided out. */
 function linesFor(label: string, readings: readonly SceneReading[]): ReportLine[] {
   const seconds = sum(readings, (reading) => reading.estimateMs) / readings.length / 1000;
-  const notes = [`${seconds.toFixed(1)} s a photo`];
+  const figures = summariseErrors(readings.map((reading) => reading.raw));
+  const steep = percent(
+    sum(readings, (reading) => reading.steepPixels),
+    figures.filmPixels,
+  );
+  const notes = [`${seconds.toFixed(1)} s a photo`, `steep ${steep}`];
   const bare = sum(readings, (reading) => reading.barePixels);
   if (bare > 0) {
     notes.push(
@@ -37,7 +42,7 @@ function linesFor(label: string, readings: readonly SceneReading[]): ReportLine[
     );
   }
   return [
-    { label, figures: summariseErrors(readings.map((reading) => reading.raw)), note: notes.join(', ') },
+    { label, figures, note: notes.join(', ') },
     {
       label: '  index error divided out',
       figures: summariseErrors(readings.map((reading) => reading.indexDivided)),
@@ -88,7 +93,8 @@ function print(readings: readonly SceneReading[], options: ValidateOptions): voi
   }
   console.log(
     '\nAll film pixels in the marked region are counted; a pixel without an answer counts as infinitely far off in the' +
-      '\nmedian and the 90th percentile, and is not counted as off by more than 50 nm.',
+      '\nmedian and the 90th percentile, and is not counted as off by more than 50 nm. "Steep" pixels differ by more than' +
+      '\n60 nm from a neighbour, which a photo of this size hardly shows; they are counted like all others.',
   );
 }
 

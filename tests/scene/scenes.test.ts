@@ -192,7 +192,7 @@ describe.each(scenes)('scene: %s', (_, make) => {
           expect(nm).toBe(0);
         }
       });
-      expect(film).toBeGreaterThan(0.15 * scene.kind.length);
+      expect(film).toBeGreaterThan(0.08 * scene.kind.length);
       const clean = scene.setup.references?.clean;
       if (clean) {
         const [x, y, w, h] = clean;

@@ -21,7 +21,7 @@ Renders scenes of known thickness through cameras drawn at random, reads them an
   --draws       draws a scene, default 4
   --scene       ${SCENE_NAMES.join(', ')}; default all
   --conditions  ${Object.keys(CONDITIONS).join(', ')}; default stated
-  --size        default 480x360
+  --size        default 640x480
   --processes   default 2
   --each        also a line for every draw
   --json        write every figure, with what was drawn, to FILE`;
@@ -51,7 +51,7 @@ export function parseValidateOptions(argv: readonly string[]): ValidateOptions {
       draws: { type: 'string', default: '4' },
       scene: { type: 'string', multiple: true },
       conditions: { type: 'string', multiple: true },
-      size: { type: 'string', default: '480x360' },
+      size: { type: 'string', default: '640x480' },
       processes: { type: 'string', default: '2' },
       each: { type: 'boolean', default: false },
       json: { type: 'string' },
@@ -59,7 +59,7 @@ export function parseValidateOptions(argv: readonly string[]): ValidateOptions {
   });
   const size = /^(\d+)x(\d+)$/.exec(values.size);
   if (!size) {
-    throw new RangeError(`Give --size as WIDTHxHEIGHT, such as 480x360, not "${values.size}".`);
+    throw new RangeError(`Give --size as WIDTHxHEIGHT, such as 640x480, not "${values.size}".`);
   }
   return {
     seed: wholeNumber(values.seed, '--seed', 0),

@@ -32,6 +32,8 @@ export interface SceneReading {
   /** Pixels of other things, and the share of them that got a thickness all the same. */
   readonly otherPixels: number;
   readonly otherGivenThickness: number;
+  /** Film pixels whose thickness differs by more than 60 nm from a neighbour's: finer than a photo can show. */
+  readonly steepPixels: number;
   readonly drawn: DrawnConditions;
   readonly setup: Setup;
   readonly fit: EstimateResult['summary']['fit'];
@@ -69,6 +71,28 @@ export async function throughJpeg(codes: Uint8Array, width: number, height: numb
 export function opticalPathRatio(drawn: DrawnConditions): number {
   const sine2 = Math.sin((drawn.incidenceDeg * Math.PI) / 180) ** 2;
   return Math.sqrt(((drawn.presetIndex + drawn.indexError) ** 2 - sine2) / (drawn.presetIndex ** 2 - sine2));
+}
+
+const STEEP_NM = 60;
+
+/** Film pixels next to a thickness (film's or bare water's) that is more than `STEEP_NM` away. */
+function countSteep({ width, height, thicknessNm }: Scene, isFilm: Uint8Array): number {
+  let steep = 0;
+  for (let i = 0; i < isFilm.length; i++) {
+    if (isFilm[i] !== 1) {
+      continue;
+    }
+    const column = i % width;
+    const nm = thicknessNm[i]!;
+    steep +=
+      (column > 0 && Math.abs(thicknessNm[i - 1]! - nm) > STEEP_NM) ||
+      (column < width - 1 && Math.abs(thicknessNm[i + 1]! - nm) > STEEP_NM) ||
+      (i >= width && Math.abs(thicknessNm[i - width]! - nm) > STEEP_NM) ||
+      (i < width * (height - 1) && Math.abs(thicknessNm[i + width]! - nm) > STEEP_NM)
+        ? 1
+        : 0;
+  }
+  return steep;
 }
 
 /** Renders, compresses and reads one scene, and compares with the truth. */
@@ -123,6 +147,7 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
     bareHeld: counts.bareHeld,
     otherPixels: counts.other,
     otherGivenThickness: counts.otherGiven,
+    steepPixels: countSteep(scene, isFilm),
     drawn: scene.drawn,
     setup: scene.setup,
     fit: summary.fit,

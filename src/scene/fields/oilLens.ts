@@ -19,7 +19,7 @@ export function drawOilLens(random: Random): OilLensOptions {
     middleNm: random.uniform(650, 1000),
     centre: [random.uniform(0.5, 0.62), random.uniform(0.44, 0.54)],
     halfAxes: [random.uniform(0.22, 0.3), random.uniform(0.26, 0.36)],
-    satellites: 4,
+    satellites: 3,
   };
 }
 
@@ -32,7 +32,7 @@ export function oilLensField(options: OilLensOptions, random: Random): Thickness
     { x: options.centre[0], y: options.centre[1], a: options.halfAxes[0], b: options.halfAxes[1], share: 1 },
   ];
   for (let i = 0; i < options.satellites; i++) {
-    const radius = random.uniform(0.02, 0.06);
+    const radius = random.uniform(0.035, 0.07);
     lenses.push({
       x: random.uniform(0.3, 0.95),
       y: random.uniform(0.08, 0.95),

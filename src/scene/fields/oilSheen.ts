@@ -23,9 +23,9 @@ export function drawOilSheen(random: Random): OilSheenOptions {
   return {
     thickestNm: random.uniform(650, 1000),
     bareShare: random.uniform(0.4, 0.65),
-    scale: random.uniform(2, 3),
+    scale: random.uniform(1.3, 2.1),
     stretch: random.uniform(1, 2.2),
-    holes: 10,
+    holes: 8,
     keepBare: [0.1, 0.88, 0.16],
     box: [0, 0, 1, 1],
   };
@@ -34,7 +34,7 @@ export function drawOilSheen(random: Random): OilSheenOptions {
 /** A sheen with islands, holes and bare water between (0 there); smooth inside, its edges thin out steeply. */
 export function oilSheenField(options: OilSheenOptions, random: Random): ThicknessField {
   const seed = hashText(String(random.next()));
-  const body = fractalNoise(seed, 4, 0.42);
+  const body = fractalNoise(seed, 3, 0.38);
   const warpX = fractalNoise(seed + 1, 2);
   const warpY = fractalNoise(seed + 2, 2);
   const [x0, y0, x1, y1] = options.box;
@@ -42,7 +42,7 @@ export function oilSheenField(options: OilSheenOptions, random: Random): Thickne
   const holes = Array.from({ length: Math.round(options.holes * area) }, () => ({
     x: random.uniform(x0, x1),
     y: random.uniform(y0, y1),
-    radius: random.uniform(0.02, 0.06) * (2.5 / options.scale),
+    radius: random.uniform(0.03, 0.07) * (1.7 / options.scale),
   }));
   const [bareX, bareY, bareRadius] = options.keepBare;
 

@@ -55,12 +55,12 @@ export function drawHarbourPlace(options: HarbourPlaceOptions, random: Random): 
   const sheen = oilSheenField(
     {
       ...drawOilSheen(draw),
-      bareShare: draw.uniform(0.35, 0.55),
-      scale: draw.uniform(0.7, 0.9),
+      bareShare: draw.uniform(0.3, 0.5),
+      scale: draw.uniform(0.45, 0.65),
       stretch: draw.uniform(1.8, 2.4),
       holes: 0.4,
       keepBare: [along(bare[0], bare[1]), across(bare[0], bare[1]), bare[2] * 1.25],
-      box: [-2, 1, 8, 11],
+      box: [-1, 1.5, 4.5, 7],
     },
     random.fork('oil'),
   );
