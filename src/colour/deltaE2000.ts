@@ -3,7 +3,7 @@ const POWER = 25 ** 7;
 
 /**
  * CIEDE2000 difference of colour i of `a` and colour j of `b` (CIELAB triples), kL = kC = kH = 1.
- * ISO/CIE 11664-6; in the form of Sharma, Wu, Dalal 2005.
+ * ISO/CIE 11664-6; in the form of Sharma, Wu, Dalal 2005, equations 2 to 22.
  */
 export function deltaE2000(a: ArrayLike<number>, i: number, b: ArrayLike<number>, j: number): number {
   const L1 = a[3 * i]!;

@@ -7,6 +7,8 @@ function lightness(t: number): number {
 /**
  * CIELAB of XYZ triples for a white. CIE 15:2018, section 8.2.1 (ISO/CIE 11664-4).
  * @param xyz 3 a colour, in the units of `white`
+ * @param out reused when given; must hold as many values
+ * @returns L*, a*, b* a colour
  */
 export function labFromXyz(
   xyz: ArrayLike<number>,

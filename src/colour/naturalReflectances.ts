@@ -1,8 +1,13 @@
 /**
- * Smooth reflectance spectra like those of soil, leaves, skin, petals, paints and sky-lit stone. Of our own making:
- * logistic edges and Gaussian bands with parameters on a low-discrepancy sequence, since no measured set is bundled.
- * An image processor's colour matrix is fitted to surfaces like these.
- * @returns one row of `wavelengthNm.length` samples each, all within 0..1
+ * Smooth reflectance spectra of the shapes that soils, leaves, skin, petals and paints have in the visible: a rising or
+ * falling logistic edge between a dark and a bright level, with one broad Gaussian band added or taken away. Of our own
+ * making, with parameters on a low-discrepancy sequence, since no measured set is bundled; no row is a model of one
+ * particular surface. An image processor's colour matrix is fitted to surfaces like these.
+ *
+ * Checked on the 24 measured patches of a chart (tests/reference/colour-camera.test.ts): the matrix that this set gives
+ * comes close to the best one for those patches. A set sorted into foliage, soil, skin, petals, sky and paint came
+ * no closer.
+ * @returns one row of `wavelengthNm.length` samples each, all within 0.01..0.95
  */
 export function naturalReflectances(wavelengthNm: Float64Array, count = 96): Float64Array[] {
   return Array.from({ length: count }, (_, k) => {

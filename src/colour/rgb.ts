@@ -9,7 +9,12 @@ export function xyzOfChromaticity([x, y]: readonly [number, number]): Triple {
   return [x / y, 1, (1 - x - y) / y];
 }
 
-/** Linear RGB to XYZ from the primaries and the white, in double precision (the set that CSS Color 4 uses). */
+/**
+ * Linear RGB to XYZ from the primaries and the white, in double precision, row-major 3 x 3; white has Y = 1.
+ *
+ * Of the three sets of sRGB matrices in use this is the derived one, as in CSS Color 4; the four-digit matrix that
+ * IEC 61966-2-1 prints differs by up to 4e-5, its inverse by up to 4e-4.
+ */
 export function matrixFromPrimaries(
   primaries: readonly (readonly [number, number])[],
   white: readonly [number, number],
@@ -32,6 +37,7 @@ export function decodeSrgb(code: number): number {
 
 const white = xyzOfChromaticity(D65_XY);
 
+/** sRGB, IEC 61966-2-1:1999. */
 export const SRGB: RgbEncoding = {
   id: 'srgb',
   toXyz: matrixFromPrimaries(
@@ -62,3 +68,27 @@ export const DISPLAY_P3: RgbEncoding = {
   encode: encodeSrgb,
   decode: decodeSrgb,
 };
+
+/**
+ * An encoding from its matrix (of a profile, say) and tone transfer. The matrix is scaled so that white has Y = 1.
+ * @param toXyz row-major 3 x 3, linear RGB to XYZ of the encoding's own white
+ * @throws RangeError when the matrix cannot be inverted or gives white no luminance
+ */
+export function rgbEncodingFromMatrix(
+  id: string,
+  toXyz: ArrayLike<number>,
+  transfer: Pick<RgbEncoding, 'encode' | 'decode'>,
+): RgbEncoding {
+  const [x, y, z] = apply3(toXyz, [1, 1, 1]);
+  if (!(y > 0))
+    throw new RangeError(`The colour space "${id}" gives white no brightness; it cannot be used.`);
+  const scaled = Float64Array.from(toXyz, (value) => value / y);
+  invert3(scaled);
+  return {
+    id,
+    toXyz: scaled,
+    whiteXyz: [x / y, 1, z / y],
+    encode: transfer.encode,
+    decode: transfer.decode,
+  };
+}

@@ -29,7 +29,8 @@ export function sensorComponents(wavelengthNm: Float64Array): Float64Array {
  * Sensitivities of one camera of the family: mean + sum of coefficient times component, 3 x n.
  *
  * The model is linear, so a curve may dip a little below zero where the mean is near it; that is kept, because
- * clipping would make the fit's derivatives jump.
+ * clipping would make the fit's derivatives jump. At 5 nm over 380..780 each curve sums to one whatever the
+ * coefficients (to 1e-5, the rounding of the figures): white balance, not the family, sets the gains.
  * @param coefficients r1 r2 r3 g1 g2 g3 b1 b2 b3, N(0, 1) over real cameras
  */
 export function sensorCurves(coefficients: ArrayLike<number>, wavelengthNm: Float64Array): Float64Array {

@@ -1,6 +1,7 @@
 /**
  * CIE 1964 10-degree colour-matching functions, CIE 15:2018 and ISO/CIE 11664-1:2019.
- * Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers).
+ * Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers;
+ * terms in LICENSE-colour-science.txt).
  * 360 to 830 nm in steps of 1 nm.
  */
 

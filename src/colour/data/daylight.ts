@@ -1,5 +1,7 @@
 /**
- * Components of CIE daylight, CIE 15:2018 table 6. Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers).
+ * Components of CIE daylight, CIE 15:2018 table 6.
+ * Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers;
+ * terms in LICENSE-colour-science.txt).
  * 300 to 830 nm in steps of 5 nm.
  */
 

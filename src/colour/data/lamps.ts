@@ -1,5 +1,7 @@
 /**
- * Fluorescent and LED illuminants, CIE 15:2004 and 15:2018. Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers).
+ * Fluorescent and LED illuminants, CIE 15:2004 and 15:2018.
+ * Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers;
+ * terms in LICENSE-colour-science.txt).
  * 380 to 780 nm in steps of 5 nm.
  */
 

@@ -1,7 +1,7 @@
 /**
  * A family of Bayer-type camera sensitivities: mean and three principal components a channel of 50 measured cameras
  * in the open collection rawtoaces-data (Academy Software Foundation, Apache-2.0). That so few components describe
- * real cameras: Jiang, Liu, Gu, Susstrunk 2013, WACV. 380 to 780 nm in steps of 5 nm.
+ * real cameras: Jiang, Liu, Gu, Süsstrunk 2013, WACV. 380 to 780 nm in steps of 5 nm.
  */
 
 /** Mean sensitivity, red, unit sum, 380 to 780 nm, 5 nm. */

@@ -1,5 +1,7 @@
 /**
- * Standard illuminants D50 and D65, CIE 15:2004 and ISO/CIE 11664-2. Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers).
+ * Standard illuminants D50 and D65, CIE 15:2004 and ISO/CIE 11664-2.
+ * Figures as printed in colour-science/colour (BSD-3-Clause, Copyright 2013 Colour Developers;
+ * terms in LICENSE-colour-science.txt).
  * 300 to 780 nm in steps of 5 nm.
  */
 
