@@ -4,8 +4,8 @@ import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import { buildCodeChart } from '../match/buildCodeChart.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
-import { filmBasis, pathRatio } from '../match/filmBasis.ts';
-import { type CameraFit, fitCamera } from '../match/fitCamera.ts';
+import { type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
+import { type CameraFit, type FitInput, fitCamera } from '../match/fitCamera.ts';
 import type { ReadingRules } from '../match/mapPixels.ts';
 import { observerBasis } from '../match/observerBasis.ts';
 import { AT, FIXED_CAMERA, type Prior, statedPrior } from '../match/parameters.ts';
@@ -16,12 +16,14 @@ import { describeFit } from './describeFit.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
 import { type References, readReferences } from './references.ts';
 import { resolvableRange } from './resolvable.ts';
+import { settledRanges } from './settledRanges.ts';
 import type { Setup } from './setup.ts';
 import { startGains } from './startGains.ts';
 
 /** All that is worked out once a photo before its pixels are read. Data only: it can go to a worker. */
 export interface Calibration {
-  readonly chart: CodeChart;
+  /** One chart for each class of how lively a pixel's surroundings are, calmest first. */
+  readonly charts: readonly CodeChart[];
   readonly rules: ReadingRules;
   readonly orderBoundariesNm: readonly number[];
   readonly resolvableNm: { readonly fromNm: number; readonly toNm: number };
@@ -31,15 +33,25 @@ export interface Calibration {
 }
 
 /** Thickness to which colours are sought when a set-up does not say: past the end of colour for every film here. */
-const USUAL_MAX_NM = 2000;
+const USUAL_MAX_NM = 1500;
 /** The fit looks no further: colours past it do not tell one camera from another. */
 const FIT_MAX_NM = 1500;
 const FIT_STEP_NM = 2;
 const SAMPLES = 3000;
-/** What a chart colour itself may be off after the fit, codes of 255. */
-const CHART_ERROR = 1.5;
+/** Samples of the first, annealed fit, which only has to find its way. */
+const FIRST_SAMPLES = 1000;
+/** What a chart colour may be off in calm, changing and lively surroundings, codes of 255: luma, chroma. */
+const CHART_ERRORS = [
+  { luma: 1.2, chroma: 1.2 },
+  { luma: 1.5, chroma: 2 },
+  { luma: 3, chroma: 5 },
+] as const;
 /** Share of its weight that a sample keeps, because samples share errors of compression and processing. */
-const SAMPLE_WEIGHT = 0.1;
+const SAMPLE_WEIGHT = 0.02;
+/** What a sampled colour may be off for reasons other than noise, codes of 255. */
+const SAMPLE_ERROR = 2;
+/** Fitted covariances are widened by this: cameras are not exactly of the family (set on seeded scenes, `npm run validate`). */
+const COVARIANCE_FACTOR = 2;
 /** Squared distance (in noise) of colours that are no film: about 18 codes. */
 const OUTLIER_DISTANCE = 100;
 /** Oil thinner than this cannot be told from bare water by eye or camera (the codes start at 40 nm). */
@@ -86,20 +98,37 @@ export function calibrate(
   const prior = statedPrior(asObserver ? { ...spread, ...FIXED_CAMERA } : spread, start.priorMean);
   onStep(0.1, 'fitting the camera');
   const outcome = fitWithFallback(coarse, prior, start.starts, sample, references, fits);
-  onStep(0.8, 'drawing the chart for this photo');
-  const fine = modelAt(1, Math.ceil(maxNm) + 1);
-  const shift = outcome.fit.parameters[AT.index]!;
-  const n = scene.stack.film.refractiveIndex(550);
-  const factor = pathRatio(scene, shift);
-  const boundaries = orderBoundaries(scene.stack, scene.incidenceRad, maxNm).map((d) => d * factor);
   const noise = sample.count > 0 ? sample.pixelNoise : Float64Array.of(2, 2, 2);
-  const chart = buildCodeChart(
-    fine,
-    outcome.fit,
-    { codes: [noise[0]!, noise[1]!, noise[2]!], chartError: CHART_ERROR },
-    { factor, perIndex: -1 / (n + shift), relativeSd: 0 },
-    (d) => orderOf(d, boundaries),
-  );
+  const orders = orderBoundaries(scene.stack, scene.incidenceRad, maxNm);
+  const chartsFor = (model: CameraModel, fit: CameraFit) => drawCharts(model, fit, scene, noise, orders);
+  if (outcome.determined !== 'no') {
+    onStep(0.4, 'settling orders for the camera');
+    const rough = chartsFor(coarse, outcome.fit);
+    const allowed = settledRanges(
+      pixels,
+      sample,
+      rough,
+      rulesFor(setup, scene, Number.POSITIVE_INFINITY),
+      leftOut,
+    );
+    onStep(0.5, 'fitting the camera once more');
+    outcome.fit = fitCamera({
+      ...fitInput(coarse, prior, sample, references),
+      start: outcome.fit.parameters,
+      near: true,
+      allowed,
+    });
+    outcome.spanNm = spanOf(outcome.fit.sampleNm);
+  }
+  onStep(0.8, 'drawing the chart for this photo');
+  if (outcome.determined !== 'no') {
+    const covariance = outcome.fit.covariance.map((v) => v * COVARIANCE_FACTOR);
+    outcome.fit = { ...outcome.fit, covariance };
+  }
+  const charts = chartsFor(modelAt(1, Math.ceil(maxNm) + 1), outcome.fit);
+  const factor = pathRatio(scene, outcome.fit.parameters[AT.index]!);
+  const boundaries = orders.map((d) => d * factor);
+  const chart = charts[0]!;
   const resolvable = resolvableRange(chart);
   const reachesEnd = resolvable.toNm >= chart.thicknessNm[chart.count - 1]! - 1;
   const calibrated = references.clean !== null || references.white !== null || start.byBrightBand;
@@ -110,13 +139,8 @@ export function calibrate(
     });
   }
   return {
-    chart,
-    rules: {
-      outlierDistance: OUTLIER_DISTANCE,
-      bareNm: canBeBare(setup, scene.stack) ? BARE_NM : 0,
-      resolvableNm: reachesEnd ? Number.POSITIVE_INFINITY : resolvable.toNm,
-      ambiguityMargin: AMBIGUITY_MARGIN,
-    },
+    charts,
+    rules: rulesFor(setup, scene, reachesEnd ? Number.POSITIVE_INFINITY : resolvable.toNm),
     orderBoundariesNm: boundaries,
     resolvableNm: resolvable,
     calibrated,
@@ -125,10 +149,58 @@ export function calibrate(
   };
 }
 
+function rulesFor(setup: Setup, scene: FilmScene, resolvableNm: number): ReadingRules {
+  return {
+    outlierDistance: OUTLIER_DISTANCE,
+    bareNm: canBeBare(setup, scene.stack) ? BARE_NM : 0,
+    resolvableNm,
+    ambiguityMargin: AMBIGUITY_MARGIN,
+  };
+}
+
+/** One chart for each activity class, at a fitted camera. */
+function drawCharts(
+  model: CameraModel,
+  fit: CameraFit,
+  scene: FilmScene,
+  noise: Float64Array,
+  nominalOrdersNm: readonly number[],
+): CodeChart[] {
+  const shift = fit.parameters[AT.index]!;
+  const factor = pathRatio(scene, shift);
+  const boundaries = nominalOrdersNm.map((d) => d * factor);
+  const perIndex = -1 / (scene.stack.film.refractiveIndex(550) + shift);
+  return CHART_ERRORS.map((error) =>
+    buildCodeChart(
+      model,
+      fit,
+      { codes: [noise[0]!, noise[1]!, noise[2]!], ...error },
+      { factor, perIndex, relativeSd: 0 },
+      (d) => orderOf(d, boundaries),
+    ),
+  );
+}
+
 interface Outcome {
-  readonly fit: CameraFit;
+  fit: CameraFit;
   readonly determined: FitReport['determined'];
-  readonly spanNm: readonly [number, number];
+  spanNm: readonly [number, number];
+}
+
+function fitInput(
+  model: CameraModel,
+  prior: Prior,
+  sample: FilmSample,
+  references: References,
+): Omit<FitInput, 'start'> {
+  return {
+    model,
+    prior,
+    samples: sample.codes,
+    sampleWeight: SAMPLE_WEIGHT,
+    references: references.evidence,
+    sampleSd: sampleSd(sample),
+  };
 }
 
 /** Fits from each start, keeps the likeliest; falls back to the references alone where the film says too little. */
@@ -140,24 +212,16 @@ function fitWithFallback(
   references: References,
   fits: boolean,
 ): Outcome {
-  const base = {
-    model,
-    prior,
-    sampleWeight: SAMPLE_WEIGHT,
-    references: references.evidence,
-    sampleSd: sampleSd(sample),
-  };
+  const base = fitInput(model, prior, sample, references);
   const alone = () => fitCamera({ ...base, start: starts[0]!, samples: new Float64Array(0) });
   if (!fits || sample.count < 60) return { fit: alone(), determined: 'no', spanNm: [0, 0] };
-  let best: CameraFit | null = null;
-  if (starts.length > 1) {
-    const few = sample.codes.subarray(0, 3 * Math.min(sample.count, 700));
-    for (const start of starts) {
-      const fit = fitCamera({ ...base, start, samples: few });
-      if (!best || fit.objective < best.objective) best = fit;
-    }
+  const few = sample.codes.subarray(0, 3 * Math.min(sample.count, FIRST_SAMPLES));
+  let fit: CameraFit | null = null;
+  for (const start of starts) {
+    const tried = fitCamera({ ...base, start, samples: few });
+    if (!fit || tried.objective < fit.objective) fit = tried;
   }
-  const fit = fitCamera({ ...base, start: best?.parameters ?? starts[0]!, samples: sample.codes });
+  if (!fit) return { fit: alone(), determined: 'no', spanNm: [0, 0] };
   const spanNm = spanOf(fit.sampleNm);
   const width = spanNm[1] - spanNm[0];
   if (fit.filmShare < 0.3 || width < 120) return { fit: alone(), determined: 'no', spanNm };
@@ -166,7 +230,7 @@ function fitWithFallback(
 
 function sampleSd(sample: FilmSample): number {
   const noise = Math.hypot(...sample.pixelNoise) / Math.sqrt(3);
-  return Math.hypot(noise * Math.sqrt(SAMPLE_VARIANCE_SHARE), 1.2);
+  return Math.hypot(noise * Math.sqrt(SAMPLE_VARIANCE_SHARE), SAMPLE_ERROR);
 }
 
 function spanOf(sampleNm: Float64Array): readonly [number, number] {

@@ -1,6 +1,4 @@
 import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
-import { searchable } from '../match/codeChart.ts';
-import { type ColourTable, makeColourTable } from '../match/colourTable.ts';
 import {
   fillCandidates,
   finishRows,
@@ -9,7 +7,8 @@ import {
   mapRows,
   type SettledField,
 } from '../match/mapPixels.ts';
-import { posteriorReader } from '../match/posterior.ts';
+import { mendSpeckles } from '../match/mendSpeckles.ts';
+import { makePixelReader, type PixelReader } from '../match/pixelReader.ts';
 import { resolveOrders } from '../match/resolveOrders.ts';
 import { smoothRows } from '../match/smoothRows.ts';
 import type { ThicknessMap } from '../match/types.ts';
@@ -25,11 +24,6 @@ import { summarise } from './summarise.ts';
 const MOST_PLACES = 400_000;
 /** Photos above this many pixels are smoothed over 3 x 3 instead of 5 x 5: finer pixels than the film's own detail. */
 const WIDE_SMOOTHING_BELOW = 3_000_000;
-
-/** The reader of one photo's colours: shared by all stages in one thread. */
-export function makeReader(pixels: PhotoPixels, calibration: Calibration): ColourTable {
-  return makeColourTable(pixels.maxCode === 255 ? 256 : 1024, posteriorReader(searchable(calibration.chart)));
-}
 
 /** Pixels between the places of the order step. */
 export function spacingFor(width: number, height: number): number {
@@ -60,15 +54,16 @@ export function settle(
 /** Reads the rows of the full map, smooths and finishes them. */
 export function readRows(
   pixels: PhotoPixels,
-  table: ColourTable,
+  reader: PixelReader,
   calibration: Calibration,
   leftOut: Uint8Array,
   settled: SettledField,
   rows: MapRows,
 ): void {
-  mapRows(pixels, table, calibration.rules, leftOut, settled, rows);
+  mapRows(pixels, reader, calibration.rules, leftOut, settled, rows);
+  mendSpeckles(rows, pixels.width);
   const reach = pixels.width * pixels.height < WIDE_SMOOTHING_BELOW ? 2 : 1;
-  finishRows(rows, calibration.chart, calibration.rules, smoothRows(rows, pixels.width, reach));
+  finishRows(rows, calibration.charts[0]!, calibration.rules, smoothRows(rows, pixels.width, reach));
 }
 
 /** Milliseconds since any fixed moment; injected, because the pure code has no clock. */
@@ -88,16 +83,16 @@ export function estimate(
   const leftOut = leftOutOf(pixels, setup);
   const calibration = calibrate(pixels, setup, leftOut, (share, step) => onStep(share * 0.4, step));
   const fitted = clock();
-  const table = makeReader(pixels, calibration);
+  const reader = makePixelReader(pixels, calibration.charts);
   const field = emptyField(pixels);
   onStep(0.4, 'matching colours');
-  fillCandidates(pixels, table, calibration.rules, leftOut, field, 0, field.height);
+  fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
   const matched = clock();
   const settled = settle(field, setup, calibration, (share) => onStep(0.5 + 0.2 * share, 'settling orders'));
   const ordered = clock();
   onStep(0.7, 'reading every pixel');
   const rows = makeMapRows(pixels.width, 0, pixels.height);
-  readRows(pixels, table, calibration, leftOut, settled, rows);
+  readRows(pixels, reader, calibration, leftOut, settled, rows);
   const map: ThicknessMap = { width: pixels.width, height: pixels.height, ...rowsOf(rows) };
   const mapped = clock();
   const timingsMs = {

@@ -7,8 +7,9 @@ import { AT, PARAMETERS } from './parameters.ts';
 export interface PixelNoise {
   /** Shot, read and rounding noise together, a channel: measured on the photo itself where it could be. */
   readonly codes: readonly [number, number, number];
-  /** What the forward model itself leaves out: blur by compression, processing by place. */
-  readonly chartError: number;
+  /** What the model and compression leave out, one standard deviation: of luma, and of each chroma plane. */
+  readonly luma: number;
+  readonly chroma: number;
 }
 
 export interface ThicknessScale {
@@ -70,7 +71,8 @@ export function buildCodeChart(
     }
     for (let k = 0; k < 6; k++) {
       const [a, b] = pairs[k]!;
-      let sum = a === b ? noise.codes[a]! ** 2 + noise.chartError ** 2 : 0;
+      let sum = noise.luma ** 2 + noise.chroma ** 2 * (CR[a]! * CR[b]! + CB[a]! * CB[b]!);
+      if (a === b) sum += noise.codes[a]! ** 2;
       for (let p = 0; p < PARAMETERS; p++) sum += spread[a * PARAMETERS + p]! * jacobian[b * PARAMETERS + p]!;
       s[k] = sum;
     }
@@ -124,3 +126,6 @@ function quadratic(covariance: Float64Array, v: Float64Array): number {
 }
 
 const FLAT_NM = 100;
+/** How a chroma plane's error shows in red, green and blue (ITU-T T.871, the JPEG file interchange format). */
+const CR = [1.402, -0.714136, 0];
+const CB = [0, -0.344136, 1.772];

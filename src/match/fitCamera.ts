@@ -37,6 +37,8 @@ export interface FitInput {
   /** What one sample counts for, 0..1: samples of one photo share errors of compression and processing. */
   readonly sampleWeight: number;
   readonly references: readonly ReferenceEvidence[];
+  /** True when `start` is already near: the annealing is skipped. */
+  readonly near?: boolean;
   /** Allowed labels of each sample as [from, to) rows, or null for all: orders already settled by neighbours or pins. */
   readonly allowed?: Uint32Array | null;
 }
@@ -52,6 +54,7 @@ const NEGLIGIBLE = 30;
 /** Rounds at the final noise, and the round from which samples slide along the chart. */
 const SETTLING_ROUNDS = 8;
 const SLIDE_FROM_ROUND = 5;
+const NEAR_FROM_ROUND = 7;
 const DAMPING = 0.02;
 const SETTLED_DAMPING = 1e-4;
 /** Labels within this many standard deviations of the nearest are looked at closely. */
@@ -112,7 +115,7 @@ export function fitCamera(input: FitInput): CameraFit {
   const sampleNm = new Float64Array(count);
   const parameters = Float64Array.from(input.start);
   const rounds = ANNEALING.length + SETTLING_ROUNDS;
-  for (let round = 0; round < rounds; round++) {
+  for (let round = input.near ? NEAR_FROM_ROUND : 0; round < rounds; round++) {
     const sd = Math.max(input.sampleSd, ANNEALING[round] ?? 0);
     drawChart(work, parameters);
     assign(work, input, sd, sampleNm);

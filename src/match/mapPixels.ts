@@ -1,7 +1,7 @@
 import type { PhotoPixels } from '../photo/types.ts';
 import { type CandidateField, MOST_CANDIDATES } from './candidates.ts';
 import type { CodeChart } from './codeChart.ts';
-import type { ColourTable } from './colourTable.ts';
+import type { PixelReader } from './pixelReader.ts';
 import { MODE_FIELDS } from './posterior.ts';
 import { STATED_SMOOTHNESS } from './resolveOrders.ts';
 import { PIXEL_STATUS } from './types.ts';
@@ -26,22 +26,17 @@ export const COVER_90 = 1.6448536;
 /** Marks of pixels that take no part: outside the region, clipped, painted out. One byte a pixel; 0 = takes part. */
 export type LeftOut = Uint8Array | null;
 
-function levelShift(pixels: PhotoPixels): number {
-  return pixels.maxCode === 255 ? 0 : 6;
-}
-
 /** Fills rows [fromRow, toRow) of a candidate field from the photo. */
 export function fillCandidates(
   pixels: PhotoPixels,
-  table: ColourTable,
+  reader: PixelReader,
   rules: ReadingRules,
   leftOut: LeftOut,
   field: CandidateField,
   fromRow: number,
   toRow: number,
 ): void {
-  const shift = levelShift(pixels);
-  const { codes, channels, width } = pixels;
+  const { width } = pixels;
   const half = field.spacing >> 1;
   for (let row = fromRow; row < toRow; row++) {
     const y = Math.min(pixels.height - 1, row * field.spacing + half);
@@ -51,9 +46,8 @@ export function fillCandidates(
       const place = row * field.width + column;
       field.count[place] = 0;
       if (leftOut?.[pixel]) continue;
-      const at = pixel * channels;
-      const offset = table.lookUp(codes[at]! >> shift, codes[at + 1]! >> shift, codes[at + 2]! >> shift);
-      const records = table.records();
+      const offset = reader.lookUp(x, y);
+      const records = reader.records;
       if (records[offset + 1]! > rules.outlierDistance) continue;
       const count = Math.min(records[offset]!, MOST_CANDIDATES);
       field.count[place] = count;
@@ -107,14 +101,13 @@ export interface SettledField {
  */
 export function mapRows(
   pixels: PhotoPixels,
-  table: ColourTable,
+  reader: PixelReader,
   rules: ReadingRules,
   leftOut: LeftOut,
   settled: SettledField | null,
   rows: MapRows,
 ): void {
-  const shift = levelShift(pixels);
-  const { codes, channels, width } = pixels;
+  const { width } = pixels;
   const nearby = new Float64Array(4);
   for (let y = rows.fromRow; y < rows.toRow; y++) {
     for (let x = 0; x < width; x++) {
@@ -124,9 +117,8 @@ export function mapRows(
         rows.status[out] = leftOut[pixel]! === 1 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour;
         continue;
       }
-      const at = pixel * channels;
-      const offset = table.lookUp(codes[at]! >> shift, codes[at + 1]! >> shift, codes[at + 2]! >> shift);
-      const records = table.records();
+      const offset = reader.lookUp(x, y);
+      const records = reader.records;
       if (records[offset + 1]! > rules.outlierDistance || records[offset] === 0) {
         rows.status[out] = PIXEL_STATUS.noFilmColour;
         continue;
@@ -192,7 +184,7 @@ function choose(
   nearby: Float64Array,
   neighbours: number,
 ): number {
-  const { perNm, edge } = STATED_SMOOTHNESS;
+  const { perNm, edge, perNmBeyond } = STATED_SMOOTHNESS;
   const best = records[offset + 2 + 3]!;
   let chosen = 0;
   let least = Number.POSITIVE_INFINITY;
@@ -200,7 +192,8 @@ function choose(
     const mode = offset + 2 + k * MODE_FIELDS;
     let cost = Math.min(MOST_COST, (records[mode + 3]! - best) / 2);
     for (let n = 0; n < neighbours; n++) {
-      cost += Math.min(edge, perNm * Math.abs(records[mode]! - nearby[n]!));
+      const gap = Math.abs(records[mode]! - nearby[n]!);
+      cost += Math.min(perNm * gap, edge + perNmBeyond * gap);
     }
     if (cost < least) {
       least = cost;

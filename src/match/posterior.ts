@@ -4,6 +4,11 @@ import { BLOCK, type SearchChart } from './codeChart.ts';
 export const MAX_MODES = 6;
 /** Numbers kept of a mode: thickness, low, high (nm), minus twice log evidence. */
 export const MODE_FIELDS = 4;
+/**
+ * Prior density of thickness, proportional to (thickness + 100 nm) to the power of minus half of this: thin films cover
+ * more area than thick ones, and a scale-free prior says so without favouring any order.
+ */
+const PRIOR = 3;
 /** Labels whose cost is this far above the best have less than one part in 10^3 of its density. */
 const DEPTH = 14;
 /** Two dips of the cost are one mode when the ridge between them is lower than this (a factor 2.7 in density). */
@@ -53,7 +58,8 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
         precision[w + 1]! * y * y +
         precision[w + 2]! * z * z +
         2 * (precision[w + 3]! * x * y + precision[w + 4]! * x * z + precision[w + 5]! * y * z) +
-        logDeterminant[j]!;
+        logDeterminant[j]! +
+        PRIOR * Math.log(thicknessNm[j]! + 100);
       cost[j] = d;
       if (d < least) least = d;
     }

@@ -4,13 +4,20 @@ import { type CandidateField, MOST_CANDIDATES } from './candidates.ts';
 export interface Smoothness {
   /** Cost (minus log probability) a nanometre of difference between adjacent pixels. */
   readonly perNm: number;
-  /** Cost of an edge: no difference costs more. */
+  /** Cost of an edge: from here on a larger difference costs little more, so that films may end. */
   readonly edge: number;
+  /** What a nanometre costs beyond the edge. */
+  readonly perNmBeyond: number;
   /** A draining film: a place below that is thinner than the one above costs more. */
   readonly thickerDown: boolean;
 }
 
-export const STATED_SMOOTHNESS: Smoothness = { perNm: 0.03, edge: 6, thickerDown: false };
+export const STATED_SMOOTHNESS: Smoothness = {
+  perNm: 0.1,
+  edge: 12,
+  perNmBeyond: 0.02,
+  thickerDown: false,
+};
 /** How much dearer a step against the trend is. */
 const AGAINST_TREND = 3;
 
@@ -94,7 +101,7 @@ function sweep(
   // Each place passes on the path costs of the last place with candidates: `message` there, `sourceOf` says where.
   sourceOf.fill(-1);
   const trend = smoothness.thickerDown ? Math.sign(dy) : 0;
-  const edgeAgainst = edge * AGAINST_TREND;
+  const beyond = smoothness.perNmBeyond;
   const forward = dy > 0 || (dy === 0 && dx > 0);
   for (let row = 0; row < height; row++) {
     const y = dy >= 0 ? row : height - 1 - row;
@@ -126,15 +133,12 @@ function sweep(
       for (let k = 0; k < n; k++) {
         const d = thicknessNm[own + k]!;
         const w = sdNm[own + k]!;
-        let best = floor + (trend === 0 ? edge : edgeAgainst);
+        let best = Number.POSITIVE_INFINITY;
         for (let q = 0; q < m; q++) {
           const step = d - thicknessNm[from + q]!;
           const gap = Math.abs(step) - (w + sdNm[from + q]!);
-          let price = gap > 0 ? perNm * gap : 0;
-          if (trend !== 0) {
-            const against = step * trend < 0;
-            price = against ? Math.min(edgeAgainst, price * AGAINST_TREND) : Math.min(edge, price);
-          }
+          let price = gap > 0 ? Math.min(perNm * gap, edge + beyond * gap) : 0;
+          if (trend !== 0 && step * trend < 0) price *= AGAINST_TREND;
           const c = message[from + q]! + price;
           if (c < best) best = c;
         }
