@@ -45,7 +45,8 @@ export function boxInPixels(box: Box, width: number, height: number, inset: numb
   ];
 }
 
-function corners([x, y, width, height]: Rectangle): Point[] {
+/** The corners of a rectangle, clockwise from the top left. */
+export function corners([x, y, width, height]: Rectangle): Point[] {
   return [
     [x, y],
     [x + width, y],
@@ -91,6 +92,7 @@ export function soapScene(request: SceneRequest, black: boolean): Scene {
     cornerShare: 0,
     card: CARD,
     cardReflectance,
+    cardTurnRad: 0,
     seed: 5,
     subsamples: 1,
   });

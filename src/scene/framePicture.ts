@@ -26,6 +26,8 @@ export interface FramePicture {
   /** Grey card beside it, and its reflectance. */
   readonly card: Box;
   readonly cardReflectance: number;
+  /** How far the card lies askew, radians. */
+  readonly cardTurnRad: number;
   readonly seed: number;
   /** Looks a pixel along each side. */
   readonly subsamples: number;
@@ -56,6 +58,8 @@ export function renderFrame(picture: FramePicture): Picture {
   const fold = fractalNoise(seed, 3);
   const fibre = fractalNoise(seed + 1, 2);
   const paper = fractalNoise(seed + 2, 2);
+  const cos = Math.cos(picture.cardTurnRad);
+  const sin = Math.sin(picture.cardTurnRad);
   const out: Picture = {
     raw: new Float32Array(3 * width * height),
     thicknessNm: new Float32Array(width * height).fill(Number.NaN),
@@ -80,21 +84,37 @@ export function renderFrame(picture: FramePicture): Picture {
     if (outside < wire || onRod) {
       const across = onRod ? (x - frame[0] - frame[2] / 2) / (0.7 * wire) : 2 * (outside / wire) - 1;
       const round = Math.sqrt(Math.max(0, 1 - across * across));
-      grey(0.006 + 0.012 * round + 0.085 * Math.exp(-(((across + 0.3) / 0.25) ** 2)), 1, 0.97, 0.92);
+      const along = 0.65 + 0.8 * Math.max(-0.6, fold((x * 3) / shorter + 9, (y * 3) / shorter));
+      const gleam = 0.085 * along * Math.exp(-(((across + 0.3) / 0.25) ** 2));
+      grey(0.006 + 0.012 * round + gleam, 1, 0.97, 0.92);
       return Number.NaN;
     }
-    const onCard = outsideRoundedBox(x, y, card, 0.01 * shorter);
+    const cardX = card[0] + card[2] / 2;
+    const cardY = card[1] + card[3] / 2;
+    const turned = (px: number, py: number) => {
+      const [dx, dy] = [px - cardX, py - cardY];
+      return outsideRoundedBox(
+        cardX + cos * dx + sin * dy,
+        cardY - sin * dx + cos * dy,
+        card,
+        0.01 * shorter,
+      );
+    };
+    const onCard = turned(x, y);
     if (onCard < 0) {
       grey(picture.cardReflectance * (1 + 0.012 * paper((x * 90) / shorter, (y * 90) / shorter)));
       return Number.NaN;
     }
-    const shadow = outsideRoundedBox(x - 0.012 * shorter, y - 0.016 * shorter, card, 0.01 * shorter);
+    const shadow = turned(x - 0.012 * shorter, y - 0.016 * shorter);
     const shade = 0.35 + 0.65 * Math.min(1, Math.max(0, shadow / (0.02 * shorter)));
     const u = x / shorter;
     const v = y / shorter;
     const weave = 0.5 + 0.5 * Math.sin(u * 900) * Math.sin(v * 900);
-    const cloth = 1 + 0.8 * fold(u * 2 + 0.6 * v, v * 0.9) + 0.35 * fibre(u * 160, v * 160) + 0.25 * weave;
-    grey(0.0011 * shade * Math.max(0.2, cloth), 0.9, 0.95, 1.1);
+    // Folds hang slantwise: light catches one flank of each, the other lies in shadow.
+    const drape = fold(u * 1.9 + 0.5 * v, v * 0.55 + 3);
+    const flank = fold(u * 1.9 + 0.5 * v + 0.05, v * 0.55 + 3) - drape;
+    const cloth = 0.9 + 0.9 * drape + 7 * flank + 0.35 * fibre(u * 160, v * 160) + 0.25 * weave;
+    grey(0.0022 * shade * Math.max(0.12, cloth), 0.9, 0.95, 1.1);
     return Number.NaN;
   };
 

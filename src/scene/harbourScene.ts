@@ -5,6 +5,7 @@ import { cameraOf, drawConditions, filmColours, filmTableOf, meter } from './con
 import { developPhoto } from './develop.ts';
 import { drawHarbourPlace, waterRegion, waterToPixel } from './harbour/harbourPlace.ts';
 import { incidenceAtDeg, renderHarbour } from './harbour/waterView.ts';
+import { horizonAt } from './perspective.ts';
 import { seededRandom } from './random.ts';
 import { regionMask } from './region.ts';
 import type { Scene } from './types.ts';
@@ -65,6 +66,9 @@ export function harbourScene(request: HarbourRequest): HarbourScene {
     pitchDeg: (view.pitchRad * 180) / Math.PI + 0.5 * off.normal(),
     rollDeg: (view.rollRad * 180) / Math.PI,
     focal35mm: place.focal35mm,
+    horizon: [0.15, 0.85].map(
+      (share): Point => [Math.round(share * width), Math.round(horizonAt(view, share * width))],
+    ),
   };
   const setup: Setup = {
     film: 'diesel',
@@ -85,6 +89,7 @@ export function harbourScene(request: HarbourRequest): HarbourScene {
     setup,
     drawn: metered.conditions,
     view,
+    quayX: place.quayX,
     toldView,
     water: sumWater(picture, region, width, height),
   };
@@ -96,9 +101,16 @@ export interface ToldView {
   readonly pitchDeg: number;
   readonly rollDeg: number;
   readonly focal35mm: number;
+  /** Two places on the horizon, to the nearest pixel, as two taps give them. */
+  readonly horizon: readonly Point[];
 }
 
-export type HarbourScene = Scene & Required<Pick<Scene, 'view' | 'water'>> & { readonly toldView: ToldView };
+export type HarbourScene = Scene &
+  Required<Pick<Scene, 'view' | 'water'>> & {
+    readonly toldView: ToldView;
+    /** Water lies to the right of this X, metres. */
+    readonly quayX: number;
+  };
 
 /** The largest upright rectangle of whole pixels about the bare patch that stays within its inner part. */
 function bareRectangle(

@@ -71,3 +71,10 @@ export function waterAreaM2(view: PinholeView, direction: ArrayLike<number>): nu
   const down = -direction[2]!;
   return down > 0 ? (view.heightM * view.heightM * view.focalPx) / (down * down * down) : Number.NaN;
 }
+
+/** Where the horizon of level water meets a column of the picture, in pixels from the top; it may lie off the picture. */
+export function horizonAt(view: PinholeView, x: number): number {
+  // dz = f ahead_z + u right_z - v up_z = 0, solved for v.
+  const { ahead, right, up } = viewAxes(view);
+  return view.heightPx / 2 + (view.focalPx * ahead[2] + (x - view.widthPx / 2) * right[2]) / up[2];
+}

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import {
   focalPxFrom35mm,
+  horizonAt,
   incidenceRad,
   lookAlong,
   type PinholeView,
@@ -67,6 +68,17 @@ describe('pinhole over level water', () => {
     const dv = -100 * Math.tan(level.rollRad);
     lookAlong(level, viewAxes(level), 120 + 100, 160 + dv, ray);
     expect(ray[2]).toBeCloseTo(0, 9);
+  });
+
+  it('finds the horizon where the line of sight is level', () => {
+    const ray = [0, 0, 0];
+    for (const x of [0, 60, 240]) {
+      lookAlong(view, viewAxes(view), x, horizonAt(view, x), ray);
+      expect(ray[2]).toBeCloseTo(0, 9);
+    }
+    // Looking down by 32 degrees, it lies f tan 32 above the middle (no roll).
+    const level = { ...view, rollRad: 0 };
+    expect(horizonAt(level, 30)).toBeCloseTo(160 - view.focalPx * Math.tan(32 * DEG), 9);
   });
 
   it('keeps right, up and ahead at right angles', () => {

@@ -33,12 +33,13 @@ const harbour = (seed: number) =>
     subsamples: 2,
     rippleWaves: 12,
   });
-const scenes: [string, (seed: number) => Scene][] = [
-  ['draining soap film', (seed) => soapScene({ ...request, seed }, false)],
-  ['soap film with black film', (seed) => soapScene({ ...request, seed }, true)],
-  ['oil sheen', (seed) => oilScene({ ...request, seed }, 'sheen')],
-  ['oil lens', (seed) => oilScene({ ...request, seed }, 'lens')],
-  ['harbour', harbour],
+/** Name, maker, and how many seeds to look at. */
+const scenes: [string, (seed: number) => Scene, number][] = [
+  ['draining soap film', (seed) => soapScene({ ...request, seed }, false), 6],
+  ['soap film with black film', (seed) => soapScene({ ...request, seed }, true), 6],
+  ['oil sheen', (seed) => oilScene({ ...request, seed }, 'sheen'), 12],
+  ['oil lens', (seed) => oilScene({ ...request, seed }, 'lens'), 12],
+  ['harbour', harbour, 3],
 ];
 
 /** Raw values of one film from the exact Airy sum at every wavelength, with no table in between. */
@@ -170,7 +171,7 @@ describe('the camera of the renderer', () => {
   });
 });
 
-describe.each(scenes)('scene: %s', (_, make) => {
+describe.each(scenes)('scene: %s', (_, make, seeds) => {
   it('gives the same bytes for the same seed and others for another', () => {
     const one = make(3);
     expect(make(3)).toEqual(one);
@@ -178,7 +179,7 @@ describe.each(scenes)('scene: %s', (_, make) => {
   });
 
   it('holds truth and told references that agree', () => {
-    for (const seed of [1, 2, 3, 4, 5, 6]) {
+    for (let seed = 1; seed <= seeds; seed++) {
       const scene = make(seed);
       const most = scene.filmKind === 'soap' ? 1250 : 1000;
       let film = 0;

@@ -56,7 +56,7 @@ describe('error statistics', () => {
     for (const count of [1, 2, 3, 10, 101, 1000]) {
       const values = Float64Array.from({ length: count }, () => random.uniform(0, 900)).sort();
       for (const share of [0, 0.05, 0.5, 0.9, 0.95, 1]) {
-        expect(quantileOfSorted(values, share)).toBeCloseTo(quantileSorted(values, share)!, 9);
+        expect(quantileOfSorted(values, share)).toBeCloseTo(quantileSorted([...values], share)!, 9);
       }
     }
   });

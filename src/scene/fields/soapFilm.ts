@@ -66,7 +66,8 @@ function drawPlume(random: Random): Plume {
 /** Share of thickness that a plume takes away at a place: a stalk that widens into a rounded head. */
 function plumeDepth(plume: Plume, x: number, y: number): number {
   const rise = (plume.y - y) / plume.length;
-  if (rise < -0.3 || rise > 1.4) {
+  const headHeight = (plume.width * 0.8) / plume.length;
+  if (rise < -0.3 - headHeight || rise > 1.15 + 4 * headHeight) {
     return 0;
   }
   const across = x - plume.x - plume.lean * plume.length * Math.max(0, rise);
@@ -76,7 +77,7 @@ function plumeDepth(plume: Plume, x: number, y: number): number {
     Math.exp(-0.5 * (across / stalk) ** 2) *
     smoothStep(-0.3, 0.1, rise) *
     (1 - smoothStep(0.8, 1.15, rise));
-  const head = Math.hypot(across / (plume.width * 1.1), (rise - 0.95) / ((plume.width * 0.8) / plume.length));
+  const head = Math.hypot(across / (plume.width * 1.1), (rise - 0.95) / headHeight);
   return plume.depth * Math.min(1, stalkPart + Math.exp(-0.5 * head * head));
 }
 

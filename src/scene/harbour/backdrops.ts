@@ -16,12 +16,12 @@ export function put(out: Float64Array, r: number, g: number, b: number, shade: n
   out[2] = b * shade;
 }
 
-/** A stone wall 1.9 m high, wet and weedy at its foot. */
-export function farWall(seed: number): Paint {
+/** A stone wall 1.9 m high that ends at `toX`, wet and weedy at its foot. */
+export function farWall(seed: number, toX: number): Paint {
   const stain = fractalNoise(seed, 4);
   const streak = fractalNoise(seed + 1, 3);
   return (x, z, out) => {
-    if (z > 1.9) {
+    if (z > 1.9 || x > toX) {
       return false;
     }
     const course = Math.floor(z / 0.38);
@@ -38,14 +38,26 @@ export function farWall(seed: number): Paint {
   };
 }
 
+/** A low shore far across open water, pale with haze: its foot shows where the horizon is. */
+export function farShore(seed: number): Paint {
+  const skyline = fractalNoise(seed + 3, 5);
+  const woods = fractalNoise(seed + 4, 3);
+  return (x, z, out) => {
+    if (z > 30 + 34 * skyline(x / 420, 0.5)) {
+      return false;
+    }
+    put(out, 0.86, 0.97, 1.1, 0.23 * (1 + 0.12 * woods(x / 60, z / 14)));
+    return true;
+  };
+}
+
 /** Sheds behind the wall. */
 export function sheds(seed: number): Paint {
   const grime = fractalNoise(seed + 2, 3);
   const buildings = [
-    { from: -30, to: -13.5, top: 5.6, rgb: [0.1, 0.058, 0.048] },
-    { from: -12.9, to: -4.2, top: 4.3, rgb: [0.15, 0.145, 0.13] },
-    { from: 1.5, to: 11.5, top: 6.6, rgb: [0.07, 0.085, 0.088] },
-    { from: 12.2, to: 30, top: 4.6, rgb: [0.12, 0.11, 0.098] },
+    { from: -30, to: -16.5, top: 5.6, rgb: [0.1, 0.058, 0.048] },
+    { from: -15.9, to: -8.2, top: 4.3, rgb: [0.15, 0.145, 0.13] },
+    { from: -6.5, to: 1.5, top: 6.1, rgb: [0.07, 0.085, 0.088] },
   ] as const;
   return (x, z, out) => {
     for (const house of buildings) {

@@ -1,6 +1,6 @@
 import { drawOilSheen, oilSheenField } from '../fields/oilSheen.ts';
 import type { ThicknessField } from '../fields/thicknessField.ts';
-import { focalPxFrom35mm, lookAlong, type PinholeView, viewAxes } from '../perspective.ts';
+import { focalPxFrom35mm, incidenceRad, lookAlong, type PinholeView, viewAxes } from '../perspective.ts';
 import type { Random } from '../random.ts';
 import { drawRipples, type Ripples } from './ripples.ts';
 import { buildSurroundings, type Surroundings } from './solids.ts';
@@ -40,13 +40,18 @@ export function drawHarbourPlace(options: HarbourPlaceOptions, random: Random): 
     heightPx: options.heightPx,
     focalPx: focalPxFrom35mm(focal35mm, options.widthPx, options.heightPx),
     heightM: draw.uniform(2.2, 3.1),
-    pitchRad: draw.uniform(-34, -27) * DEG,
+    pitchRad: draw.uniform(-31, -26.5) * DEG,
     rollRad: draw.uniform(-1.5, 1.5) * DEG,
   };
   const quayX = draw.uniform(-0.9, -0.65);
   const windRad = draw.uniform(0.9, 1.4);
   const oilRad = draw.uniform(0.35, 0.65);
-  const bare: [number, number, number] = [draw.uniform(0.8, 1.3), draw.uniform(2.4, 2.9), 0.36];
+  // Close enough to be seen at 36 to 42 degrees, where the water's own brightness hardly depends on the angle.
+  const bare: [number, number, number] = [
+    draw.uniform(0.75, 1.15),
+    view.heightM * draw.uniform(0.73, 0.9),
+    0.3,
+  ];
   // The sheen's own axes run along `oilRad` through a point ahead of the camera, so streamers lie askew.
   const cos = Math.cos(oilRad);
   const sin = Math.sin(oilRad);
@@ -75,6 +80,7 @@ export function drawHarbourPlace(options: HarbourPlaceOptions, random: Random): 
         quayX,
         quayTopM: 1.05,
         farY: 46,
+        farWallToX: 4,
         posts: [
           { x: 2.1, y: 6.4, radiusM: 0.15, footM: -0.1, topM: 1.25, made: 'wood' },
           { x: quayX - 0.5, y: 4.6, radiusM: 0.13, footM: 1, topM: 1.4, made: 'iron' },
@@ -143,39 +149,51 @@ export function waterToPixel(view: PinholeView, x: number, y: number): [number, 
 
 /**
  * The part of the picture a person would mark: water seen at less than `steepestDeg` from the vertical, right of the quay
- * by a hand's breadth. A polygon in pixels; the picture's edges close it.
+ * by a hand's breadth; where `nearestDeg` is given, no nearer than that. A polygon in whole pixels within the picture.
  */
-export function waterRegion(view: PinholeView, quayX: number, steepestDeg: number): [number, number][] {
+export function waterRegion(
+  view: PinholeView,
+  quayX: number,
+  steepestDeg: number,
+  nearestDeg = 0,
+): [number, number][] {
   const { widthPx: width, heightPx: height } = view;
   const ray = [0, 0, 0];
   const axes = viewAxes(view);
-  const groundX = (px: number, py: number) => {
+  const ground = (px: number, py: number): readonly [number, number] => {
     lookAlong(view, axes, px, py, ray);
-    return ray[2]! < 0 ? (-view.heightM * ray[0]!) / ray[2]! : Number.NaN;
+    const t = -view.heightM / ray[2]!;
+    return [t * ray[0]!, t * ray[1]!];
   };
-  const reach = view.heightM * Math.tan(steepestDeg * DEG);
-  // The far side is a chord inside the circle of that incidence, level in the picture but for the roll.
-  const far = Math.sqrt(Math.max(1, reach * reach - 9));
-  const farLeft = waterToPixel(view, quayX + 0.12, far)!;
-  const top = Math.ceil(farLeft[1]);
-  const left: [number, number][] = [];
-  for (const py of [
-    top,
-    top + (height - top) * 0.25,
-    top + (height - top) * 0.5,
-    top + (height - top) * 0.75,
-    height,
-  ]) {
-    let [low, high] = [0, width];
+  /** Lowest row whose middle looks at an incidence of at least `deg`; rows go down towards the camera's feet. */
+  const rowAt = (deg: number, column: number) => {
+    let [low, high] = [0, height];
     for (let i = 0; i < 40; i++) {
       const middle = (low + high) / 2;
-      if (groundX(middle, py) < quayX + 0.12) {
+      lookAlong(view, axes, column, middle, ray);
+      if (incidenceRad(ray) > deg * DEG) {
         low = middle;
       } else {
         high = middle;
       }
     }
-    left.push([Math.round(high), Math.round(py)]);
-  }
-  return [[width, top], ...left, [width, height]];
+    return high;
+  };
+  // Both corners of the far side must be near enough, whichever way the picture is turned.
+  const top = Math.ceil(Math.max(rowAt(steepestDeg, width), rowAt(steepestDeg, width / 2)));
+  const bottom = Math.floor(Math.min(height, rowAt(nearestDeg, width / 2)));
+  const left = [0, 0.25, 0.5, 0.75, 1].map((share): [number, number] => {
+    const py = Math.round(top + (bottom - top) * share);
+    let [low, high] = [0, width];
+    for (let i = 0; i < 40; i++) {
+      const middle = (low + high) / 2;
+      if (ground(middle, py)[0] < quayX + 0.12) {
+        low = middle;
+      } else {
+        high = middle;
+      }
+    }
+    return [Math.round(high), py];
+  });
+  return [[width, top], ...left, [width, bottom]];
 }

@@ -1,6 +1,6 @@
 import type { Random } from '../random.ts';
 import { fractalNoise, smoothStep } from '../smoothNoise.ts';
-import { type Backdrop, farWall, hullSide, put, sheds } from './backdrops.ts';
+import { type Backdrop, farShore, farWall, hullSide, put, sheds } from './backdrops.ts';
 
 /**
  * What stands in the harbour, lit by an even grey sky of radiance 1: colours are radiances in camera space after white
@@ -29,8 +29,9 @@ export interface SurroundingsOptions {
   /** Quay face on the left at this X (metres), its top at this height. */
   readonly quayX: number;
   readonly quayTopM: number;
-  /** Far quay wall at this Y. */
+  /** Far quay wall at this Y, ending at this X: beyond it lies open water. */
   readonly farY: number;
+  readonly farWallToX: number;
   /** Upright round posts: piles in the water, bollards on the quay. */
   readonly posts: readonly Post[];
   /** Floating boom from one place to another on the water. Null for none. */
@@ -85,7 +86,11 @@ export function buildSurroundings(options: SurroundingsOptions, random: Random):
   if (options.hull) {
     backdrops.push({ y: options.hull[1], paint: hullSide(options.hull[0], options.hull[2]) });
   }
-  backdrops.push({ y: options.farY, paint: farWall(seed) }, { y: options.farY + 6, paint: sheds(seed) });
+  backdrops.push(
+    { y: options.farY, paint: farWall(seed, options.farWallToX) },
+    { y: options.farY + 6, paint: sheds(seed) },
+    { y: 2500, paint: farShore(seed) },
+  );
   const boomLength = boom ? Math.hypot(boom.to[0] - boom.from[0], boom.to[1] - boom.from[1]) : 0;
 
   const paintQuay = (x: number, y: number, z: number, onTop: boolean, out: Float64Array) => {

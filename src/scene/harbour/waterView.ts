@@ -42,6 +42,9 @@ export interface RenderedWater {
   readonly volumeNmM2: Float64Array;
 }
 
+/** Distance beyond which the water mirrors no shapes. */
+const SMEARED_M = 150;
+
 /** Renders the view. Cost: subsamples^2 rays a pixel, one more for each that meets water. */
 export function renderHarbour(scene: HarbourView): RenderedWater {
   const { view, subsamples, surroundings, table, ripples } = scene;
@@ -114,7 +117,9 @@ export function renderHarbour(scene: HarbourView): RenderedWater {
           const rx = dx / length - 2 * along * nx;
           const ry = dy / length - 2 * along * ny;
           const rz = Math.max(1e-3, dz / length - 2 * along * nz);
-          if (surroundings.trace(x, y, 1e-4, rx, ry, rz, mirror) === Number.POSITIVE_INFINITY) {
+          // Far out the waves inside one pixel smear whatever stands there: the water shows sky alone.
+          const far = x * x + y * y > SMEARED_M * SMEARED_M;
+          if (far || surroundings.trace(x, y, 1e-4, rx, ry, rz, mirror) === Number.POSITIVE_INFINITY) {
             surroundings.sky(rx, ry, rz, mirror);
           } else {
             mirrored++;
