@@ -23,14 +23,22 @@ export function parseEstimateArguments(argv: readonly string[]): EstimateArgumen
   try {
     parsed = parse(argv);
   } catch (error) {
-    throw new UsageError(`${error instanceof Error ? error.message : String(error)} Say --help for how to use it.`.replaceAll('\n', ' '));
+    throw new UsageError(
+      `${error instanceof Error ? error.message : String(error)} Say --help for how to use it.`.replaceAll(
+        '\n',
+        ' ',
+      ),
+    );
   }
   const { values, positionals } = parsed;
   if (values.help) return 'help';
   const [photo, ...more] = positionals;
-  if (!photo || more.length > 0) throw new UsageError('Give exactly one PHOTO; say --help for how to use it.');
-  if (!values.setup) throw new UsageError('Name the set-up with --setup SETUP.json; say --help for how to use it.');
-  if (!values.out) throw new UsageError('Name a folder for the results with --out DIR; say --help for how to use it.');
+  if (!photo || more.length > 0)
+    throw new UsageError('Give exactly one PHOTO; say --help for how to use it.');
+  if (!values.setup)
+    throw new UsageError('Name the set-up with --setup SETUP.json; say --help for how to use it.');
+  if (!values.out)
+    throw new UsageError('Name a folder for the results with --out DIR; say --help for how to use it.');
   return { photo, setup: values.setup, out: values.out };
 }
 

@@ -23,7 +23,9 @@ async function readSetup(path: string): Promise<Setup> {
   try {
     value = JSON.parse(text);
   } catch (error) {
-    throw new SetupError(`The set-up file ${path} is not JSON: ${error instanceof Error ? error.message : error}.`);
+    throw new SetupError(
+      `The set-up file ${path} is not JSON: ${error instanceof Error ? error.message : error}.`,
+    );
   }
   return parseSetup(value);
 }

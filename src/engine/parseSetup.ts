@@ -99,6 +99,9 @@ function lineOf(issue: Issue): string {
     if (!next) break;
     deepest = next;
   }
+  if (deepest.message.startsWith('Invalid key: Expected never')) {
+    return `there is no key "${place.join('.')}"; see src/engine/setup.schema.json for those there are`;
+  }
   const where = place.length > 0 ? `"${place.join('.')}": ` : '';
   return `${where}${deepest.message.replaceAll('\n', ' ')}`;
 }
