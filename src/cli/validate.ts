@@ -2,7 +2,7 @@
 import { writeFileSync } from 'node:fs';
 import { parseValidateOptions, USAGE, type ValidateOptions } from './validate/options.ts';
 import { loadEstimator, type SceneReading, type SceneTask } from './validate/readScene.ts';
-import { type FilmKind, type ReportLine, table, verdict } from './validate/report.ts';
+import { type FilmKind, markdownTable, type ReportLine, table, verdict } from './validate/report.ts';
 import { runTasks } from './validate/runTasks.ts';
 import { summariseErrors } from './validate/statistics.ts';
 
@@ -69,6 +69,17 @@ function drawLine(reading: SceneReading): ReportLine {
   };
 }
 
+/** What is held against the aims: all scenes of a kind together, and oil without the slanted view. */
+const GROUPS: readonly (readonly [string, FilmKind, (reading: SceneReading) => boolean])[] = [
+  ['Soap film', 'soap', (reading) => reading.filmKind === 'soap'],
+  ['Oil on water', 'oil', (reading) => reading.filmKind === 'oil'],
+  [
+    'Oil on water at one angle',
+    'oil',
+    (reading) => reading.filmKind === 'oil' && reading.task.scene !== 'oil-harbour',
+  ],
+];
+
 function print(readings: readonly SceneReading[], options: ValidateOptions): void {
   for (const conditions of options.conditions) {
     const under = readings.filter((reading) => reading.task.conditions === conditions);
@@ -79,15 +90,14 @@ function print(readings: readonly SceneReading[], options: ValidateOptions): voi
       return [...linesFor(scene, ofScene), ...(options.each ? ofScene.map(drawLine) : [])];
     });
     console.log(`\nConditions: ${conditions}. ${options.draws} draws a scene from seed ${options.seed}.\n`);
-    console.log(table(lines));
+    console.log(options.markdown ? markdownTable(lines) : table(lines));
     console.log();
-    for (const kind of ['soap', 'oil'] as const satisfies readonly FilmKind[]) {
-      const ofKind = under.filter((reading) => reading.filmKind === kind);
-      if (ofKind.length > 0) {
-        console.log(verdict(kind, summariseErrors(ofKind.map((reading) => reading.raw))));
-        console.log(
-          `  index error divided out. ${verdict(kind, summariseErrors(ofKind.map((reading) => reading.indexDivided)))}`,
-        );
+    for (const [name, kind, belongs] of GROUPS) {
+      const group = under.filter(belongs);
+      if (group.length > 0) {
+        const divided = summariseErrors(group.map((reading) => reading.indexDivided));
+        console.log(verdict(name, kind, summariseErrors(group.map((reading) => reading.raw))));
+        console.log(verdict(`${name}, index error divided out`, kind, divided));
       }
     }
   }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { parseValidateOptions } from '../../src/cli/validate/options.ts';
 import { opticalPathRatio, readScene, throughJpeg } from '../../src/cli/validate/readScene.ts';
-import { cells, table, verdict } from '../../src/cli/validate/report.ts';
+import { cells, markdownTable, table, verdict } from '../../src/cli/validate/report.ts';
 import { summariseErrors } from '../../src/cli/validate/statistics.ts';
 import type { EstimateResult } from '../../src/engine/contract.ts';
 import { PIXEL_STATUS } from '../../src/match/types.ts';
@@ -87,7 +87,7 @@ describe('reading a scene for the validation', () => {
 
 describe('the command line of the validation', () => {
   it('reads options and has defaults', () => {
-    expect(parseValidateOptions([])).toMatchObject({ seed: 1, draws: 4, width: 640, height: 480 });
+    expect(parseValidateOptions([])).toMatchObject({ seed: 1, draws: 3, width: 640, height: 480 });
     expect(
       parseValidateOptions([
         '--scene',
@@ -124,13 +124,16 @@ describe('the printed report', () => {
 
   it('says none where a quantile has no answer', () => {
     expect(cells(figures)).toEqual(['1.2 nm', 'none', '0.21 %', '89.7 %', '10.10 %', '12,345']);
+    expect(markdownTable([{ label: '  a scene', figures, note: '' }]).split('\n')[2]).toBe(
+      '| a scene | 1.2 nm | none | 0.21 % | 89.7 % | 10.10 % | 12,345 |',
+    );
     const [heading, line] = table([{ label: 'a scene', figures, note: 'a note' }]).split('\n');
     expect(heading).toContain('90 % holds');
     expect(line).toMatch(/^a scene .*none.*a note$/);
   });
 
   it('says which aims are met and which are missed', () => {
-    const text = verdict('oil', figures);
+    const text = verdict('Oil', 'oil', figures);
     expect(text).toContain('median 1.2 nm (aim 3 nm) met');
     expect(text).toContain('90th percentile none (aim 8 nm) MISSED');
     expect(text).toContain('0.21 % (aim 0.3 %) met');

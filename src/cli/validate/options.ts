@@ -12,18 +12,20 @@ export interface ValidateOptions {
   readonly processes: number;
   readonly json: string | null;
   readonly each: boolean;
+  readonly markdown: boolean;
 }
 
 export const USAGE = `Usage: npm run validate -- [--seed N] [--draws N] [--scene NAME]... [--conditions NAME]...
-  [--size WIDTHxHEIGHT] [--processes N] [--each] [--json FILE]
+  [--size WIDTHxHEIGHT] [--processes N] [--each] [--markdown] [--json FILE]
 Renders scenes of known thickness through cameras drawn at random, reads them and prints how far off the reading is.
   --seed        first draw's number, default 1
-  --draws       draws a scene, default 4
+  --draws       draws a scene, default 3
   --scene       ${SCENE_NAMES.join(', ')}; default all
   --conditions  ${Object.keys(CONDITIONS).join(', ')}; default stated
   --size        default 640x480
   --processes   default 2
   --each        also a line for every draw
+  --markdown    the table as Markdown, for the README
   --json        write every figure, with what was drawn, to FILE`;
 
 function oneOf<T extends string>(given: string, known: readonly T[], what: string): T {
@@ -48,12 +50,13 @@ export function parseValidateOptions(argv: readonly string[]): ValidateOptions {
     args: [...argv],
     options: {
       seed: { type: 'string', default: '1' },
-      draws: { type: 'string', default: '4' },
+      draws: { type: 'string', default: '3' },
       scene: { type: 'string', multiple: true },
       conditions: { type: 'string', multiple: true },
       size: { type: 'string', default: '640x480' },
       processes: { type: 'string', default: '2' },
       each: { type: 'boolean', default: false },
+      markdown: { type: 'boolean', default: false },
       json: { type: 'string' },
     },
   });
@@ -73,5 +76,6 @@ export function parseValidateOptions(argv: readonly string[]): ValidateOptions {
     processes: wholeNumber(values.processes, '--processes', 1),
     json: values.json ?? null,
     each: values.each,
+    markdown: values.markdown,
   };
 }

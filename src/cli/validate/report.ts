@@ -47,22 +47,25 @@ export function table(lines: readonly ReportLine[]): string {
     ...lines.map((line) => [line.label, ...cells(line.figures), line.note]),
   ];
   const widths = rows[0]!.map((_, column) => Math.max(...rows.map((row) => row[column]!.length)));
-  return rows
-    .map((row) =>
-      row
-        .map((cell, column) =>
-          column === 0 || column === row.length - 1
-            ? cell.padEnd(widths[column]!)
-            : cell.padStart(widths[column]!),
-        )
-        .join('  ')
-        .trimEnd(),
-    )
-    .join('\n');
+  const pad = (cell: string, column: number) =>
+    column === 0 || column === widths.length - 1
+      ? cell.padEnd(widths[column]!)
+      : cell.padStart(widths[column]!);
+  return rows.map((row) => row.map(pad).join('  ').trimEnd()).join('\n');
 }
 
-/** One sentence that holds pooled figures against the aims. */
-export function verdict(kind: FilmKind, figures: ErrorStatistics): string {
+/** The same as a Markdown table, without the notes. */
+export function markdownTable(lines: readonly ReportLine[]): string {
+  const rows = [
+    ['scene', ...COLUMNS],
+    ['---', ...COLUMNS.map(() => '--:')],
+    ...lines.map((line) => [line.label.trim(), ...cells(line.figures)]),
+  ];
+  return rows.map((row) => `| ${row.join(' | ')} |`).join('\n');
+}
+
+/** One sentence that holds pooled figures against the aims for a kind of film. */
+export function verdict(name: string, kind: FilmKind, figures: ErrorStatistics): string {
   const aim = AIMS[kind];
   const checks: [string, boolean][] = [
     [`median ${nm(figures.medianNm)} (aim ${aim.medianNm} nm)`, figures.medianNm <= aim.medianNm],
@@ -76,6 +79,5 @@ export function verdict(kind: FilmKind, figures: ErrorStatistics): string {
       figures.coverage >= aim.coverage[0] && figures.coverage <= aim.coverage[1],
     ],
   ];
-  const name = kind === 'soap' ? 'Soap film' : 'Oil on water';
   return `${name}: ${checks.map(([text, met]) => `${text} ${met ? 'met' : 'MISSED'}`).join('; ')}.`;
 }
