@@ -8,13 +8,14 @@ import {
   type SettledField,
 } from '../match/mapPixels.ts';
 import { mendSpeckles } from '../match/mendSpeckles.ts';
-import { makePixelReader, type PixelReader } from '../match/pixelReader.ts';
+import { makePixelReader } from '../match/pixelReader.ts';
 import { resolveOrders } from '../match/resolveOrders.ts';
 import { smoothRows } from '../match/smoothRows.ts';
 import type { ThicknessMap } from '../match/types.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import { type Calibration, calibrate, type OnStep } from './calibrate.ts';
 import type { EstimateResult } from './contract.ts';
+import type { BandTask } from './jobs.ts';
 import { leftOutOf } from './leftOut.ts';
 import { heedPins } from './pins.ts';
 import type { Setup } from './setup.ts';
@@ -51,19 +52,19 @@ export function settle(
   return { width: field.width, height: field.height, spacing: field.spacing, thicknessNm, margin };
 }
 
-/** Reads the rows of the full map, smooths and finishes them. */
-export function readRows(
-  pixels: PhotoPixels,
-  reader: PixelReader,
-  calibration: Calibration,
-  leftOut: Uint8Array,
-  settled: SettledField,
-  rows: MapRows,
-): void {
-  mapRows(pixels, reader, calibration.rules, leftOut, settled, rows);
+/** Reach of the smoothing for a photo of this size. */
+export function smoothingReach(width: number, height: number): 1 | 2 {
+  return width * height < WIDE_SMOOTHING_BELOW ? 2 : 1;
+}
+
+/** Reads a band of the full map, mends, smooths and finishes it. */
+export function readBand(task: BandTask): MapRows {
+  const { pixels, charts, rules } = task;
+  const rows = makeMapRows(pixels.width, 0, pixels.height);
+  mapRows(pixels, makePixelReader(pixels, charts), rules, task.leftOut, task.settled, rows);
   mendSpeckles(rows, pixels.width);
-  const reach = pixels.width * pixels.height < WIDE_SMOOTHING_BELOW ? 2 : 1;
-  finishRows(rows, calibration.charts[0]!, calibration.rules, smoothRows(rows, pixels.width, reach));
+  finishRows(rows, charts[0]!, rules, smoothRows(rows, pixels.width, task.reach));
+  return rows;
 }
 
 /** Milliseconds since any fixed moment; injected, because the pure code has no clock. */
@@ -91,9 +92,10 @@ export function estimate(
   const settled = settle(field, setup, calibration, (share) => onStep(0.5 + 0.2 * share, 'settling orders'));
   const ordered = clock();
   onStep(0.7, 'reading every pixel');
-  const rows = makeMapRows(pixels.width, 0, pixels.height);
-  readRows(pixels, reader, calibration, leftOut, settled, rows);
-  const map: ThicknessMap = { width: pixels.width, height: pixels.height, ...rowsOf(rows) };
+  const { charts, rules } = calibration;
+  const reach = smoothingReach(pixels.width, pixels.height);
+  const rows = readBand({ pixels, charts, rules, leftOut, settled, reach });
+  const map = joinBands(pixels.width, pixels.height, [rows]);
   const mapped = clock();
   const timingsMs = {
     calibrate: fitted - started,
@@ -105,7 +107,31 @@ export function estimate(
   return { map, summary: summarise(map, calibration, timingsMs) };
 }
 
-function rowsOf(rows: MapRows): Omit<ThicknessMap, 'width' | 'height'> {
-  const { thicknessNm, lowNm, highNm, order, status } = rows;
-  return { thicknessNm, lowNm, highNm, order, status };
+/** Puts bands, top to bottom, together into one map. A single band's arrays are used as they are. */
+export function joinBands(width: number, height: number, bands: readonly MapRows[]): ThicknessMap {
+  const first = bands[0];
+  if (bands.length === 1 && first) {
+    const { thicknessNm, lowNm, highNm, order, status } = first;
+    return { width, height, thicknessNm, lowNm, highNm, order, status };
+  }
+  const size = width * height;
+  const map = {
+    width,
+    height,
+    thicknessNm: new Float32Array(size),
+    lowNm: new Float32Array(size),
+    highNm: new Float32Array(size),
+    order: new Uint8Array(size),
+    status: new Uint8Array(size),
+  };
+  let at = 0;
+  for (const band of bands) {
+    map.thicknessNm.set(band.thicknessNm, at);
+    map.lowNm.set(band.lowNm, at);
+    map.highNm.set(band.highNm, at);
+    map.order.set(band.order, at);
+    map.status.set(band.status, at);
+    at += band.status.length;
+  }
+  return map;
 }

@@ -1,0 +1,42 @@
+/** The methods of the two kinds of worker, as types: what goes in, what comes out. */
+import type { CodeChart } from '../match/codeChart.ts';
+import type { MapRows, ReadingRules, SettledField } from '../match/mapPixels.ts';
+import type { PhotoPixels } from '../photo/types.ts';
+import type { ChartView, EstimateResult, OpenedPhoto, Probe } from './contract.ts';
+import type { Setup } from './setup.ts';
+
+/** Pixels as they cross between threads: functions cannot, so the encoding stays behind (rows need none). */
+export type RowPixels = Omit<PhotoPixels, 'encoding'>;
+
+/** A band of the photo with all that reading it needs, self-contained: row 0 is the band's first row. */
+export interface BandTask {
+  readonly pixels: RowPixels;
+  readonly charts: readonly CodeChart[];
+  readonly rules: ReadingRules;
+  readonly leftOut: Uint8Array;
+  readonly settled: SettledField;
+  readonly reach: 1 | 2;
+}
+
+export interface BandJobs {
+  readBand: { readonly in: BandTask; readonly out: MapRows };
+}
+
+export interface LeadJobs {
+  openPhoto: {
+    readonly in: { readonly file: unknown; readonly fileName: string };
+    readonly out: OpenedPhoto;
+  };
+  /** Calibrates and settles orders; answers with the bands that other workers are to read. */
+  prepare: { readonly in: { readonly setup: Setup; readonly bands: number }; readonly out: PreparedMap };
+  /** Reads the band that the lead keeps for itself. */
+  readOwn: { readonly in: null; readonly out: null };
+  finish: { readonly in: { readonly bands: readonly MapRows[] }; readonly out: EstimateResult };
+  probe: { readonly in: { readonly x: number; readonly y: number }; readonly out: Probe | null };
+  chart: { readonly in: { readonly setup: Setup; readonly maxThicknessNm: number }; readonly out: ChartView };
+}
+
+export interface PreparedMap {
+  /** Top to bottom, below the band that the lead keeps. */
+  readonly others: readonly BandTask[];
+}

@@ -1,0 +1,132 @@
+/** Holds the open photo; calibrates, settles orders, answers probes. */
+
+import { type ActivityMap, activityMap } from '../match/activity.ts';
+import { fillCandidates, type MapRows, type SettledField } from '../match/mapPixels.ts';
+import { makePixelReader, type PixelReader } from '../match/pixelReader.ts';
+import { decodePhoto } from '../photo/decode.browser.ts';
+import type { DecodedPhoto } from '../photo/types.ts';
+import { type Band, bandsOf, bandTask } from './bands.ts';
+import { type Calibration, calibrate } from './calibrate.ts';
+import { chartFor } from './chartFor.ts';
+import { emptyField, joinBands, readBand, settle } from './estimate.ts';
+import type { BandTask, LeadJobs } from './jobs.ts';
+import { leftOutOf } from './leftOut.ts';
+import { probePixel } from './probe.ts';
+import { buffersIn, serve } from './serve.worker.ts';
+import { summarise } from './summarise.ts';
+
+interface Measured {
+  readonly calibration: Calibration;
+  readonly reader: PixelReader;
+  readonly settled: SettledField;
+  readonly bands: readonly Band[];
+  readonly activity: ActivityMap;
+  readonly own: BandTask;
+  ownRows: MapRows | null;
+  readonly startedAt: number;
+  readonly timingsMs: Record<string, number>;
+}
+
+let photo: DecodedPhoto | null = null;
+let measured: Measured | null = null;
+
+function openPixels(): DecodedPhoto['pixels'] {
+  if (!photo) throw new Error('Open a photo first.');
+  return photo.pixels;
+}
+
+/** Drops the rows that a band read only for its neighbours' sake. */
+function cut(rows: MapRows, band: Band, width: number): MapRows {
+  const from = band.lead * width;
+  if (from === 0) return rows;
+  return {
+    fromRow: band.fromRow,
+    toRow: band.toRow,
+    thicknessNm: rows.thicknessNm.subarray(from),
+    lowNm: rows.lowNm.subarray(from),
+    highNm: rows.highNm.subarray(from),
+    order: rows.order.subarray(from),
+    status: rows.status.subarray(from),
+  };
+}
+
+serve<LeadJobs>(
+  {
+    openPhoto: async ({ file, fileName }, onProgress) => {
+      measured = null;
+      photo = await decodePhoto(file as Blob, fileName, { onProgress });
+      const { pixels, metadata, scale, notices } = photo;
+      return { width: pixels.width, height: pixels.height, scale, metadata, notices };
+    },
+    prepare: ({ setup, bands: wanted }, onProgress) => {
+      const pixels = openPixels();
+      const startedAt = performance.now();
+      const leftOut = leftOutOf(pixels, setup);
+      const calibration = calibrate(pixels, setup, leftOut, (share, step) => onProgress(share * 0.45, step));
+      const calibrated = performance.now();
+      onProgress(0.45, 'matching colours');
+      const reader = makePixelReader(pixels, calibration.charts);
+      const field = emptyField(pixels);
+      fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
+      const matched = performance.now();
+      const settled = settle(field, setup, calibration, (share) =>
+        onProgress(0.55 + 0.15 * share, 'settling orders'),
+      );
+      const ordered = performance.now();
+      const bands = bandsOf(pixels.height, settled.spacing, wanted);
+      const tasks = bands.map((band) => bandTask(pixels, calibration, leftOut, settled, band));
+      const timingsMs = {
+        calibrate: calibrated - startedAt,
+        match: matched - calibrated,
+        orders: ordered - matched,
+      };
+      measured = {
+        calibration,
+        reader,
+        settled,
+        bands,
+        activity: activityMap(pixels),
+        own: tasks[0]!,
+        ownRows: null,
+        startedAt,
+        timingsMs,
+      };
+      // Charts are needed here too; the rest of a task is a copy already.
+      return { others: tasks.slice(1).map((task) => ({ ...task, charts: structuredClone(task.charts) })) };
+    },
+    readOwn: (_, onProgress) => {
+      if (!measured) throw new Error('Prepare the map first.');
+      onProgress(0.75, 'reading every pixel');
+      measured.ownRows = readBand(measured.own);
+      return null;
+    },
+    finish: ({ bands: others }) => {
+      const pixels = openPixels();
+      if (!measured?.ownRows) throw new Error('Read the map first.');
+      const { calibration, bands, startedAt, timingsMs } = measured;
+      const all = [measured.ownRows, ...others].map((rows, k) => cut(rows, bands[k]!, pixels.width));
+      measured.ownRows = null;
+      const map = joinBands(pixels.width, pixels.height, all);
+      return {
+        map,
+        summary: summarise(map, calibration, { ...timingsMs, total: performance.now() - startedAt }),
+      };
+    },
+    probe: ({ x, y }) => {
+      if (!photo || !measured) return null;
+      const { calibration, reader, activity, settled } = measured;
+      const found = probePixel(photo.pixels, calibration, reader, activity, settled, x, y);
+      return (
+        found && {
+          ...found,
+          status: 0,
+          mapThicknessNm: Number.NaN,
+          mapLowNm: Number.NaN,
+          mapHighNm: Number.NaN,
+        }
+      );
+    },
+    chart: ({ setup, maxThicknessNm }) => chartFor(setup, maxThicknessNm),
+  },
+  buffersIn,
+);
