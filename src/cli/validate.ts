@@ -5,6 +5,7 @@ import { loadEstimator, type SceneReading, type SceneTask } from './validate/rea
 import { type FilmKind, markdownTable, type ReportLine, table, verdict } from './validate/report.ts';
 import { runTasks } from './validate/runTasks.ts';
 import { summariseErrors } from './validate/statistics.ts';
+import { STEP_NM, STEP_REACH_PX } from './validate/steps.ts';
 
 function percent(part: number, whole: number): string {
   return whole > 0 ? `${((100 * part) / whole).toFixed(1)} %` : '-';
@@ -18,11 +19,19 @@ function sum(readings: readonly SceneReading[], pick: (reading: SceneReading) =>
 function linesFor(label: string, readings: readonly SceneReading[]): ReportLine[] {
   const seconds = sum(readings, (reading) => reading.estimateMs) / readings.length / 1000;
   const figures = summariseErrors(readings.map((reading) => reading.raw));
-  const steep = percent(
-    sum(readings, (reading) => reading.steepPixels),
+  const nearStep = percent(
+    sum(readings, (reading) => reading.nearStepPixels),
     figures.filmPixels,
   );
-  const notes = [`${seconds.toFixed(1)} s a photo`, `steep ${steep}`];
+  const notes = [`${seconds.toFixed(1)} s a photo`, `${nearStep} near steps`];
+  const farOff = sum(readings, (reading) => reading.farOffPixels);
+  if (farOff > 0) {
+    const atSteps = percent(
+      sum(readings, (reading) => reading.farOffNearStep),
+      farOff,
+    );
+    notes.push(`with ${atSteps} of those > 50 nm`);
+  }
   const bare = sum(readings, (reading) => reading.barePixels);
   if (bare > 0) {
     notes.push(
@@ -103,8 +112,8 @@ function print(readings: readonly SceneReading[], options: ValidateOptions): voi
   }
   console.log(
     '\nAll film pixels in the marked region are counted; a pixel without an answer counts as infinitely far off in the' +
-      '\nmedian and the 90th percentile, and is not counted as off by more than 50 nm. "Steep" pixels differ by more than' +
-      '\n60 nm from a neighbour, which a photo of this size hardly shows; they are counted like all others.',
+      '\nmedian and the 90th percentile, and is not counted as off by more than 50 nm. Pixels near steps lie within' +
+      `\n${STEP_REACH_PX} pixels of a jump of more than ${STEP_NM} nm, finer than the colour of a JPEG; they are counted like all others.`,
   );
 }
 

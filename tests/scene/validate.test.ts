@@ -3,6 +3,7 @@ import { parseValidateOptions } from '../../src/cli/validate/options.ts';
 import { opticalPathRatio, readScene, throughJpeg } from '../../src/cli/validate/readScene.ts';
 import { cells, markdownTable, table, verdict } from '../../src/cli/validate/report.ts';
 import { summariseErrors } from '../../src/cli/validate/statistics.ts';
+import { nearSteps } from '../../src/cli/validate/steps.ts';
 import type { EstimateResult } from '../../src/engine/contract.ts';
 import { PIXEL_STATUS } from '../../src/match/types.ts';
 import { SCENES } from '../../src/scene/catalogue.ts';
@@ -82,6 +83,20 @@ describe('reading a scene for the validation', () => {
     const inside = (n: number) => n * Math.cos(Math.asin(Math.sin(0.6) / n));
     const slanted = { ...straight, incidenceDeg: (0.6 * 180) / Math.PI };
     expect(opticalPathRatio(slanted)).toBeCloseTo(inside(1.475) / inside(1.465), 12);
+  });
+});
+
+describe('steps of thickness', () => {
+  it('are marked three pixels to each side of the jump, and nowhere else', () => {
+    const row = Float32Array.of(100, 100, 100, 100, 100, 100, 140, 140, 140, 140, 140, 140);
+    expect([...nearSteps(row, 12, 1)]).toEqual([0, 0, 1, 1, 1, 1, 1, 1, 1, 1, 0, 0]);
+    // Downwards alike.
+    expect([...nearSteps(row, 1, 12)]).toEqual([0, 0, 1, 1, 1, 1, 1, 1, 1, 1, 0, 0]);
+  });
+
+  it('do not come from gentle slopes or from where there is no film', () => {
+    const slope = Float32Array.of(100, 130, 160, 190, Number.NaN, 900);
+    expect(nearSteps(slope, 6, 1).some((mark) => mark === 1)).toBe(false);
   });
 });
 

@@ -9,6 +9,7 @@ import { CONDITIONS, type ConditionName } from '../../scene/conditions.ts';
 import { regionMask } from '../../scene/region.ts';
 import { type DrawnConditions, type Scene, TRUE_KIND } from '../../scene/types.ts';
 import { type ErrorSample, sampleErrors } from './statistics.ts';
+import { nearSteps } from './steps.ts';
 
 /** One photo to render, read and compare. */
 export interface SceneTask {
@@ -32,8 +33,10 @@ export interface SceneReading {
   /** Pixels of other things, and the share of them that got a thickness all the same. */
   readonly otherPixels: number;
   readonly otherGivenThickness: number;
-  /** Film pixels whose thickness differs by more than 60 nm from a neighbour's: finer than a photo can show. */
-  readonly steepPixels: number;
+  /** Film pixels near a step of thickness (`nearSteps`), those off by more than 50 nm, and those that are both. */
+  readonly nearStepPixels: number;
+  readonly farOffPixels: number;
+  readonly farOffNearStep: number;
   readonly drawn: DrawnConditions;
   readonly setup: Setup;
   readonly fit: EstimateResult['summary']['fit'];
@@ -73,28 +76,6 @@ export function opticalPathRatio(drawn: DrawnConditions): number {
   return Math.sqrt(((drawn.presetIndex + drawn.indexError) ** 2 - sine2) / (drawn.presetIndex ** 2 - sine2));
 }
 
-const STEEP_NM = 60;
-
-/** Film pixels next to a thickness (film's or bare water's) that is more than `STEEP_NM` away. */
-function countSteep({ width, height, thicknessNm }: Scene, isFilm: Uint8Array): number {
-  let steep = 0;
-  for (let i = 0; i < isFilm.length; i++) {
-    if (isFilm[i] !== 1) {
-      continue;
-    }
-    const column = i % width;
-    const nm = thicknessNm[i]!;
-    steep +=
-      (column > 0 && Math.abs(thicknessNm[i - 1]! - nm) > STEEP_NM) ||
-      (column < width - 1 && Math.abs(thicknessNm[i + 1]! - nm) > STEEP_NM) ||
-      (i >= width && Math.abs(thicknessNm[i - width]! - nm) > STEEP_NM) ||
-      (i < width * (height - 1) && Math.abs(thicknessNm[i + width]! - nm) > STEEP_NM)
-        ? 1
-        : 0;
-  }
-  return steep;
-}
-
 /** Renders, compresses and reads one scene, and compares with the truth. */
 export async function readScene(task: SceneTask, estimate: Estimator): Promise<SceneReading> {
   const scene: Scene = SCENES[task.scene]({
@@ -112,7 +93,8 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
 
   const inRegion = regionMask(scene.setup.region, width, height);
   const isFilm = new Uint8Array(width * height);
-  const counts = { bare: 0, bareHeld: 0, other: 0, otherGiven: 0 };
+  const nearStep = nearSteps(scene.thicknessNm, width, height);
+  const counts = { bare: 0, bareHeld: 0, other: 0, otherGiven: 0, nearStep: 0, farOff: 0, farOffNearStep: 0 };
   for (let i = 0; i < isFilm.length; i++) {
     if (inRegion[i] !== 1) {
       continue;
@@ -121,6 +103,11 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
     switch (scene.kind[i]) {
       case TRUE_KIND.film:
         isFilm[i] = 1;
+        counts.nearStep += nearStep[i]!;
+        if (Math.abs(nm - scene.thicknessNm[i]!) > 50) {
+          counts.farOff++;
+          counts.farOffNearStep += nearStep[i]!;
+        }
         break;
       case TRUE_KIND.bare:
         counts.bare++;
@@ -147,7 +134,9 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
     bareHeld: counts.bareHeld,
     otherPixels: counts.other,
     otherGivenThickness: counts.otherGiven,
-    steepPixels: countSteep(scene, isFilm),
+    nearStepPixels: counts.nearStep,
+    farOffPixels: counts.farOff,
+    farOffNearStep: counts.farOffNearStep,
     drawn: scene.drawn,
     setup: scene.setup,
     fit: summary.fit,
