@@ -39,7 +39,7 @@ export interface FilmChartFigures {
 /** The brightest film is shown at this luminance: as a photo is exposed for the film, not for white paper. */
 const BRIGHTEST_Y = 0.8;
 /** Stated noise of an eye or a phone on one patch, CIEDE2000, and the interval width that counts as resolved. */
-export const STATED_NOISE_DELTA_E = 1;
+export const STATED_NOISE_DELTA_E = 2;
 export const STATED_WIDTH_NM = 60;
 const COVER_90 = 1.6449;
 const LOOK_ALIKE_DELTA_E = 4;
