@@ -1,6 +1,7 @@
 import { orderBoundaries, orderOf } from '../chart/orders.ts';
 import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
+import type { ActivityMap } from '../match/activity.ts';
 import { buildCodeChart } from '../match/buildCodeChart.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
@@ -63,12 +64,14 @@ export type OnStep = (share: number, step: string) => void;
 /**
  * Works out the chart for this photo: references, camera fit, orders, resolvable range.
  * @param leftOut pixels that take no part, one byte each; null for none
+ * @param activity of the photo's blocks, see `activityMap`
  * @throws SetupError, PhotoError with a sentence that says what to do
  */
 export function calibrate(
   pixels: PhotoPixels,
   setup: Setup,
   leftOut: Uint8Array | null,
+  activity: ActivityMap,
   onStep: OnStep = () => {},
 ): Calibration {
   const { scene, light } = prepareScene(setup);
@@ -106,6 +109,7 @@ export function calibrate(
     const rough = chartsFor(coarse, outcome.fit);
     const allowed = settledRanges(
       pixels,
+      activity,
       sample,
       rough,
       rulesFor(setup, scene, Number.POSITIVE_INFINITY),

@@ -1,3 +1,4 @@
+import { activityMap } from '../match/activity.ts';
 import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
 import {
   fillCandidates,
@@ -57,13 +58,16 @@ export function smoothingReach(width: number, height: number): 1 | 2 {
   return width * height < WIDE_SMOOTHING_BELOW ? 2 : 1;
 }
 
-/** Reads a band of the full map, mends, smooths and finishes it. */
-export function readBand(task: BandTask): MapRows {
+/** Reads a band of the full map, mends, smooths and finishes it. A reader that has met the photo's colours is quicker. */
+export function readBand(
+  task: BandTask,
+  reader = makePixelReader(task.pixels, activityMap(task.pixels), task.charts),
+): MapRows {
   const { pixels, charts, rules } = task;
   const rows = makeMapRows(pixels.width, 0, pixels.height);
-  mapRows(pixels, makePixelReader(pixels, charts), rules, task.leftOut, task.settled, rows);
+  mapRows(pixels, reader, rules, task.leftOut, task.settled, rows);
   mendSpeckles(rows, pixels.width);
-  finishRows(rows, charts[0]!, rules, smoothRows(rows, pixels.width, task.reach));
+  finishRows(rows, charts[0]!, rules, smoothRows(rows, pixels.width, task.reach, rules.bareNm));
   return rows;
 }
 
@@ -82,9 +86,10 @@ export function estimate(
 ): EstimateResult {
   const started = clock();
   const leftOut = leftOutOf(pixels, setup);
-  const calibration = calibrate(pixels, setup, leftOut, (share, step) => onStep(share * 0.4, step));
+  const activity = activityMap(pixels);
+  const calibration = calibrate(pixels, setup, leftOut, activity, (share, step) => onStep(share * 0.4, step));
   const fitted = clock();
-  const reader = makePixelReader(pixels, calibration.charts);
+  const reader = makePixelReader(pixels, activity, calibration.charts);
   const field = emptyField(pixels);
   onStep(0.4, 'matching colours');
   fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
@@ -94,7 +99,7 @@ export function estimate(
   onStep(0.7, 'reading every pixel');
   const { charts, rules } = calibration;
   const reach = smoothingReach(pixels.width, pixels.height);
-  const rows = readBand({ pixels, charts, rules, leftOut, settled, reach });
+  const rows = readBand({ pixels, charts, rules, leftOut, settled, reach }, reader);
   const map = joinBands(pixels.width, pixels.height, [rows]);
   const mapped = clock();
   const timingsMs = {

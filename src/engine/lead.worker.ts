@@ -62,10 +62,13 @@ serve<LeadJobs>(
       const pixels = openPixels();
       const startedAt = performance.now();
       const leftOut = leftOutOf(pixels, setup);
-      const calibration = calibrate(pixels, setup, leftOut, (share, step) => onProgress(share * 0.45, step));
+      const activity = activityMap(pixels);
+      const calibration = calibrate(pixels, setup, leftOut, activity, (share, step) =>
+        onProgress(share * 0.45, step),
+      );
       const calibrated = performance.now();
       onProgress(0.45, 'matching colours');
-      const reader = makePixelReader(pixels, calibration.charts);
+      const reader = makePixelReader(pixels, activity, calibration.charts);
       const field = emptyField(pixels);
       fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
       const matched = performance.now();
@@ -85,7 +88,7 @@ serve<LeadJobs>(
         reader,
         settled,
         bands,
-        activity: activityMap(pixels),
+        activity,
         own: tasks[0]!,
         ownRows: null,
         startedAt,

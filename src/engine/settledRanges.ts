@@ -17,6 +17,7 @@ const FREEDOM_NM = 70;
  */
 export function settledRanges(
   pixels: PhotoPixels,
+  activity: ActivityMap,
   sample: FilmSample,
   charts: readonly CodeChart[],
   rules: ReadingRules,
@@ -28,7 +29,7 @@ export function settledRanges(
     Math.ceil(pixels.height / spacing),
     spacing,
   );
-  fillCandidates(pixels, makePixelReader(pixels, charts), rules, leftOut, field, 0, field.height);
+  fillCandidates(pixels, makePixelReader(pixels, activity, charts), rules, leftOut, field, 0, field.height);
   const { choice } = resolveOrders(field);
   const labels = charts[0]!.count;
   const stepNm = charts[0]!.thicknessNm[1]!;

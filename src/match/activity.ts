@@ -15,7 +15,7 @@ export interface ActivityMap {
 }
 
 /** Judges each block by the largest change seen at every second pixel; next to a lively block nothing is calm. */
-export function activityMap(pixels: PhotoPixels): ActivityMap {
+export function activityMap(pixels: Omit<PhotoPixels, 'encoding'>): ActivityMap {
   const { width, height, codes, channels, maxCode } = pixels;
   const columns = Math.ceil(width / BLOCK_SIDE);
   const rows = Math.ceil(height / BLOCK_SIDE);

@@ -4,7 +4,7 @@ import type { CodeChart } from './codeChart.ts';
 import type { PixelReader } from './pixelReader.ts';
 import { MODE_FIELDS } from './posterior.ts';
 import { STATED_SMOOTHNESS } from './resolveOrders.ts';
-import { PIXEL_STATUS } from './types.ts';
+import { PIXEL_STATUS, type PixelStatus } from './types.ts';
 
 /** What is decided about pixels beyond their colour. */
 export interface ReadingRules {
@@ -28,7 +28,7 @@ export type LeftOut = Uint8Array | null;
 
 /** Fills rows [fromRow, toRow) of a candidate field from the photo. */
 export function fillCandidates(
-  pixels: PhotoPixels,
+  pixels: Omit<PhotoPixels, 'encoding'>,
   reader: PixelReader,
   rules: ReadingRules,
   leftOut: LeftOut,
@@ -63,7 +63,7 @@ export function fillCandidates(
   }
 }
 
-/** The rows of a thickness map, before neighbours smooth them. */
+/** The rows of a thickness map; `mapRows` fills every place. */
 export interface MapRows {
   readonly fromRow: number;
   readonly toRow: number;
@@ -79,10 +79,10 @@ export function makeMapRows(width: number, fromRow: number, toRow: number): MapR
   return {
     fromRow,
     toRow,
-    thicknessNm: new Float32Array(size).fill(Number.NaN),
-    lowNm: new Float32Array(size).fill(Number.NaN),
-    highNm: new Float32Array(size).fill(Number.NaN),
-    order: new Uint8Array(size).fill(255),
+    thicknessNm: new Float32Array(size),
+    lowNm: new Float32Array(size),
+    highNm: new Float32Array(size),
+    order: new Uint8Array(size),
     status: new Uint8Array(size),
   };
 }
@@ -100,7 +100,7 @@ export interface SettledField {
  * Reads every pixel of the rows: of its colour's modes the one that agrees best with the settled field around it.
  */
 export function mapRows(
-  pixels: PhotoPixels,
+  pixels: Omit<PhotoPixels, 'encoding'>,
   reader: PixelReader,
   rules: ReadingRules,
   leftOut: LeftOut,
@@ -114,13 +114,13 @@ export function mapRows(
       const pixel = y * width + x;
       const out = (y - rows.fromRow) * width + x;
       if (leftOut?.[pixel]) {
-        rows.status[out] = leftOut[pixel]! === 1 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour;
+        noAnswer(rows, out, leftOut[pixel]! === 1 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour);
         continue;
       }
       const offset = reader.lookUp(x, y);
       const records = reader.records;
       if (records[offset + 1]! > rules.outlierDistance || records[offset] === 0) {
-        rows.status[out] = PIXEL_STATUS.noFilmColour;
+        noAnswer(rows, out, PIXEL_STATUS.noFilmColour);
         continue;
       }
       const count = records[offset]!;
@@ -144,6 +144,14 @@ export function mapRows(
         count > 1 && margin < rules.ambiguityMargin ? PIXEL_STATUS.ambiguous : PIXEL_STATUS.measured;
     }
   }
+}
+
+function noAnswer(rows: MapRows, at: number, status: PixelStatus): void {
+  rows.status[at] = status;
+  rows.thicknessNm[at] = Number.NaN;
+  rows.lowNm[at] = Number.NaN;
+  rows.highNm[at] = Number.NaN;
+  rows.order[at] = 255;
 }
 
 /** Settled thicknesses of the four places about a pixel into `out`; how many, and the least margin among them. */

@@ -1,5 +1,5 @@
 import type { PhotoPixels } from '../photo/types.ts';
-import { activityMap, BLOCK_SIDE } from './activity.ts';
+import { type ActivityMap, BLOCK_SIDE } from './activity.ts';
 import { type CodeChart, searchable } from './codeChart.ts';
 import { type ColourTable, makeColourTable } from './colourTable.ts';
 import { posteriorReader } from './posterior.ts';
@@ -14,14 +14,18 @@ export interface PixelReader {
 }
 
 /**
- * Makes a reader; it judges the photo's activity once.
+ * Makes a reader.
+ * @param activity of the photo, judged once by `activityMap`
  * @param charts one chart for each activity class, calmest first
  */
-export function makePixelReader(pixels: PhotoPixels, charts: readonly CodeChart[]): PixelReader {
+export function makePixelReader(
+  pixels: Omit<PhotoPixels, 'encoding'>,
+  activity: ActivityMap,
+  charts: readonly CodeChart[],
+): PixelReader {
   const { codes, channels, width, maxCode } = pixels;
   const levels = maxCode === 255 ? 256 : 1024;
   const shift = maxCode === 255 ? 0 : 6;
-  const activity = activityMap(pixels);
   const tables: ColourTable[] = charts.map((chart) =>
     makeColourTable(levels, posteriorReader(searchable(chart))),
   );
