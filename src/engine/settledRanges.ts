@@ -1,3 +1,4 @@
+import type { ActivityMap } from '../match/activity.ts';
 import { MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import { fillCandidates, type ReadingRules } from '../match/mapPixels.ts';
