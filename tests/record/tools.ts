@@ -8,8 +8,7 @@ import { join } from 'node:path';
 const PACKAGES: Readonly<Record<string, string>> = {
   gdalinfo: 'gdal-bin',
   gdal_translate: 'gdal-bin',
-  gdaltransform: 'gdal-bin',
-  gdallocationinfo: 'gdal-bin',
+  ogr2ogr: 'gdal-bin',
   ogrinfo: 'gdal-bin',
   tiffinfo: 'libtiff-tools',
   tiffdump: 'libtiff-tools',
