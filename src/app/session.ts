@@ -1,0 +1,131 @@
+import { Cancelled, type Job } from '../engine/contract.ts';
+import type { Engine } from '../engine/engine.client.ts';
+import type { Setup } from '../engine/setup.ts';
+import { forgetPhoto, keepPhoto, keepSetup } from './keep.ts';
+import {
+  begin,
+  change,
+  DEFAULT_SETUP,
+  failure,
+  image,
+  probe,
+  probeAt,
+  progress,
+  result,
+  setup,
+  step,
+} from './state.ts';
+
+/** What runs between the screens and the engine: open, measure, probe, cancel. */
+let engine: Engine | null = null;
+let running: Job<unknown> | null = null;
+/** Progress is shown only for what takes longer than this, ms. */
+const SHOW_AFTER_MS = 300;
+
+/** The engine, loaded when first needed so that the first screen is light. Tests may pass their own. */
+export async function theEngine(): Promise<Engine> {
+  engine ??= (await import('../engine/createEngine.client.ts')).createEngine();
+  return engine;
+}
+
+export function useEngine(own: Engine): void {
+  engine = own;
+}
+
+/** Runs a job with progress and a way to cancel; failures become a sentence. */
+async function run<T>(
+  start: (onProgress: (share: number, step: string) => void) => Job<T>,
+  first: string,
+): Promise<T | null> {
+  failure.value = null;
+  let latest = { share: 0, step: first };
+  const show = setTimeout(() => {
+    progress.value = latest;
+  }, SHOW_AFTER_MS);
+  try {
+    const job = start((share, words) => {
+      latest = { share, step: words };
+      if (progress.value) progress.value = latest;
+    });
+    running = job;
+    return await job.promise;
+  } catch (error) {
+    if (!(error instanceof Cancelled)) failure.value = error instanceof Error ? error.message : String(error);
+    return null;
+  } finally {
+    clearTimeout(show);
+    running = null;
+    progress.value = null;
+  }
+}
+
+export function cancel(): void {
+  running?.cancel();
+}
+
+/** Opens a photo; on success the work begins at the film step with `first` as its set-up. */
+export async function openPhoto(blob: Blob, name: string, first?: Setup): Promise<boolean> {
+  const current = await theEngine();
+  const opened = await run((onProgress) => current.openPhoto(blob, name, onProgress), 'opening the photo');
+  if (!opened) return false;
+  const bitmap = await previewOf(blob);
+  image.value?.bitmap.close();
+  image.value = { blob, name, bitmap, opened };
+  probeAt.value = null;
+  begin(first ?? { ...DEFAULT_SETUP, film: setup.value.film });
+  step.value = first?.references ? 'map' : 'film';
+  void keepPhoto(blob, name);
+  keepSetup();
+  return true;
+}
+
+/** A picture for the stage, at most about 4 megapixels: enough for every screen, light on memory. */
+async function previewOf(blob: Blob): Promise<ImageBitmap> {
+  const whole = await createImageBitmap(blob);
+  const share = Math.sqrt(4_000_000 / (whole.width * whole.height));
+  if (share >= 1) return whole;
+  const small = await createImageBitmap(whole, {
+    resizeWidth: Math.round(whole.width * share),
+    resizeHeight: Math.round(whole.height * share),
+    resizeQuality: 'high',
+  });
+  whole.close();
+  return small;
+}
+
+/** Measures the open photo with the present set-up. */
+export async function measure(): Promise<void> {
+  if (!image.value) return;
+  keepSetup();
+  const current = await theEngine();
+  result.value = null;
+  probe.value = null;
+  const done = await run((onProgress) => current.estimate(setup.value, onProgress), 'starting');
+  if (!done) return;
+  result.value = done;
+  if (probeAt.value) await readAt(probeAt.value);
+}
+
+/** Reads one place of a measured photo. */
+export async function readAt(at: readonly [number, number]): Promise<void> {
+  probeAt.value = at;
+  if (!result.value) return;
+  const current = await theEngine();
+  probe.value = await current.probe(at[0], at[1]);
+}
+
+export function changeAndKeep(next: Setup): void {
+  change(next);
+  keepSetup();
+}
+
+/** Back to the start; the photo is put away. */
+export function closePhoto(): void {
+  image.value?.bitmap.close();
+  image.value = null;
+  result.value = null;
+  probe.value = null;
+  probeAt.value = null;
+  failure.value = null;
+  void forgetPhoto();
+}

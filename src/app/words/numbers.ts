@@ -1,0 +1,38 @@
+/** Numbers as a person says them: no more digits than the interval allows. */
+
+/** Step to which a thickness is rounded, from the width of its interval. */
+export function roundingStep(widthNm: number): number {
+  if (!(widthNm > 0)) return 1;
+  if (widthNm < 12) return 1;
+  if (widthNm < 60) return 5;
+  return 10;
+}
+
+/** "310", or "1,240": thickness in nanometres rounded to what its interval supports. */
+export function thicknessText(nm: number, widthNm: number): string {
+  const step = roundingStep(widthNm);
+  return (Math.round(nm / step) * step).toLocaleString('en-GB');
+}
+
+/** "295 to 330": the interval, rounded outwards. */
+export function intervalText(lowNm: number, highNm: number): string {
+  const step = roundingStep(highNm - lowNm);
+  const low = Math.max(0, Math.floor(lowNm / step + 1e-6) * step);
+  const high = Math.ceil(highNm / step - 1e-6) * step;
+  return `${low.toLocaleString('en-GB')} to ${high.toLocaleString('en-GB')}`;
+}
+
+const ORDINALS = ['', 'first', 'second', 'third', 'fourth', 'fifth', 'sixth', 'seventh', 'eighth', 'ninth'];
+
+/** "second order". */
+export function orderText(order: number): string {
+  return `${ORDINALS[order] ?? `${order}th`} order`;
+}
+
+/** "42 %", never "0 %" for something that is there. */
+export function shareText(part: number, whole: number): string {
+  if (whole <= 0) return '0 %';
+  const percent = (100 * part) / whole;
+  if (percent > 0 && percent < 1) return 'under 1 %';
+  return `${Math.round(percent)} %`;
+}

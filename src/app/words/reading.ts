@@ -1,0 +1,80 @@
+import type { EstimateSummary, Probe } from '../../engine/contract.ts';
+import { PIXEL_STATUS } from '../../match/types.ts';
+import { intervalText, orderText, shareText, thicknessText } from './numbers.ts';
+
+/** What a reading says: a big line, a quiet line, and the sentence a person would say. */
+export interface ReadingWords {
+  readonly big: string;
+  readonly quiet: string;
+  readonly sentence: string;
+}
+
+/** Share from which another order is worth naming. */
+const WORTH_NAMING = 0.05;
+
+/** Words for a probe. */
+export function readingWords(probe: Probe, resolvableToNm: number): ReadingWords {
+  if (probe.status === PIXEL_STATUS.bare) {
+    return {
+      big: 'Bare',
+      quiet: 'no film to be seen',
+      sentence: 'Bare surface here, or a film too thin to tell from it.',
+    };
+  }
+  if (probe.status === PIXEL_STATUS.atLeast) {
+    const bound = Math.floor(resolvableToNm / 50) * 50;
+    return {
+      big: `Over ${bound.toLocaleString('en-GB')} nm`,
+      quiet: 'past the end of colour',
+      sentence: `At least ${bound.toLocaleString('en-GB')} nm: thicker than its colours can tell here.`,
+    };
+  }
+  if (probe.status === PIXEL_STATUS.outside) {
+    return {
+      big: 'Outside',
+      quiet: 'not in the region',
+      sentence: 'This place lies outside the marked region.',
+    };
+  }
+  if (probe.status === PIXEL_STATUS.noFilmColour || Number.isNaN(probe.mapThicknessNm)) {
+    return {
+      big: 'No film colour',
+      quiet: 'glint, foam, hull or too bright',
+      sentence: 'The colour here is not one that this film can have.',
+    };
+  }
+  const { mapThicknessNm: d, mapLowNm: low, mapHighNm: high } = probe;
+  const chosen = nearest(probe, d);
+  const other = probe.readings.find(
+    (r) => r !== chosen && r.order !== chosen?.order && r.share >= WORTH_NAMING,
+  );
+  const order = chosen ? orderText(chosen.order) : '';
+  const unsure = probe.status === PIXEL_STATUS.ambiguous;
+  const next = other ? `; next best ${thicknessText(other.thicknessNm, other.highNm - other.lowNm)} nm` : '';
+  return {
+    big: `${thicknessText(d, high - low)} nm`,
+    quiet: `${intervalText(low, high)} nm${order ? ` · ${order}` : ''}`,
+    sentence: `${unsure ? 'Not sure: about' : 'About'} ${thicknessText(d, high - low)} nm, ${intervalText(low, high)}${order ? `; ${order}` : ''}${next}.`,
+  };
+}
+
+function nearest(probe: Probe, d: number) {
+  return [...probe.readings].sort((a, b) => Math.abs(a.thicknessNm - d) - Math.abs(b.thicknessNm - d))[0];
+}
+
+/** One sentence on a whole map. */
+export function summaryWords({ counts, quantilesNm }: EstimateSummary): string {
+  const read = counts.measured + counts.ambiguous;
+  if (!quantilesNm || read === 0) {
+    return counts.bare > 0
+      ? `Only bare surface: ${shareText(counts.bare, counts.inRegion)} of the region.`
+      : 'No film colours were found in the region.';
+  }
+  const spread = quantilesNm.p95 - quantilesNm.p05;
+  const parts = [
+    `${shareText(read, counts.inRegion)} of the region shows film; the middle nine tenths of what was read span ${intervalText(quantilesNm.p05, quantilesNm.p95)} nm`,
+    `median ${thicknessText(quantilesNm.p50, Math.min(spread, 20))} nm`,
+  ];
+  if (counts.bare > 0) parts.push(`${shareText(counts.bare, counts.inRegion)} bare`);
+  return `${parts.join('; ')}.`;
+}
