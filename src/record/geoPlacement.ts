@@ -22,8 +22,8 @@ export interface GeoPlacement {
   readonly pixelM: number;
 }
 
-const MODEL_PIXEL_SCALE = 33550;
-const MODEL_TIEPOINT = 33922;
+export const MODEL_PIXEL_SCALE = 33550;
+export const MODEL_TIEPOINT = 33922;
 const GEO_KEY_DIRECTORY = 34735;
 const GEO_DOUBLE_PARAMS = 34736;
 const GEO_ASCII_PARAMS = 34737;

@@ -136,7 +136,8 @@ const result = v.strictObject({
 const file = v.strictObject({
   path: v.pipe(
     v.string(),
-    v.regex(/^(?!.*(^|\/)\.{1,2}(\/|$))[^\\/]+(\/[^\\/]+)*$/, 'a path inside the archive'),
+    // No way out of the archive, nothing that a listing would have to escape.
+    v.regex(/^(?!.*(^|\/)\.{1,2}(\/|$))[^\\/\p{Cc}]+(\/[^\\/\p{Cc}]+)*$/u, 'a path inside the archive'),
   ),
   role: v.picklist(FILE_ROLES),
   mediaType: v.string(),

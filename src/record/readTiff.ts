@@ -1,13 +1,16 @@
 /** Reads back the rasters that `floatTiff.ts` writes; it is no general TIFF reader. */
 import { unzlibSync } from 'fflate';
 import { DEFLATE, FLOAT_FORMAT, FLOAT_PREDICTOR, UNCOMPRESSED } from './floatTiff.ts';
-import { LONG, SHORT } from './tiffDirectory.ts';
+import { MODEL_PIXEL_SCALE, MODEL_TIEPOINT } from './geoPlacement.ts';
+import { DOUBLE, LONG, SHORT } from './tiffDirectory.ts';
 
 export interface ReadRaster {
   readonly width: number;
   readonly height: number;
   /** Float32Array of a 32-bit float file, Uint8Array of an 8-bit file. */
   readonly values: Float32Array | Uint8Array;
+  /** Its place in its own ground system, whichever that is; null for a picture. */
+  readonly ground: { readonly westM: number; readonly northM: number; readonly pixelM: number } | null;
 }
 
 /** Why a raster cannot be read, in one sentence. */
@@ -52,10 +55,22 @@ function read(file: Uint8Array): ReadRaster {
     at += strip.length;
   });
   if (at !== size) throw new RasterError(DAMAGED);
-  if (bytesPerPixel === 1) return { width, height, values: pixels };
+  const pixelM = only(MODEL_PIXEL_SCALE);
+  const [, , , westM, northM] = tags.get(MODEL_TIEPOINT) ?? [];
+  const ground =
+    pixelM === undefined || westM === undefined || northM === undefined ? null : { westM, northM, pixelM };
+  if (bytesPerPixel === 1) return { width, height, values: pixels, ground };
   if (only(317) === FLOAT_PREDICTOR) undoPredictor(pixels, width);
-  return { width, height, values: new Float32Array(pixels.buffer) };
+  return { width, height, values: new Float32Array(pixels.buffer), ground };
 }
+
+const READERS: Readonly<
+  Record<number, { readonly bytes: number; readonly value: (view: DataView, at: number) => number }>
+> = {
+  [SHORT]: { bytes: 2, value: (view, at) => view.getUint16(at, true) },
+  [LONG]: { bytes: 4, value: (view, at) => view.getUint32(at, true) },
+  [DOUBLE]: { bytes: 8, value: (view, at) => view.getFloat64(at, true) },
+};
 
 function readTags(file: Uint8Array): Map<number, number[]> {
   const view = new DataView(file.buffer, file.byteOffset, file.byteLength);
@@ -65,16 +80,14 @@ function readTags(file: Uint8Array): Map<number, number[]> {
   for (let i = 0; i < view.getUint16(directoryAt, true); i++) {
     const at = directoryAt + 2 + 12 * i;
     const type = view.getUint16(at + 2, true);
-    if (type !== SHORT && type !== LONG) continue;
+    const read = READERS[type];
+    if (!read) continue;
     const count = view.getUint32(at + 4, true);
-    const bytes = type === SHORT ? 2 : 4;
-    if (count * bytes > file.length) throw new RasterError(DAMAGED);
-    const place = count * bytes > 4 ? view.getUint32(at + 8, true) : at + 8;
+    if (count * read.bytes > file.length) throw new RasterError(DAMAGED);
+    const place = count * read.bytes > 4 ? view.getUint32(at + 8, true) : at + 8;
     tags.set(
       view.getUint16(at, true),
-      Array.from({ length: count }, (_, k) =>
-        type === SHORT ? view.getUint16(place + 2 * k, true) : view.getUint32(place + 4 * k, true),
-      ),
+      Array.from({ length: count }, (_, k) => read.value(view, place + k * read.bytes)),
     );
   }
   return tags;

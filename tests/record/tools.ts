@@ -17,6 +17,7 @@ const PACKAGES: Readonly<Record<string, string>> = {
   pdfinfo: 'poppler-utils',
   soffice: 'libreoffice-calc',
   python3: 'python3',
+  unzip: 'unzip',
   exiftool: 'libimage-exiftool-perl',
 };
 
