@@ -87,32 +87,34 @@ export function WorkScreen() {
         ) : null}
       </Stage>
       <div class="sheet">
-        {busy ? (
-          <section aria-label="Working" aria-live="polite">
-            <h2>{busy.step}</h2>
-            <progress value={busy.share} max={1} aria-label={busy.step} />
-            <button type="button" onClick={cancel}>
-              Stop
-            </button>
-          </section>
-        ) : (
-          <>
-            {failure.value ? (
-              <p role="alert" class="warn">
-                {failure.value}
-              </p>
-            ) : null}
-            {current === 'film' ? <FilmStep /> : null}
-            {current === 'light' ? <LightStep /> : null}
-            {current === 'mark' ? <MarkStep corners={corners} onClear={() => setCorners([])} /> : null}
-            {current === 'map' ? <MapStep /> : null}
-            {next ? (
-              <button type="button" class="primary" onClick={() => go(next)}>
-                {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
+        <div class="content">
+          {busy ? (
+            <section aria-label="Working" aria-live="polite">
+              <h1>{busy.step}</h1>
+              <progress value={busy.share} max={1} aria-label={busy.step} />
+              <button type="button" onClick={cancel}>
+                Stop
               </button>
-            ) : null}
-          </>
-        )}
+            </section>
+          ) : (
+            <>
+              {failure.value ? (
+                <p role="alert" class="warn">
+                  {failure.value}
+                </p>
+              ) : null}
+              {current === 'film' ? <FilmStep /> : null}
+              {current === 'light' ? <LightStep /> : null}
+              {current === 'mark' ? <MarkStep corners={corners} onClear={() => setCorners([])} /> : null}
+              {current === 'map' ? <MapStep /> : null}
+            </>
+          )}
+        </div>
+        {next && !busy ? (
+          <button type="button" class="primary" onClick={() => go(next)}>
+            {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
+          </button>
+        ) : null}
         <nav class="steps" aria-label="Steps">
           {STEPS.map((id) => (
             <button

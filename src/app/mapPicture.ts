@@ -1,4 +1,4 @@
-import type { ThicknessMap } from '../match/types.ts';
+import { PIXEL_STATUS, type ThicknessMap } from '../match/types.ts';
 
 export interface MapPicture {
   readonly bitmap: ImageBitmap;
@@ -20,9 +20,15 @@ export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order')
     pixels[o] = rgb[i] ?? 0;
     pixels[o + 1] = rgb[i + 1] ?? 0;
     pixels[o + 2] = rgb[i + 2] ?? 0;
-    pixels[o + 3] = 255;
+    pixels[o + 3] = opacityOf(map.status[o / 4] ?? 0);
   }
   return { bitmap: await createImageBitmap(new ImageData(pixels, map.width, map.height)), topNm, ramp };
+}
+
+/** The photo shows through where nothing was read, so that hull, quay and glint stay recognisable. */
+function opacityOf(status: number): number {
+  if (status === PIXEL_STATUS.outside) return 0;
+  return status === PIXEL_STATUS.noFilmColour ? 150 : 255;
 }
 
 function asOrders(map: ThicknessMap): ThicknessMap {

@@ -29,7 +29,7 @@ export function ProbeSheet({
   const words = readingWords(probe, resolvableToNm);
   return (
     <section aria-live="polite" aria-label="Reading">
-      <p class="reading">{words.big}</p>
+      <h1 class="reading">{words.big}</h1>
       <p class="quiet">{words.quiet}</p>
       <PosteriorCurve probe={probe} />
       <div class="swatches">

@@ -10,7 +10,7 @@ export function FilmStep() {
   const [own, setOwn] = useState(typeof film !== 'string');
   return (
     <section aria-label="Film">
-      <h2>What is the film?</h2>
+      <h1>What is the film?</h1>
       <div class="choices">
         {FILM_PRESETS.map((preset) => (
           <button
@@ -62,6 +62,7 @@ function OwnFilm() {
       <label class="field">
         Index n_D
         <input
+          class="entry"
           type="number"
           inputMode="decimal"
           step="0.001"
@@ -74,6 +75,7 @@ function OwnFilm() {
       <label class="field">
         Abbe number
         <input
+          class="entry"
           type="number"
           inputMode="decimal"
           min="5"

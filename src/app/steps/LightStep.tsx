@@ -21,7 +21,7 @@ export function LightStep() {
   const incidence = setup.value.incidenceDeg ?? 0;
   return (
     <section aria-label="Light">
-      <h2>What does the film mirror?</h2>
+      <h1>What does the film mirror?</h1>
       <label class="field">
         Light
         <select

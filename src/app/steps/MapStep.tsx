@@ -13,7 +13,7 @@ export function MapStep() {
     const hasReference = Boolean(references.clean || references.white);
     return (
       <section aria-label="Map">
-        <h2>{hasReference ? 'Ready to measure' : 'Measure without a reference?'}</h2>
+        <h1>{hasReference ? 'Ready to measure' : 'Measure without a reference?'}</h1>
         <p class="quiet">
           {hasReference
             ? 'The photo’s own film colours will calibrate its camera.'
@@ -33,12 +33,12 @@ export function MapStep() {
         <ProbeSheet probe={probe.value} resolvableToNm={summary.resolvableNm.toNm} />
       ) : (
         <>
-          <h2>{summary.calibrated ? 'Tap the map to read it' : 'Uncalibrated: tap the map to read it'}</h2>
+          <h1>{summary.calibrated ? 'Tap the map to read it' : 'Uncalibrated: tap the map to read it'}</h1>
           <p>{summaryWords(summary)}</p>
         </>
       )}
       <label class="field">
-        <span class="small quiet">Map left, photo right: slide to compare</span>
+        <span class="small quiet">Photo left, map right: slide to compare</span>
         <input
           type="range"
           min="0"
@@ -60,45 +60,51 @@ export function MapStep() {
           Whole photo
         </button>
       </div>
-      <ul class="key" aria-label="Key of the map">
-        <li>
-          <i class="i-bare" />
-          bare surface
-        </li>
-        <li>
-          <i class="i-unsure" />
-          order not sure
-        </li>
-        <li>
-          <i class="i-least" />
-          at least, past colour
-        </li>
-        <li>
-          <i class="i-none" />
-          no film colour
-        </li>
-      </ul>
-      {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
-      {[...summary.notices.map((n) => n.text), ...(image.value?.opened.notices ?? [])].map((text) => (
-        <p key={text} class="note small warn">
-          {text}
-        </p>
-      ))}
-      <div class="row">
-        <button type="button" onClick={() => void exportMap()}>
-          <Icon name="save" />
-          Map PNG
-        </button>
-        <button type="button" onClick={exportRows}>
-          <Icon name="save" />
-          Rows CSV
-        </button>
-        <button type="button" onClick={exportSummary}>
-          <Icon name="save" />
-          Summary
-        </button>
-      </div>
-      <p class="small quiet">Indicative only: the responsible authority decides.</p>
+      <details>
+        <summary>Key, fit and notices</summary>
+        <ul class="key" aria-label="Key of the map">
+          <li>
+            <i class="i-bare" />
+            bare surface
+          </li>
+          <li>
+            <i class="i-unsure" />
+            order not sure
+          </li>
+          <li>
+            <i class="i-least" />
+            at least, past colour
+          </li>
+          <li>
+            <i class="i-none" />
+            no film colour
+          </li>
+        </ul>
+        {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
+        {[...summary.notices.map((n) => n.text), ...(image.value?.opened.notices ?? [])].map((text) => (
+          <p key={text} class="note small warn">
+            {text}
+          </p>
+        ))}
+      </details>
+      <details>
+        <summary>Hand over</summary>
+        <div class="row">
+          <button type="button" onClick={() => void exportMap()}>
+            <Icon name="save" />
+            Map PNG
+          </button>
+          <button type="button" onClick={exportRows}>
+            <Icon name="save" />
+            Rows CSV
+          </button>
+          <button type="button" onClick={exportSummary}>
+            <Icon name="save" />
+            Summary
+          </button>
+        </div>
+        <p class="small quiet">Indicative only: the responsible authority decides.</p>
+      </details>
     </section>
   );
 }

@@ -30,7 +30,7 @@ export function MarkStep({
   const { references: _r, pins: _p, region: _g, ...bare } = setup.value;
   return (
     <section aria-label="Mark">
-      <h2>{onWater(setup.value.film) ? 'Mark clean water' : 'Mark a reference'}</h2>
+      <h1>{onWater(setup.value.film) ? 'Mark clean water' : 'Mark a reference'}</h1>
       <div class="choices">
         {KINDS.map(([id, name]) => (
           <button key={id} type="button" aria-pressed={kind === id} onClick={() => (marking.value = id)}>
@@ -98,6 +98,7 @@ function CardLevel() {
     <label class="field">
       Reflectance of the card, %, if it is stated on it
       <input
+        class="entry"
         type="number"
         inputMode="decimal"
         min="0.5"

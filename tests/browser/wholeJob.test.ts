@@ -1,0 +1,202 @@
+import { mkdirSync, readdirSync, readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import { join } from 'node:path';
+import { gzipSync } from 'node:zlib';
+import type { Browser, BrowserContext, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { type BuiltApp, serveBuiltApp } from './builtApp.ts';
+import { launchChromium } from './chromium.ts';
+
+const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+/** `npm run screenshots` keeps what the tests see, for the README and the manifest. */
+const KEEP = process.env.KEEP_SCREENSHOTS === '1';
+
+let app: BuiltApp;
+let browser: Browser;
+let context: BrowserContext;
+let page: Page;
+const requested: string[] = [];
+const complaints: string[] = [];
+
+beforeAll(async () => {
+  app = await serveBuiltApp();
+  browser = await launchChromium();
+  context = await browser.newContext({
+    viewport: { width: 390, height: 844 },
+    deviceScaleFactor: 2,
+    acceptDownloads: true,
+  });
+  page = await context.newPage();
+  page.on('request', (request) => requested.push(request.url()));
+  page.on('pageerror', (error) => complaints.push(error.message));
+  page.on('console', (message) => {
+    if (message.type() === 'error') complaints.push(message.text());
+  });
+  await page.goto(app.url);
+}, 120_000);
+
+afterAll(async () => {
+  await browser?.close();
+  await app?.close();
+});
+
+async function picture(name: string): Promise<void> {
+  if (!KEEP) return;
+  mkdirSync('public/screenshots', { recursive: true });
+  await page.screenshot({ path: `public/screenshots/${name}.png` });
+}
+
+/** Violations that axe-core finds, as "rule: first element". */
+async function violations(): Promise<string[]> {
+  await page.evaluate(axeSource);
+  return page.evaluate(async () => {
+    const { axe } = globalThis as unknown as {
+      axe: {
+        run: (target: Document) => Promise<{ violations: { id: string; nodes: { html: string }[] }[] }>;
+      };
+    };
+    const { violations: found } = await axe.run(document);
+    return found.map((violation) => `${violation.id}: ${violation.nodes[0]?.html}`);
+  });
+}
+
+const step = (name: string) =>
+  page.getByRole('navigation', { name: 'Steps' }).getByRole('button', { name, exact: true });
+
+describe('the whole job in a real browser, offline', () => {
+  it('states a policy that lets nothing leave the origin', async () => {
+    const policy = await page.getAttribute('meta[http-equiv="Content-Security-Policy"]', 'content');
+    expect(policy).toContain("default-src 'self'");
+    expect(policy).toContain("connect-src 'self'");
+  });
+
+  it('keeps the first script under 60 KB gzipped', () => {
+    const assets = join(app.outDir, 'assets');
+    const main = readdirSync(assets).filter((name) => /^index-.*\.js$/.test(name));
+    expect(main).toHaveLength(1);
+    const bytes = gzipSync(readFileSync(join(assets, main[0] ?? ''))).length;
+    expect(bytes).toBeLessThan(60 * 1024);
+  });
+
+  it('works from the first visit on with the network gone, reload included', async () => {
+    await page.evaluate(() => navigator.serviceWorker.ready);
+    await page.waitForFunction(() => navigator.serviceWorker.controller !== null);
+    await context.setOffline(true);
+    await page.reload();
+    await page.getByText('Draining soap film').waitFor();
+    expect(await violations()).toEqual([]);
+    await picture('start');
+  });
+
+  it('opens a demo photo and marks the reference anew', async () => {
+    await page.getByText('Draining soap film').click();
+    await step('Mark').click();
+    await page.getByRole('button', { name: 'Clear all marks' }).click();
+    await page.getByRole('button', { name: 'Grey card' }).click();
+    const stage = page.locator('.stage canvas').first();
+    const box = await stage.boundingBox();
+    if (!box) throw new Error('no stage');
+    const setup = JSON.parse(readFileSync('public/demo/soap-film.setup.json', 'utf8')) as {
+      references: { white: [number, number, number, number] };
+    };
+    const [x, y, width, height] = setup.references.white;
+    // The photo of 1200 x 1600 is fitted and centred on the stage.
+    const scale = Math.min(box.width / 1200, box.height / 1600);
+    const left = box.x + (box.width - 1200 * scale) / 2 + x * scale;
+    const top = box.y + (box.height - 1600 * scale) / 2 + y * scale;
+    await page.mouse.move(left, top);
+    await page.mouse.down();
+    await page.mouse.move(left + width * scale, top + height * scale, { steps: 6 });
+    await page.mouse.up();
+    await page.getByRole('button', { name: 'Remove this mark' }).waitFor();
+    expect(await violations()).toEqual([]);
+    await picture('mark');
+  });
+
+  it('has every step free of faults that axe finds, in both themes', async () => {
+    for (const theme of ['Sunlight theme', 'Dark theme']) {
+      await page.getByRole('button', { name: theme }).click();
+      for (const name of ['Film', 'Light', 'Mark']) {
+        await step(name).click();
+        expect(await violations(), `${name}, ${theme}`).toEqual([]);
+      }
+    }
+    await step('Film').click();
+    await picture('film');
+  });
+
+  it('measures and reads a place with an interval that holds the truth', async () => {
+    await step('Map').click();
+    await page.locator('.legend').waitFor({ timeout: 60_000 });
+    await picture('map');
+    expect(await violations()).toEqual([]);
+    const box = await page.locator('.stage canvas').first().boundingBox();
+    if (!box) throw new Error('no stage');
+    const scale = Math.min(box.width / 1200, box.height / 1600);
+    await page.mouse.click(
+      box.x + (box.width - 1200 * scale) / 2 + 470 * scale,
+      box.y + (box.height - 1600 * scale) / 2 + 800 * scale,
+    );
+    const reading = page.getByRole('region', { name: 'Reading' });
+    await reading.waitFor();
+    const words = (await reading.textContent()) ?? '';
+    expect(words).toMatch(/^\d[\d,]* nm/);
+    expect(words).toMatch(/order/);
+    await picture('reading');
+    expect(await violations()).toEqual([]);
+  });
+
+  it('hands over files', async () => {
+    await page.getByText('Hand over', { exact: true }).click();
+    const [download] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Summary' }).click(),
+    ]);
+    const summary = JSON.parse(readFileSync(await download.path(), 'utf8')) as {
+      counts: { measured: number };
+      photo: { sha256: string };
+    };
+    expect(summary.counts.measured).toBeGreaterThan(100_000);
+    expect(summary.photo.sha256).toMatch(/^[0-9a-f]{64}$/);
+    const [map] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Map PNG' }).click(),
+    ]);
+    expect([...readFileSync(await map.path()).subarray(0, 4)]).toEqual([0x89, 0x50, 0x4e, 0x47]);
+  });
+
+  it('undoes and redoes a mark', async () => {
+    await step('Mark').click();
+    await page.getByRole('button', { name: 'Grey card' }).click();
+    await page.getByRole('button', { name: 'Remove this mark' }).click();
+    await page.getByRole('button', { name: 'Undo' }).click();
+    await page.getByRole('button', { name: 'Remove this mark' }).waitFor();
+  });
+
+  it('goes on after a reload with the photo and its marks', async () => {
+    await page.reload();
+    await page.getByRole('button', { name: /^Go on with/ }).click();
+    await step('Mark').click();
+    await page.getByRole('button', { name: 'Grey card' }).click();
+    await page.getByRole('button', { name: 'Remove this mark' }).waitFor();
+  });
+
+  it('shows the chart and the sources', async () => {
+    await page.goto(`${app.url}#/chart`);
+    await page.getByText(/Orders end at/).waitFor();
+    expect(await violations()).toEqual([]);
+    await picture('chart');
+    await page.goto(`${app.url}#/about`);
+    await page.getByText('BSD-3-Clause').first().waitFor();
+    expect(await violations()).toEqual([]);
+  });
+
+  it('never asked anything of another origin, and nothing complained', () => {
+    const origin = new URL(app.url).origin;
+    const foreign = requested.filter(
+      (url) => !url.startsWith(origin) && !url.startsWith('blob:') && !url.startsWith('data:'),
+    );
+    expect(foreign).toEqual([]);
+    expect(complaints).toEqual([]);
+  });
+});
