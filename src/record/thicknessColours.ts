@@ -27,11 +27,30 @@ export function thicknessRamp(): Uint8Array {
 }
 
 /** Greys of what has no thickness: outside, no film colour, and the two tones of the stripes of "at least". */
-const OUTSIDE = 24;
+const OUTSIDE = 236;
 const NO_FILM = 96;
 const AT_LEAST = [200, 150] as const;
 const BARE = [10, 14, 20] as const;
 const STRIPE = 4;
+/** Share of brightness that the dark squares of an ambiguous pixel's checker keep. */
+const DIM = 0.7;
+
+/** What a map shows besides the ramp, for its legend: CSS colours, two where the pattern has two. */
+export function mapKeyColours(): readonly { readonly name: string; readonly colours: readonly string[] }[] {
+  const grey = (level: number) => `rgb(${level},${level},${level})`;
+  const ramp = thicknessRamp();
+  const middle = [0, 1, 2].map((c) => ramp[3 * 128 + c]!);
+  return [
+    { name: 'bare surface', colours: [`rgb(${BARE.join(',')})`] },
+    { name: 'past what colour can tell', colours: AT_LEAST.map(grey) },
+    { name: 'no film colour', colours: [grey(NO_FILM)] },
+    {
+      name: 'two orders fit',
+      colours: [`rgb(${middle.join(',')})`, `rgb(${middle.map((v) => Math.floor(v * DIM)).join(',')})`],
+    },
+    { name: 'not looked at', colours: [grey(OUTSIDE)] },
+  ];
+}
 
 export interface PaintedMap {
   readonly rgb: Uint8Array;
@@ -56,7 +75,7 @@ export function paintMap(map: ThicknessMap, topNm = niceTop(map)): PaintedMap {
           STEPS - 1,
           Math.max(0, Math.round((map.thicknessNm[i]! / topNm) * (STEPS - 1))),
         );
-        const dim = status === PIXEL_STATUS.ambiguous && (x + y) % 4 < 2 ? 0.7 : 1;
+        const dim = status === PIXEL_STATUS.ambiguous && (x + y) % 4 < 2 ? DIM : 1;
         for (let c = 0; c < 3; c++) rgb[out + c] = ramp[3 * step + c]! * dim;
       } else if (status === PIXEL_STATUS.bare) {
         rgb.set(BARE, out);

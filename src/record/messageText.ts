@@ -1,0 +1,83 @@
+import {
+  areaFigures,
+  codeVolumeFigures,
+  conditionWords,
+  percentWords,
+  plural,
+  positionWords,
+  timeWords,
+  viewpointWords,
+  volumeFigures,
+} from './inWords.ts';
+import type { Observation } from './observation.ts';
+
+/** More would not be read out. */
+const MOST_UNKNOWN = 4;
+
+/**
+ * A short text to be read out over radio or sent as a message: one sentence a line, most urgent first, units in words.
+ * Lines about what is not in the record say so or are left out.
+ */
+export function messageText(observation: Observation): string {
+  return [
+    `Film on water, indicative report. ${observation.title}.`.replace(/\.\.$/, '.'),
+    observation.time ? `Seen ${timeWords(observation.time)}.` : 'Time not known.',
+    positionLine(observation),
+    `Seen ${viewpointWords(observation.viewpoint)}.`,
+    observation.substance ? `Oil type: ${observation.substance.name}.` : 'Oil type not known.',
+    ...amountLines(observation),
+    sentence(conditionWords(observation.conditions)),
+    observation.lookAlikes?.reason ?? '',
+    unknownLine(observation.notKnown),
+    'Figures are indicative; the responsible authority decides.',
+  ]
+    .filter((line) => line !== '')
+    .join('\n');
+}
+
+function positionLine({ position, leftOut, placeName }: Observation): string {
+  if (!position) return leftOut.includes('position') ? 'Position left out.' : 'Position not known.';
+  return `Position ${positionWords(position)}${placeName ? `, ${placeName}` : ''}.`;
+}
+
+function amountLines({ result, slickByEye }: Observation): string[] {
+  const lines: string[] = [];
+  if (slickByEye?.lengthM !== undefined && slickByEye.widthM !== undefined) {
+    const { lengthM, widthM } = slickByEye;
+    lines.push(`By eye ${lengthM} metres long, ${widthM} ${plural('metre', widthM)} wide.`);
+  }
+  if (result?.byThickness) {
+    const { least, best, most, unit } = areaFigures(result.byThickness.oiledM2);
+    const coverage = result.area?.coverage;
+    const share = coverage == null ? '' : `; ${percentWords(coverage)} of the water is oiled`;
+    lines.push(`Oiled area ${least} to ${most} ${plural(unit.name, most)}, best ${best}${share}.`);
+    const volume = volumeFigures(result.byThickness.volumeM3);
+    const atLeast = result.byThickness.atLeast ? 'at least ' : '';
+    lines.push(
+      `Volume by thickness ${atLeast}${volume.least} to ${volume.most} ${plural(volume.unit.name, volume.most)}, best ${volume.best}.`,
+    );
+  }
+  if (result?.byCode && result.byCode.maxM3 > 0) {
+    const { least, most, unit } = codeVolumeFigures(result.byCode.minM3, result.byCode.maxM3);
+    const atLeast = result.byCode.atLeast ? 'at least ' : '';
+    lines.push(`Volume by appearance code ${atLeast}${least} to ${most} ${plural(unit.name, most)}.`);
+  }
+  if (lines.length === 0) lines.push('Amount not known.');
+  return lines;
+}
+
+function sentence(words: readonly string[]): string {
+  if (words.length === 0) return '';
+  const text = words.join(', ');
+  return `${text[0]!.toUpperCase()}${text.slice(1)}.`;
+}
+
+function unknownLine(notKnown: readonly string[]): string {
+  if (notKnown.length === 0) return '';
+  const named = notKnown.slice(0, MOST_UNKNOWN).map((text) => {
+    const plain = text.replace(/\.$/, '');
+    return `${plain[0]!.toLowerCase()}${plain.slice(1)}`;
+  });
+  const more = notKnown.length - named.length;
+  return `Not known: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.`;
+}
