@@ -52,10 +52,10 @@ const SAMPLE_WEIGHT = 0.02;
 /** What a sampled colour may be off for reasons other than noise, codes of 255. */
 const SAMPLE_ERROR = 2;
 /**
- * Relative scale error left by cameras that are not of the family: 0.25 % is 1.4 nm in the place of a sensor's peak.
+ * Relative scale error left by cameras that are not of the family: 0.3 % is 1.7 nm in the place of a sensor's peak.
  * Set on seeded scenes with sensors outside the family.
  */
-const OUTSIDE_FAMILY = 0.0025;
+const OUTSIDE_FAMILY = 0.003;
 /** Fitted covariances are widened by this: cameras are not exactly of the family (set on seeded scenes, `npm run validate`). */
 const COVARIANCE_FACTOR = 2;
 /** Squared distance (in noise) of colours that are no film: about 18 codes. */
