@@ -1,7 +1,7 @@
 import type { ChartView } from '../../engine/contract.ts';
 import { writeCsv } from '../../record/csv.ts';
 import { orderAt, placeInRange } from './likeColours.ts';
-import { type ChartSetup, lightWords, observerWords } from './setupWords.ts';
+import { type ChartSetup, lightWords, observerWords, surfaceWords } from './setupWords.ts';
 
 const HEADER = [
   'thickness_nm',
@@ -21,6 +21,7 @@ const HEADER = [
   'ciede2000_per_nm',
   'within_resolvable_range',
   'film',
+  'surface',
   'light',
   'incidence_deg',
   'observer',
@@ -35,7 +36,13 @@ const figure = (value: number | undefined) => (value === undefined ? null : Numb
  */
 export function chartCsv(view: ChartView, setup: ChartSetup): string {
   const film = typeof setup.film === 'string' ? setup.film : JSON.stringify(setup.film);
-  const fixed = [film, lightWords(setup.light), setup.incidenceDeg ?? 0, observerWords(setup.camera)];
+  const fixed = [
+    film,
+    surfaceWords(setup),
+    lightWords(setup.light),
+    setup.incidenceDeg ?? 0,
+    observerWords(setup.camera),
+  ];
   const triple = (values: Float32Array | Uint8Array, j: number) =>
     [0, 1, 2].map((c) => figure(values[3 * j + c]));
   return writeCsv(

@@ -7,15 +7,19 @@ const WIDTH = 480;
 const HEIGHT = 1480;
 const MARGIN = 24;
 const RULER_TOP = 148;
-const RULER_BOTTOM = 70;
+const RULER_BOTTOM = 84;
 
 /** What the columns of a ruler mean, and how far to trust it: stands on the sheet and on the card. */
 export function readingNotes({ resolvableNm }: ChartView, toNm: number): string[] {
+  const known = 'once the order is known';
   const reach =
     resolvableNm.toNm >= toNm
-      ? `Colour tells thickness over all of it, once the order is known.`
-      : `Colour tells thickness up to about ${Math.round(resolvableNm.toNm / 10) * 10} nm, once the order is known; beyond, only "at least".`;
-  return [reach, 'Curve: colour change a nanometre. ≈: a like colour of another order, nm.'];
+      ? [`Solid line: colour tells thickness over all of it, ${known}.`]
+      : [
+          `Solid line: colour tells thickness, ${known}. Dotted: too pale;`,
+          `say "at least ${Math.floor(resolvableNm.toNm / 50) * 50} nm".`,
+        ];
+  return [...reach, 'Grey curve: colour change a nanometre. ≈ a like colour of another order, at that nm.'];
 }
 
 /** Last thickness of a chart, nm. */
@@ -68,17 +72,16 @@ export function pocketCardSvg(view: ChartView, setup: ChartSetup, appVersion: st
   const toNm = chartEndNm(view);
   const middle = toNm / 2;
   const column = (fromNm: number, endNm: number, x: number) =>
-    rulerColumn(view, { fromNm, toNm: endNm, x, y: 27, width: 47, height: 104, fontSize: 2.7 });
+    rulerColumn(view, { fromNm, toNm: endNm, x, y: 26, width: 47, height: 106, fontSize: 2.7 });
   const notes = [
     ...readingNotes(view, toNm),
-    'Ink shifts colours: go by their sequence, not by one shade. Indicative only.',
-    `Tintfathom ${appVersion}`,
+    `Ink shifts colours: go by their sequence. Indicative only. Tintfathom ${appVersion}`,
   ];
   return page(
     CARD_WIDTH_MM,
     CARD_HEIGHT_MM,
     `Pocket card: ${film}`,
     'mm',
-    html`<rect x="0.1" y="0.1" width="${CARD_WIDTH_MM - 0.2}" height="${CARD_HEIGHT_MM - 0.2}" fill="none" stroke="#888" stroke-width="0.2"/><g font-family="system-ui, sans-serif" font-size="2.7" fill="#000"><text x="5" y="9.5" font-size="5" font-weight="650">${film}</text>${conditions.map((text, i) => html`<text x="5" y="${14 + 3.6 * i}">${text}</text>`)}<text x="5" y="23.6" font-weight="600">nm</text>${notes.map((text, i) => html`<text x="5" y="${135.4 + 3.2 * i}" font-size="2.3">${text}</text>`)}</g>${column(0, middle, 4)}${column(middle, toNm, 54)}`,
+    html`<rect x="0.1" y="0.1" width="${CARD_WIDTH_MM - 0.2}" height="${CARD_HEIGHT_MM - 0.2}" fill="none" stroke="#888" stroke-width="0.2"/><g font-family="system-ui, sans-serif" font-size="2.7" fill="#000"><text x="5" y="9.5" font-size="5" font-weight="650">${film}</text>${conditions.map((text, i) => html`<text x="5" y="${14 + 3.6 * i}">${text}</text>`)}<text x="5" y="23" font-weight="600">nm</text>${notes.map((text, i) => html`<text x="5" y="${136.4 + 3.1 * i}" font-size="2.3">${text}</text>`)}</g>${column(0, middle, 4)}${column(middle, toNm, 54)}`,
   );
 }
