@@ -75,6 +75,22 @@ export default defineConfig({
           { src: 'icons/icon-512.png', sizes: '512x512', type: 'image/png' },
           { src: 'icons/icon-maskable-512.png', sizes: '512x512', type: 'image/png', purpose: 'maskable' },
         ],
+        screenshots: [
+          {
+            src: 'screenshots/reading.png',
+            sizes: '780x1688',
+            type: 'image/png',
+            form_factor: 'narrow',
+            label: 'A reading with its interval',
+          },
+          {
+            src: 'screenshots/wide.png',
+            sizes: '1280x800',
+            type: 'image/png',
+            form_factor: 'wide',
+            label: 'The map on a desktop',
+          },
+        ],
         shortcuts: [{ name: 'Colour chart', url: './#/chart' }],
       },
     }),

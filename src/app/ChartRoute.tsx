@@ -1,6 +1,6 @@
 import { useEffect, useState } from 'preact/hooks';
 import type { Engine } from '../engine/engine.client.ts';
-import { SimpleChart } from './SimpleChart.tsx';
+import ChartScreen from './chart/ChartScreen.tsx';
 import { theEngine } from './session.ts';
 import { setup } from './state.ts';
 
@@ -11,7 +11,7 @@ export function ChartRoute() {
     void theEngine().then(setEngine);
   }, []);
   return engine ? (
-    <SimpleChart engine={engine} setup={setup.value} />
+    <ChartScreen engine={engine} setup={setup.value} />
   ) : (
     <main class="page" aria-busy="true" />
   );

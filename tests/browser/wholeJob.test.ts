@@ -144,6 +144,11 @@ describe('the whole job in a real browser, offline', () => {
     expect(words).toMatch(/order/);
     await picture('reading');
     expect(await violations()).toEqual([]);
+    if (KEEP) {
+      await page.setViewportSize({ width: 1280, height: 800 });
+      await page.screenshot({ path: 'public/screenshots/wide.png', scale: 'css' });
+      await page.setViewportSize({ width: 390, height: 844 });
+    }
   });
 
   it('hands over files', async () => {
@@ -183,7 +188,7 @@ describe('the whole job in a real browser, offline', () => {
 
   it('shows the chart and the sources', async () => {
     await page.goto(`${app.url}#/chart`);
-    await page.getByText(/Orders end at/).waitFor();
+    await page.locator('.chart:not([aria-busy="true"])').waitFor();
     expect(await violations()).toEqual([]);
     await picture('chart');
     await page.goto(`${app.url}#/about`);
