@@ -77,12 +77,17 @@ export function gridFor(
   sizes.sort((a, b) => a - b);
   const least = Math.sqrt(((box[2] - box[0]) * (box[3] - box[1])) / mostCells);
   for (let cellM = evenStep(Math.max(least, sizes[sizes.length >> 1]!)); ; cellM = evenStep(1.01 * cellM)) {
-    const westM = cellM * Math.floor(box[0] / cellM);
-    const northM = cellM * Math.ceil(box[3] / cellM);
+    // Whole cells from the camera, so that two maps of one place share their grid lines; without binary dust.
+    const westM = decimal(cellM * Math.floor(box[0] / cellM));
+    const northM = decimal(cellM * Math.ceil(box[3] / cellM));
     const columns = Math.ceil((box[2] - westM) / cellM);
     const rows = Math.ceil((northM - box[1]) / cellM);
     if (columns * rows <= mostCells) return { columns, rows, westM, northM, cellM };
   }
+}
+
+function decimal(value: number): number {
+  return Number(value.toPrecision(12));
 }
 
 /** The step of 1, 2 or 5 times a power of ten at or above `value`. */

@@ -1,5 +1,6 @@
 import { expect, test } from 'vitest';
 import { readArchive, writeArchive } from '../../src/record/archive.ts';
+import { archiveExports } from '../../src/record/archiveExports.ts';
 import { writeObservation } from '../../src/record/readObservation.ts';
 import { readTiff } from '../../src/record/readTiff.ts';
 import { withoutPosition } from '../../src/record/redact.ts';
@@ -37,6 +38,14 @@ test('the position is found before and nowhere after, in the record and in every
   expect(holdsPlace(new TextEncoder().encode(text))).toBe(false);
   for (const bytes of files.values()) expect(holdsPlace(bytes)).toBe(false);
   expect(text).not.toMatch(/Inner quay|azimuthDeg|elevationDeg|altitudeM/);
+});
+
+test('report, table and message hold the position before, and not after', async () => {
+  const before = content();
+  const holdsPlaceWords = (text: string) => /47\.25|21\.40|47 degrees|21 degrees|Inner quay/.test(text);
+  expect([...archiveExports(before.observation).values()].map(holdsPlaceWords)).toEqual([true, true, true]);
+  const { observation } = await withoutPosition(before, { keepOriginal: false, sha256 });
+  expect([...archiveExports(observation).values()].map(holdsPlaceWords)).toEqual([false, false, false]);
 });
 
 test('the original is left out, its hash stays, and both are said', async () => {

@@ -9,6 +9,7 @@ const PACKAGES: Readonly<Record<string, string>> = {
   gdalinfo: 'gdal-bin',
   gdal_translate: 'gdal-bin',
   ogr2ogr: 'gdal-bin',
+  gdallocationinfo: 'gdal-bin',
   ogrinfo: 'gdal-bin',
   tiffinfo: 'libtiff-tools',
   tiffdump: 'libtiff-tools',
