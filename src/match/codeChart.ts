@@ -27,9 +27,8 @@ export interface SearchChart extends CodeChart {
   readonly blocks: number;
   /** x, y, z, radius of each block's ball. */
   readonly balls: Float64Array;
-  /** Smallest eigenvalue of any precision in the block (a lower bound), and its smallest log determinant. */
+  /** Smallest eigenvalue of any precision in the block. */
   readonly leastPrecision: Float64Array;
-  readonly leastLogDeterminant: Float64Array;
 }
 
 /** Adds the bounding balls. */
@@ -37,7 +36,6 @@ export function searchable(chart: CodeChart): SearchChart {
   const blocks = Math.ceil(chart.count / BLOCK);
   const balls = new Float64Array(4 * blocks);
   const leastPrecision = new Float64Array(blocks).fill(Number.POSITIVE_INFINITY);
-  const leastLogDeterminant = new Float64Array(blocks).fill(Number.POSITIVE_INFINITY);
   for (let b = 0; b < blocks; b++) {
     const from = b * BLOCK;
     const to = Math.min(chart.count, from + BLOCK);
@@ -55,11 +53,10 @@ export function searchable(chart: CodeChart): SearchChart {
         ),
       );
       leastPrecision[b] = Math.min(leastPrecision[b]!, leastEigenvalue(chart.precision, 6 * j));
-      leastLogDeterminant[b] = Math.min(leastLogDeterminant[b]!, chart.logDeterminant[j]!);
     }
     balls.set([centre[0]!, centre[1]!, centre[2]!, radius], 4 * b);
   }
-  return { ...chart, blocks, balls, leastPrecision, leastLogDeterminant };
+  return { ...chart, blocks, balls, leastPrecision };
 }
 
 /** Smallest eigenvalue of a symmetric 3 x 3 given as xx yy zz xy xz yz (closed form; Smith 1961). */

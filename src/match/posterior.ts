@@ -36,8 +36,16 @@ export function makeModes(): Modes {
  * `DEPTH` of the best; the result is that of trying every label.
  */
 export function posteriorReader(chart: SearchChart): (r: number, g: number, b: number, out: Modes) => void {
-  const { count, codes, precision, logDeterminant, thicknessNm, blocks, balls } = chart;
+  const { count, codes, precision, logDeterminant, thicknessNm, blocks, balls, leastPrecision } = chart;
+  // What a label costs whatever the colour: its covariance's size, and the prior.
+  const constant = Float64Array.from(logDeterminant, (v, j) => v + PRIOR * Math.log(thicknessNm[j]! + 100));
+  const leastConstant = new Float64Array(blocks).fill(Number.POSITIVE_INFINITY);
+  for (let j = 0; j < count; j++) {
+    const block = Math.floor(j / BLOCK);
+    leastConstant[block] = Math.min(leastConstant[block]!, constant[j]!);
+  }
   const cost = new Float64Array(count + 2);
+  const weight = new Float64Array(count);
   const bound = new Float64Array(blocks);
   const open = new Int32Array(blocks);
   const startOf = new Int32Array(64);
@@ -58,8 +66,7 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
         precision[w + 1]! * y * y +
         precision[w + 2]! * z * z +
         2 * (precision[w + 3]! * x * y + precision[w + 4]! * x * z + precision[w + 5]! * y * z) +
-        logDeterminant[j]! +
-        PRIOR * Math.log(thicknessNm[j]! + 100);
+        constant[j]!;
       cost[j] = d;
       if (d < least) least = d;
     }
@@ -75,7 +82,7 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
       const y = g - balls[at + 1]!;
       const z = b - balls[at + 2]!;
       const gap = Math.max(0, Math.sqrt(x * x + y * y + z * z) - balls[at + 3]!);
-      const least = gap * gap * chart.leastPrecision[block]! + chart.leastLogDeterminant[block]!;
+      const least = gap * gap * leastPrecision[block]! + leastConstant[block]!;
       bound[block] = least;
       if (least < nearestBound) {
         nearestBound = least;
@@ -175,6 +182,7 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
       let moment = 0;
       for (let j = from; j < to; j++) {
         const w = Math.exp((best - cost[j]!) / 2);
+        weight[j] = w;
         mass += w;
         moment += w * thicknessNm[j]!;
       }
@@ -182,19 +190,19 @@ export function posteriorReader(chart: SearchChart): (r: number, g: number, b: n
       insertMode(
         out,
         moment / mass,
-        quantile(from, to, best, mass * TAIL),
-        quantile(from, to, best, mass * (1 - TAIL)),
+        quantile(from, to, mass * TAIL),
+        quantile(from, to, mass * (1 - TAIL)),
         evidence,
       );
     }
   }
 
   /** Thickness below which `part` of the dip's mass lies; labels stand for cells about themselves. */
-  function quantile(from: number, to: number, best: number, part: number): number {
+  function quantile(from: number, to: number, part: number): number {
     const step = thicknessNm[1]! - thicknessNm[0]!;
     let sum = 0;
     for (let j = from; j < to; j++) {
-      const w = Math.exp((best - cost[j]!) / 2);
+      const w = weight[j]!;
       if (sum + w >= part) return Math.max(0, thicknessNm[j]! + step * ((part - sum) / w - 0.5));
       sum += w;
     }

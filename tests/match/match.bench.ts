@@ -1,4 +1,4 @@
-import KDTree from 'mnemonist/kd-tree.js';
+import { KDTree } from 'mnemonist';
 import sharp from 'sharp';
 import { bench, describe } from 'vitest';
 import { SRGB } from '../../src/colour/rgb.ts';
