@@ -25,7 +25,7 @@ type Panel = 'reading' | 'setup' | 'takeAway';
 const PANELS: readonly (readonly [Panel, string])[] = [
   ['reading', 'Read'],
   ['setup', 'Set-up'],
-  ['takeAway', 'Take away'],
+  ['takeAway', 'Save'],
 ];
 
 /**

@@ -38,6 +38,13 @@ export function Overview({
       }}
     >
       <svg viewBox="0 0 48 1000" preserveAspectRatio="none" dangerouslySetInnerHTML={{ __html: drawing }} />
+      <i
+        class="chart-range"
+        style={{
+          top: top(view.resolvableNm.fromNm),
+          bottom: `${100 - (100 * view.resolvableNm.toNm) / endNm}%`,
+        }}
+      />
       {alike.map(({ thicknessNm }) => (
         <i key={thicknessNm} class="chart-alike" style={{ top: top(thicknessNm) }} />
       ))}

@@ -1,6 +1,6 @@
 import type { ChartView } from '../../engine/contract.ts';
 import { intervalText, orderText } from '../words/numbers.ts';
-import { halfIntervalNm, type LikeColour, NOISE_DELTA_E, orderAt, placeInRange } from './likeColours.ts';
+import { halfIntervalNm, type LikeColour, orderAt, placeInRange } from './likeColours.ts';
 import { colourAt } from './rulerColumn.ts';
 
 const STEP_NM = 5;
@@ -16,7 +16,7 @@ export function certaintyWords(view: ChartView, nm: number): string {
   }
   const half = halfIntervalNm(view, nm);
   if (half > nm) return 'The colour hardly changes here: one look does not tell the thickness.';
-  return `A look tells ${intervalText(nm - half, nm + half)} nm (colour noise ${NOISE_DELTA_E}, 90 %).`;
+  return `If the order is known, ${intervalText(nm - half, nm + half)} nm (90\u00a0%).`;
 }
 
 /** The thickness under the line: colour, order, how well it can be told, and where else the colour comes back. */

@@ -14,6 +14,9 @@ const KEY_STEPS_NM: Readonly<Record<string, number>> = {
   PageDown: 50,
 };
 
+/** Below this width, pixels, the figures are set smaller. */
+const NARROW = 270;
+
 export interface RulerProps {
   readonly view: ChartView;
   readonly at: number;
@@ -36,7 +39,7 @@ export function Ruler({ view, at, onMove }: RulerProps) {
         y: 0,
         width,
         height: endNm,
-        fontSize: 14,
+        fontSize: width < NARROW ? 12 : 14,
       }).text,
     [view, endNm, width],
   );
@@ -49,31 +52,40 @@ export function Ruler({ view, at, onMove }: RulerProps) {
   };
   return (
     <div class="chart-ruler">
-      <div
-        ref={scroller}
-        class="chart-scroll"
-        role="slider"
-        tabIndex={0}
-        aria-label="Thickness on the colour ruler"
-        aria-orientation="vertical"
-        aria-valuemin={0}
-        aria-valuemax={endNm}
-        aria-valuenow={at}
-        aria-valuetext={`${at} nanometres, order ${orderAt(at, view.orderBoundariesNm)}`}
-        onScroll={onScroll}
-        onKeyDown={onKeyDown}
-      >
-        <svg
-          viewBox={`0 0 ${width} ${endNm}`}
-          width={width}
-          height={endNm}
-          aria-hidden="true"
-          onClick={(event) => goTo(event.clientY - event.currentTarget.getBoundingClientRect().top)}
-          // Built by our own drawing, every text in it escaped.
-          dangerouslySetInnerHTML={{ __html: drawing }}
-        />
+      <p class="chart-heads" aria-hidden="true">
+        <span>nm</span>
+        <span />
+        <span>order</span>
+        <span title="Colour change a nanometre">ΔE/nm</span>
+        <span title="A like colour of another order, at that thickness">like</span>
+      </p>
+      <div class="chart-window">
+        <div
+          ref={scroller}
+          class="chart-scroll"
+          role="slider"
+          tabIndex={0}
+          aria-label="Thickness on the colour ruler"
+          aria-orientation="vertical"
+          aria-valuemin={0}
+          aria-valuemax={endNm}
+          aria-valuenow={at}
+          aria-valuetext={`${at} nanometres, order ${orderAt(at, view.orderBoundariesNm)}`}
+          onScroll={onScroll}
+          onKeyDown={onKeyDown}
+        >
+          <svg
+            viewBox={`0 0 ${width} ${endNm}`}
+            width={width}
+            height={endNm}
+            aria-hidden="true"
+            onClick={(event) => goTo(event.clientY - event.currentTarget.getBoundingClientRect().top)}
+            // Built by our own drawing, every text in it escaped.
+            dangerouslySetInnerHTML={{ __html: drawing }}
+          />
+        </div>
+        <i class="chart-line" aria-hidden="true" />
       </div>
-      <i class="chart-line" aria-hidden="true" />
     </div>
   );
 }

@@ -23,7 +23,7 @@ export function TakeAway({ view, setup }: { readonly view: ChartView; readonly s
     }
   };
   return (
-    <section aria-label="Take away" class="chart-takeaway">
+    <section aria-label="Save" class="chart-takeaway">
       <button type="button" class="primary" onClick={() => print()}>
         Print a pocket card
       </button>

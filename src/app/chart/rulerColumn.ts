@@ -15,7 +15,7 @@ export interface ColumnPlace {
 
 /** Largest number of coloured strips: finer than any eye or printer tells on a ruler. */
 const MOST_STRIPS = 1000;
-/** Shares of the column's width: figures, colour, orders, sensitivity; look-alikes take the rest. */
+/** Shares of the column's width: figures, colour, orders, sensitivity; look-alikes take the rest. `.chart-heads` has the same. */
 const PARTS = { labels: 0.18, band: 0.37, orders: 0.1, sensitivity: 0.13 } as const;
 
 /** "rgb(1,2,3)" of the chart at a thickness. */
