@@ -96,7 +96,7 @@ describe('reading the ruler', () => {
     await readsNm(2000);
     await chart.page.getByRole('button', { name: 'Thicker by 5 nm' }).click();
     await readsNm(2000);
-    await chart.page.keyboard.press('Home');
+    await ruler().press('Home');
     await readsNm(0);
     expect(await ruler().getAttribute('aria-valuetext')).toBe('0 nanometres, order 1');
   });
