@@ -19,6 +19,8 @@ export interface ServedPageOptions {
   /** Packages that the module uses; named, or Vite finds them in mid-test and reloads the page. */
   readonly packages: readonly string[];
   readonly context?: BrowserContextOptions;
+  /** Sent with the page as its Content-Security-Policy. */
+  readonly policy?: string;
 }
 
 export async function openServedPage({
@@ -26,6 +28,7 @@ export async function openServedPage({
   ready,
   packages,
   context,
+  policy,
 }: ServedPageOptions): Promise<ServedPage> {
   const project = dirname(dirname(import.meta.dirname));
   const server = await createServer({
@@ -40,6 +43,7 @@ export async function openServedPage({
   });
   server.middlewares.use('/blank', (_request, response) => {
     response.setHeader('content-type', 'text/html');
+    if (policy) response.setHeader('content-security-policy', policy);
     response.end(
       `<!doctype html><html lang="en"><meta name="viewport" content="width=device-width"><title>Test</title><div id="app"></div><script type="module" src="${module}"></script></html>`,
     );
