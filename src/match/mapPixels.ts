@@ -126,13 +126,10 @@ export function mapRows(
       const count = records[offset]!;
       let chosen = 0;
       let margin = Number.POSITIVE_INFINITY;
-      if (settled) {
+      if (count > 1 && settled) {
         const neighbours = settledAround(settled, x, y, nearby);
-        if (count > 1 || neighbours.margin < rules.ambiguityMargin) {
-          const choice = choose(records, offset, count, nearby, neighbours.count);
-          chosen = choice;
-          margin = neighbours.margin;
-        }
+        chosen = choose(records, offset, count, nearby, neighbours.count);
+        margin = neighbours.margin;
       } else if (count > 1) {
         margin = (records[offset + 2 + MODE_FIELDS + 3]! - records[offset + 2 + 3]!) / 2;
       }

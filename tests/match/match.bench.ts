@@ -14,12 +14,27 @@ import { SCENES } from '../../src/scene/catalogue.ts';
 import { CONDITIONS } from '../../src/scene/conditions.ts';
 import { plainSemiGlobal } from './plainSemiGlobal.ts';
 
-const scene = SCENES['soap-draining']({ width: 640, height: 480, seed: 1, conditions: CONDITIONS.stated });
-const jpeg = await sharp(Buffer.from(scene.codes), { raw: { width: 640, height: 480, channels: 3 } })
+const WIDTH = 2000;
+const HEIGHT = 1500;
+
+const scene = SCENES['soap-draining']({
+  width: WIDTH,
+  height: HEIGHT,
+  seed: 1,
+  conditions: CONDITIONS.stated,
+});
+const jpeg = await sharp(Buffer.from(scene.codes), { raw: { width: WIDTH, height: HEIGHT, channels: 3 } })
   .jpeg({ quality: 90, chromaSubsampling: '4:2:0' })
   .toBuffer();
 const codes = new Uint8Array(await sharp(jpeg).raw().toBuffer());
-const pixels: PhotoPixels = { width: 640, height: 480, codes, channels: 3, maxCode: 255, encoding: SRGB };
+const pixels: PhotoPixels = {
+  width: WIDTH,
+  height: HEIGHT,
+  codes,
+  channels: 3,
+  maxCode: 255,
+  encoding: SRGB,
+};
 const leftOut = leftOutOf(pixels, scene.setup);
 const activity = activityMap(pixels);
 const calibration = calibrate(pixels, scene.setup, leftOut, activity);
@@ -27,7 +42,7 @@ const chart = calibration.charts[0]!;
 
 /** Thickness of the nearest chart colour for every pixel, trying every label. */
 function bruteForce(): Float32Array {
-  const out = new Float32Array(640 * 480);
+  const out = new Float32Array(WIDTH * HEIGHT);
   for (let i = 0; i < out.length; i++) {
     let best = Number.POSITIVE_INFINITY;
     let at = 0;
@@ -54,14 +69,14 @@ const tree = KDTree.fromAxes(
   Array.from({ length: chart.count }, (_, j) => j),
 );
 
-const once = { iterations: 3, warmupIterations: 0, time: 0, warmupTime: 0 };
+const once = { iterations: 2, warmupIterations: 0, time: 0, warmupTime: 0 };
 
-describe('match of 0.3 megapixels: full posterior of every colour against nearest chart colour', () => {
+describe('match of 3 megapixels: full posterior of every colour against nearest chart colour', () => {
   bench(
     'ours: modes with intervals, each colour once',
     () => {
       const reader = makePixelReader(pixels, activity, calibration.charts);
-      for (let y = 0; y < 480; y++) for (let x = 0; x < 640; x++) reader.lookUp(x, y);
+      for (let y = 0; y < HEIGHT; y++) for (let x = 0; x < WIDTH; x++) reader.lookUp(x, y);
     },
     once,
   );
@@ -69,7 +84,7 @@ describe('match of 0.3 megapixels: full posterior of every colour against neares
   bench(
     'k-d tree (mnemonist): nearest chart colour',
     () => {
-      for (let i = 0; i < 640 * 480; i++)
+      for (let i = 0; i < WIDTH * HEIGHT; i++)
         tree.nearestNeighbor([codes[3 * i]!, codes[3 * i + 1]!, codes[3 * i + 2]!]);
     },
     once,
@@ -77,7 +92,7 @@ describe('match of 0.3 megapixels: full posterior of every colour against neares
 });
 
 describe('orders of 160 x 120 places: sparse readings against a full label grid', () => {
-  const field = makeCandidateField(160, 120, 4);
+  const field = makeCandidateField(160, 120, 12);
   fillCandidates(
     pixels,
     makePixelReader(pixels, activity, calibration.charts),
