@@ -95,7 +95,7 @@ export function quayObservation(): Observation {
     createdUtc: '2025-05-14T11:40:00Z',
     changedUtc: '2025-05-14T11:45:30.5Z',
     madeWith: { app: '0.1.0', model: '1' },
-    observer: { role: 'harbour watch', organisation: 'Port of Lyse', incident: 'LY-2025-007' },
+    observer: { role: 'harbour watch', organisation: 'Port of Ambrel', incident: 'AM-2025-007' },
     time: {
       utc: '2025-05-14T11:32:07Z',
       recorded: '2025-05-14T10:32:07-01:00',
