@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { chartCsv } from '../../src/app/chart/chartCsv.ts';
 import { chartEndNm, chartSvg, pocketCardSvg } from '../../src/app/chart/chartSvg.ts';
 import {
-  halfIntervalNm,
+  intervalAt,
   LIKE_DELTA_E,
   likeColours,
   markedPairs,
@@ -14,7 +14,7 @@ import {
 import { certaintyWords } from '../../src/app/chart/ReadingPanel.tsx';
 import { colourAt, labelStepNm, strips } from '../../src/app/chart/rulerColumn.ts';
 import { chartSetup, fileStem, setupLines } from '../../src/app/chart/setupWords.ts';
-import { STATED_NOISE_DELTA_E, STATED_WIDTH_NM } from '../../src/chart/chartView.ts';
+import { STATED_NOISE_DELTA_E } from '../../src/chart/chartView.ts';
 import { chartFor } from '../../src/engine/chartFor.ts';
 import type { Setup } from '../../src/engine/setup.ts';
 import { scratch, tool } from '../record/tools.ts';
@@ -75,12 +75,34 @@ describe('like colours', () => {
 });
 
 describe('how well a colour tells', () => {
-  it('agrees with the resolvable range at its end', () => {
-    const { toNm } = diesel.resolvableNm;
-    expect(2 * halfIntervalNm(diesel, toNm)).toBeLessThanOrEqual(STATED_WIDTH_NM);
-    expect(2 * halfIntervalNm(diesel, toNm + 1)).toBeGreaterThan(STATED_WIDTH_NM);
-    expect(placeInRange(diesel, toNm)).toBe('within');
-    expect(placeInRange(diesel, toNm + 1)).toBe('tooThick');
+  it('gives the stretch that noise of 2 leaves at 90 %, as culori measures it', () => {
+    const within = 1.6449 * NOISE_DELTA_E;
+    for (const nm of [30, 150, 250, 435, 520, 700, 1000, 1200]) {
+      const { lowNm, highNm } = intervalAt(diesel, nm);
+      for (const j of [lowNm, highNm]) expect(outsideDifference(lab(nm), lab(j))).toBeLessThanOrEqual(within);
+      if (lowNm > 0) expect(outsideDifference(lab(nm), lab(lowNm - 1))).toBeGreaterThan(within);
+      expect(outsideDifference(lab(nm), lab(highNm + 1))).toBeGreaterThan(within);
+    }
+  });
+
+  it('agrees with the slope that the resolvable range is stated by, where the chart is straight', () => {
+    const straight = [310, 320, 330, 505, 510];
+    for (const nm of straight) {
+      const { lowNm, highNm } = intervalAt(diesel, nm);
+      const bySlope = (2 * 1.6449 * NOISE_DELTA_E) / (diesel.sensitivityPerNm[nm] ?? 0);
+      // Ends lie on whole nanometres, so up to 2 nm narrower; curvature is under a tenth here.
+      expect(Math.abs(highNm - lowNm - bySlope)).toBeLessThan(2 + 0.1 * bySlope);
+    }
+  });
+
+  it('knows the ends of the resolvable range', () => {
+    const { fromNm, toNm } = diesel.resolvableNm;
+    expect([fromNm - 1, fromNm, toNm, toNm + 1].map((nm) => placeInRange(diesel, nm))).toEqual([
+      'tooThin',
+      'within',
+      'within',
+      'tooThick',
+    ]);
   });
 
   it('says so in words, and claims nothing where colour is gone', () => {

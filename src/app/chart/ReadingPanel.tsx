@@ -1,10 +1,14 @@
 import type { ChartView } from '../../engine/contract.ts';
 import { intervalText, orderText } from '../words/numbers.ts';
-import { halfIntervalNm, type LikeColour, orderAt, placeInRange } from './likeColours.ts';
+import { chartEndNm } from './chartSvg.ts';
+import { intervalAt, type LikeColour, orderAt, placeInRange } from './likeColours.ts';
 import { colourAt } from './rulerColumn.ts';
 
 const STEP_NM = 5;
-const MOST_LIKE = 4;
+/** About one order of any film: an interval as wide tells nothing that the order did not. */
+const WIDEST_NM = 200;
+/** What one row of a phone holds. */
+const MOST_LIKE = 3;
 
 /** What the colour under the line can say, in one sentence. */
 export function certaintyWords(view: ChartView, nm: number): string {
@@ -14,9 +18,11 @@ export function certaintyWords(view: ChartView, nm: number): string {
     const bound = Math.floor(view.resolvableNm.toNm / 50) * 50;
     return `Too pale to tell: say at least ${bound.toLocaleString('en-GB')} nm.`;
   }
-  const half = halfIntervalNm(view, nm);
-  if (half > nm) return 'The colour hardly changes here: one look does not tell the thickness.';
-  return `If the order is known, ${intervalText(nm - half, nm + half)} nm (90\u00a0%).`;
+  const { lowNm, highNm } = intervalAt(view, nm);
+  if (highNm - lowNm > WIDEST_NM || highNm >= chartEndNm(view)) {
+    return 'The colour hardly changes here: a look does not tell.';
+  }
+  return `If the order is known, ${intervalText(lowNm, highNm)} nm (90\u00a0%).`;
 }
 
 /** The thickness under the line: colour, order, how well it can be told, and where else the colour comes back. */
@@ -46,13 +52,13 @@ export function ReadingPanel({
           +
         </button>
       </div>
-      <p class="small quiet">{certaintyWords(view, at)}</p>
+      <p class="small quiet chart-certainty">{certaintyWords(view, at)}</p>
       <div class="chart-likes">
         {alike.length === 0 ? (
           <p class="small quiet">No other order has this colour.</p>
         ) : (
           <>
-            <p class="small quiet">Looks like</p>
+            <p class="small quiet">Like</p>
             {alike.slice(0, MOST_LIKE).map(({ thicknessNm, order }) => (
               <button
                 key={thicknessNm}

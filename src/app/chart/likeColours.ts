@@ -60,12 +60,24 @@ export function markedPairs(view: ChartView): ChartView['lookAlikes'] {
 }
 
 /**
- * What the stated noise leaves of a reading at `nm`, the order given: half the 90 % interval, nm. Infinite where the
- * colour does not change.
+ * What the stated noise leaves of a reading at `nm`, the order given: the stretch around it whose colours lie within
+ * 1.645 standard deviations of the noise. Walked colour by colour, because the chart turns back at its extremes, where a
+ * slope would promise nothing or too much. An end at the chart's own end means: or beyond.
  */
-export function halfIntervalNm(view: ChartView, nm: number): number {
-  const perNm = view.sensitivityPerNm[rowAt(view, nm)] ?? 0;
-  return perNm > 0 ? (COVER_90 * NOISE_DELTA_E) / perNm : Number.POSITIVE_INFINITY;
+export function intervalAt(view: ChartView, nm: number): { lowNm: number; highNm: number } {
+  const own = rowAt(view, nm);
+  const walk = (step: number) => {
+    let j = own;
+    while (
+      j + step >= 0 &&
+      j + step < view.count &&
+      deltaE2000(view.lab, own, view.lab, j + step) <= COVER_90 * NOISE_DELTA_E
+    ) {
+      j += step;
+    }
+    return j * view.stepNm;
+  };
+  return { lowNm: walk(-1), highNm: walk(1) };
 }
 
 /** Whether a colour alone can tell this thickness, given its order. */

@@ -15,17 +15,21 @@ export function useRuler(at: number, endNm: number, onMove: (nm: number) => void
     observer.observe(element);
     return () => observer.disconnect();
   }, []);
+  /** What our own scrolling last said. The page draws later than the finger moves: an older reading must not pull back. */
+  const said = useRef<number | null>(null);
   useEffect(() => {
-    const element = scroller.current;
-    // Only where someone else moved the reading: our own scrolling must not be pulled back to whole pixels.
-    if (element && clamp(element.scrollTop) !== at) element.scrollTop = at;
-  });
+    if (!scroller.current || at === said.current) return;
+    said.current = at;
+    scroller.current.scrollTop = at;
+  }, [at]);
   return {
     scroller,
     width,
     goTo: (nm: number) => onMove(clamp(nm)),
     onScroll: () => {
-      if (scroller.current) onMove(clamp(scroller.current.scrollTop));
+      if (!scroller.current) return;
+      said.current = clamp(scroller.current.scrollTop);
+      onMove(said.current);
     },
   };
 }
