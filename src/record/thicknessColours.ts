@@ -52,6 +52,9 @@ export function mapKeyColours(): readonly { readonly name: string; readonly colo
   ];
 }
 
+/** The ramp, worked out once: maps are also painted band by band. */
+let paintRamp: Uint8Array | null = null;
+
 export interface PaintedMap {
   readonly rgb: Uint8Array;
   /** Thickness at the light end of the ramp, nm; 0 is at the dark end. */
@@ -63,7 +66,8 @@ export interface PaintedMap {
  * for the rest. Ambiguous pixels carry a fine checker so that colour is not the only sign.
  */
 export function paintMap(map: ThicknessMap, topNm = niceTop(map)): PaintedMap {
-  const ramp = thicknessRamp();
+  paintRamp ??= thicknessRamp();
+  const ramp = paintRamp;
   const rgb = new Uint8Array(3 * map.status.length);
   for (let y = 0; y < map.height; y++) {
     for (let x = 0; x < map.width; x++) {
