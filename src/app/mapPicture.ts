@@ -23,7 +23,8 @@ export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order')
   const stride = Math.max(1, Math.ceil(Math.sqrt((map.width * map.height) / MOST_PIXELS)));
   const width = Math.ceil(map.width / stride);
   const height = Math.ceil(map.height / stride);
-  const topNm = view === 'thickness' ? niceTop(map) : 1;
+  const topNm = view === 'thickness' ? niceTop(thinBand(map, view, 0, height, stride, width)) : 1;
+  await pause();
   const pixels = new Uint8ClampedArray(4 * width * height);
   let turn = performance.now();
   for (let y = 0; y < height; y += BAND) {

@@ -78,7 +78,12 @@ export function createEngine(): Engine {
         });
         const read = await Promise.all(bands);
         await own;
-        last = await theLead().call('finish', { bands: read });
+        const buffers = read.flatMap((band) =>
+          [band.thicknessNm, band.lowNm, band.highNm, band.order, band.status].map(
+            (part) => part.buffer as ArrayBuffer,
+          ),
+        );
+        last = await theLead().call('finish', { bands: read }, { transfer: buffers });
         onProgress?.(1, 'done');
         return last;
       }, stop),

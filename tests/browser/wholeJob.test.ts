@@ -186,6 +186,26 @@ describe('the whole job in a real browser, offline', () => {
     await page.getByRole('button', { name: 'Remove this mark' }).waitFor();
   });
 
+  it('meets a corrupt photo with a sentence and goes on', async () => {
+    await page.getByRole('button', { name: 'Back to the start' }).click();
+    const whole = readFileSync('public/demo/soap-film.jpg');
+    for (const [name, bytes] of [
+      ['cut.jpg', whole.subarray(0, 900)],
+      ['empty.jpg', Buffer.alloc(0)],
+      ['text.png', Buffer.from('not a picture at all')],
+    ] as const) {
+      await page
+        .locator('input[type=file]')
+        .first()
+        .setInputFiles({ name, mimeType: 'image/jpeg', buffer: Buffer.from(bytes) });
+      const alert = page.getByRole('alert');
+      await alert.waitFor();
+      expect((await alert.textContent())?.length, name).toBeGreaterThan(20);
+    }
+    await page.getByText('Draining soap film').click();
+    await step('Map').waitFor();
+  });
+
   it('shows the chart and the sources', async () => {
     await page.goto(`${app.url}#/chart`);
     await page.locator('.chart:not([aria-busy="true"])').waitFor();
