@@ -107,7 +107,7 @@ describe('how well a colour tells', () => {
 
   it('says so in words, and claims nothing where colour is gone', () => {
     expect(certaintyWords(diesel, 0)).toBe('Too thin to tell from none by colour.');
-    expect(certaintyWords(diesel, 520)).toMatch(/^If the order is known, \d+ to \d+ nm \(90\u00a0%\)\.$/);
+    expect(certaintyWords(diesel, 520)).toMatch(/^Order known: \d+ to \d+ nm \(90\u00a0%\)\.$/);
     expect(certaintyWords(diesel, 1900)).toMatch(/^Too pale to tell: say at least 1,[23]\d0 nm\.$/);
   });
 });

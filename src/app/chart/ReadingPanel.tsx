@@ -20,9 +20,9 @@ export function certaintyWords(view: ChartView, nm: number): string {
   }
   const { lowNm, highNm } = intervalAt(view, nm);
   if (highNm - lowNm > WIDEST_NM || highNm >= chartEndNm(view)) {
-    return 'The colour hardly changes here: a look does not tell.';
+    return 'Hardly any change of colour: a look cannot tell.';
   }
-  return `If the order is known, ${intervalText(lowNm, highNm)} nm (90\u00a0%).`;
+  return `Order known: ${intervalText(lowNm, highNm)} nm (90\u00a0%).`;
 }
 
 /** The thickness under the line: colour, order, how well it can be told, and where else the colour comes back. */
