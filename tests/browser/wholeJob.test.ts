@@ -3,7 +3,9 @@ import { createRequire } from 'node:module';
 import { join } from 'node:path';
 import { gzipSync } from 'node:zlib';
 import type { Browser, BrowserContext, Page } from 'playwright-core';
+import sharp from 'sharp';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { TRUTH_CODES_PER_NM } from '../../src/scene/truthPicture.ts';
 import { type BuiltApp, serveBuiltApp } from './builtApp.ts';
 import { launchChromium } from './chromium.ts';
 
@@ -58,6 +60,24 @@ async function violations(): Promise<string[]> {
     const { violations: found } = await axe.run(document);
     return found.map((violation) => `${violation.id}: ${violation.nodes[0]?.html}`);
   });
+}
+
+/**
+ * Least and greatest true thickness of a demo photo about a place, nm: the truth is kept at every few pixels, and a tap
+ * on the fitted photo is only so precise.
+ */
+async function truthAbout(path: string, x: number, y: number): Promise<readonly [number, number]> {
+  const picture = sharp(path);
+  const { width, height } = await picture.metadata();
+  const codes = await picture.toColourspace('grey16').raw({ depth: 'ushort' }).toBuffer();
+  const found: number[] = [];
+  for (let dy = -1; dy <= 1; dy++) {
+    for (let dx = -1; dx <= 1; dx++) {
+      const at = (Math.floor(y * height) + dy) * width + Math.floor(x * width) + dx;
+      found.push(codes.readUInt16LE(2 * at) / TRUTH_CODES_PER_NM);
+    }
+  }
+  return [Math.min(...found), Math.max(...found)];
 }
 
 const step = (name: string) =>
@@ -142,6 +162,15 @@ describe('the whole job in a real browser, offline', () => {
     const words = (await reading.textContent()) ?? '';
     expect(words).toMatch(/^\d[\d,]* nm/);
     expect(words).toMatch(/order/);
+    const [, low, high] = /(\d[\d,]*) to (\d[\d,]*) nm/.exec(words) ?? [];
+    const [least, greatest] = await truthAbout(
+      'tests/scene/data/soap-film-truth.png',
+      470 / 1200,
+      800 / 1600,
+    );
+    expect(greatest - least).toBeLessThan(20);
+    expect(Number(low?.replace(',', ''))).toBeLessThanOrEqual(greatest);
+    expect(Number(high?.replace(',', ''))).toBeGreaterThanOrEqual(least);
     await picture('reading');
     expect(await violations()).toEqual([]);
     if (KEEP) {
