@@ -107,7 +107,8 @@ export function sensitivity(lab: ArrayLike<number>, stepNm: number): Float32Arra
 
 /**
  * Thicknesses over which noise of the stated size leaves a 90 % interval narrower than the stated width, the order
- * given: from the first to the last thickness whose sensitivity is enough.
+ * given: from the first thickness whose sensitivity is enough to where it first fails for longer than half that width
+ * (short turns of the colour path, where it stands still for a few nanometres, do not end the range).
  */
 export function resolvable(
   sensitivityPerNm: ArrayLike<number>,
@@ -116,12 +117,14 @@ export function resolvable(
   widthNm = STATED_WIDTH_NM,
 ): { fromNm: number; toNm: number } {
   const enough = (2 * COVER_90 * noiseDeltaE) / widthNm;
+  const longest = widthNm / 2 / stepNm;
   let from = -1;
   let to = 0;
   for (let j = 0; j < sensitivityPerNm.length; j++) {
-    if (sensitivityPerNm[j]! < enough) continue;
-    if (from < 0) from = j;
-    to = j;
+    if (sensitivityPerNm[j]! >= enough) {
+      if (from < 0) from = j;
+      to = j;
+    } else if (from >= 0 && j - to > longest) break;
   }
   return { fromNm: Math.max(0, from) * stepNm, toNm: to * stepNm };
 }

@@ -8,6 +8,8 @@ export interface LookAlike {
   readonly deltaE: number;
 }
 
+/** Neighbours across an order's end look alike of course; pairs closer than this say nothing. */
+const LEAST_APART_NM = 60;
 /** Grid of the search, nm: finer than any band. */
 const GRID_NM = 5;
 
@@ -34,7 +36,7 @@ export function lookAlikes(
         : deltaE2000(lab, i * stride, lab, j * stride);
   const found: LookAlike[] = [];
   for (let i = 0; i < count; i++) {
-    for (let j = i + 1; j < count; j++) {
+    for (let j = i + Math.ceil(LEAST_APART_NM / (stride * stepNm)); j < count; j++) {
       const own = at(i, j);
       if (!(own < within)) continue;
       if (own > at(i - 1, j) || own >= at(i + 1, j) || own > at(i, j - 1) || own >= at(i, j + 1)) continue;

@@ -284,7 +284,7 @@ describe('what is taken away', () => {
       const text = tool('pdftotext', ['-layout', path, '-']);
       expect(text).toContain('On fresh water of 20 °C, 0° from the vertical');
       expect(text).toContain('Daylight of 6500 K (overcast), seen by eye (CIE 1931 observer)');
-      expect(text).toMatch(/say "at least 1250 nm"/);
+      expect(text).toMatch(/say "at least 1200 nm"/);
       expect(text).toContain('Tintfathom 0.0.0-test');
       expect(text).not.toContain('Set-up');
       const card = await chart.page

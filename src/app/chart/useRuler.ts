@@ -28,8 +28,11 @@ export function useRuler(at: number, endNm: number, onMove: (nm: number) => void
     goTo: (nm: number) => onMove(clamp(nm)),
     onScroll: () => {
       if (!scroller.current) return;
-      said.current = clamp(scroller.current.scrollTop);
-      onMove(said.current);
+      const now = clamp(scroller.current.scrollTop);
+      // The echo of our own scrolling says nothing new, and may come after a key has already asked for another place.
+      if (now === said.current) return;
+      said.current = now;
+      onMove(now);
     },
   };
 }
