@@ -1,0 +1,116 @@
+import type { FitInput, Workspace } from './fitWorkspace.ts';
+
+/** A sample this many standard deviations off the chart is as likely an outlier as film. */
+const OUTLIER_DISTANCE = 4;
+/** Beyond this squared distance (in standard deviations) a sample is surely no film. */
+const DISTANT = 400;
+/** Labels this much less likely than the best (minus twice the log) are left out of the soft assignment. */
+const NEGLIGIBLE = 30;
+/** Labels within this many standard deviations of the nearest are looked at closely. */
+const WINDOW = 5.5;
+
+export interface Assignment {
+  /** Minus twice the log likelihood of the samples, outlier class included. */
+  readonly cost: number;
+  /** Squared distance from the chart, weighed by film membership. */
+  readonly square: number;
+  readonly film: number;
+}
+
+/** Soft assignment of every sample to the labels at noise `sd`; fills `weight`, `sum` and `sampleNm`. */
+export function assignSamples(
+  work: Workspace,
+  input: FitInput,
+  sd: number,
+  sampleNm: Float64Array,
+): Assignment {
+  const { chart, weight, sum, cost, tangent, reach } = work;
+  const { samples } = input;
+  const labels = weight.length;
+  const perCode = 1 / (sd * sd);
+  const outlier = Math.exp(-(OUTLIER_DISTANCE ** 2) / 2);
+  weight.fill(0);
+  sum.fill(0);
+  let total = 0;
+  let square = 0;
+  let film = 0;
+  for (let i = 0; i < sampleNm.length; i++) {
+    const r = samples[3 * i]!;
+    const g = samples[3 * i + 1]!;
+    const b = samples[3 * i + 2]!;
+    const from = input.allowed ? input.allowed[2 * i]! : 0;
+    const to = input.allowed ? input.allowed[2 * i + 1]! : labels;
+    let least = Number.POSITIVE_INFINITY;
+    for (let j = from; j < to; j++) {
+      const dr = r - chart[3 * j]!;
+      const dg = g - chart[3 * j + 1]!;
+      const db = b - chart[3 * j + 2]!;
+      const d = dr * dr + dg * dg + db * db;
+      cost[j] = d;
+      const gap = Math.sqrt(d) - reach[j]!;
+      const bound = gap > 0 ? gap * gap : 0;
+      if (bound < least) least = bound;
+    }
+    // Labels stand for stretches of the chart: where one could matter, its distance is that of the stretch.
+    const window = (Math.sqrt(least) + sd * WINDOW) ** 2;
+    least = Number.POSITIVE_INFINITY;
+    for (let j = from; j < to; j++) {
+      const gap = Math.sqrt(cost[j]!) - reach[j]!;
+      if (gap > 0 && gap * gap > window) {
+        cost[j] = Number.POSITIVE_INFINITY;
+        continue;
+      }
+      const s = slideOf(work, j, r, g, b);
+      const dr = r - chart[3 * j]! - s * tangent[3 * j]!;
+      const dg = g - chart[3 * j + 1]! - s * tangent[3 * j + 1]!;
+      const db = b - chart[3 * j + 2]! - s * tangent[3 * j + 2]!;
+      const d = (dr * dr + dg * dg + db * db) * perCode;
+      cost[j] = d;
+      if (d < least) least = d;
+    }
+    if (!(least < DISTANT)) {
+      total += OUTLIER_DISTANCE ** 2;
+      sampleNm[i] = Number.NaN;
+      continue;
+    }
+    let evidence = 0;
+    let moment = 0;
+    let distance = 0;
+    for (let j = from; j < to; j++) {
+      const excess = cost[j]! - least;
+      if (excess > NEGLIGIBLE) continue;
+      const w = Math.exp(-excess / 2);
+      evidence += w;
+      moment += w * (j + slideOf(work, j, r, g, b));
+      distance += w * cost[j]!;
+    }
+    const likelihood = Math.exp(-least / 2);
+    const membership = likelihood / (likelihood + outlier);
+    for (let j = from; j < to; j++) {
+      const excess = cost[j]! - least;
+      if (excess > NEGLIGIBLE) continue;
+      const w = (membership * Math.exp(-excess / 2)) / evidence;
+      const s = slideOf(work, j, r, g, b);
+      weight[j]! += w;
+      sum[3 * j]! += w * (r - s * tangent[3 * j]!);
+      sum[3 * j + 1]! += w * (g - s * tangent[3 * j + 1]!);
+      sum[3 * j + 2]! += w * (b - s * tangent[3 * j + 2]!);
+    }
+    total -= 2 * Math.log(likelihood + outlier);
+    square += (membership * (distance / evidence)) / perCode;
+    film += membership;
+    sampleNm[i] = membership > 0.5 ? (moment / evidence) * input.model.basis.stepNm : Number.NaN;
+  }
+  return { cost: total, square, film };
+}
+
+/** Where in its stretch (-1/2 .. 1/2 label) label j comes nearest to a colour. */
+function slideOf(work: Workspace, j: number, r: number, g: number, b: number): number {
+  const { chart, tangent, reach } = work;
+  const along =
+    (r - chart[3 * j]!) * tangent[3 * j]! +
+    (g - chart[3 * j + 1]!) * tangent[3 * j + 1]! +
+    (b - chart[3 * j + 2]!) * tangent[3 * j + 2]!;
+  const s = along / (4 * reach[j]! * reach[j]! + 1e-12);
+  return s < -0.5 ? -0.5 : Math.min(s, 0.5);
+}

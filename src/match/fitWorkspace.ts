@@ -1,0 +1,66 @@
+import type { CameraModel, ModelEvaluator } from './cameraModel.ts';
+import type { Prior } from './parameters.ts';
+
+/** A colour marked on the photo whose film is known: bare surface, a card, black. Codes of 255. */
+export interface ReferenceEvidence {
+  readonly kind: 'clean' | 'card' | 'dark';
+  readonly codes: readonly [number, number, number];
+  /** Standard deviation of that mean colour, with what the marked patch itself may vary. */
+  readonly sd: number;
+  /** Of a card: its reflectance, or null where only its colour counts. */
+  readonly reflectance: number | null;
+}
+
+export interface FitInput {
+  readonly model: CameraModel;
+  readonly prior: Prior;
+  readonly start: Float64Array;
+  /** Film colours, 3 a sample; may be empty: then only the references speak. */
+  readonly samples: Float64Array;
+  /** Standard deviation of a sample's colour, codes, all causes but the fitted ones. */
+  readonly sampleSd: number;
+  /** What one sample counts for, 0..1: samples of one photo share errors of compression and processing. */
+  readonly sampleWeight: number;
+  readonly references: readonly ReferenceEvidence[];
+  /** True when `start` is already near: the annealing is skipped. */
+  readonly near?: boolean;
+  /** Allowed labels of each sample as [from, to) rows, or null for all: orders already settled by neighbours or pins. */
+  readonly allowed?: Uint32Array | null;
+}
+
+/** Working arrays of one fit. */
+export interface Workspace {
+  readonly evaluator: ModelEvaluator;
+  readonly chart: Float64Array;
+  /** Change of the codes a label, and half its length: the stretch a label stands for. */
+  readonly tangent: Float64Array;
+  readonly reach: Float64Array;
+  /** Soft count of samples assigned to each label, and the sum of their codes. */
+  readonly weight: Float64Array;
+  readonly sum: Float64Array;
+  readonly cost: Float64Array;
+  readonly jacobian: Float64Array;
+  readonly hessian: Float64Array;
+  readonly gradient: Float64Array;
+  /** Fitted level of a card whose reflectance is not stated. */
+  cardLevel: number;
+}
+
+/** Draws the chart at a parameter vector, with the stretch that each label stands for. */
+export function drawChart(work: Workspace, parameters: Float64Array): void {
+  const { chart, tangent, reach, evaluator } = work;
+  const labels = reach.length;
+  evaluator.moveTo(parameters, false);
+  for (let j = 0; j < labels; j++) evaluator.codesAt(j, chart, 3 * j);
+  for (let j = 0; j < labels; j++) {
+    const before = Math.max(0, j - 1);
+    const after = Math.min(labels - 1, j + 1);
+    let square = 0;
+    for (let c = 0; c < 3; c++) {
+      const t = (chart[3 * after + c]! - chart[3 * before + c]!) / (after - before);
+      tangent[3 * j + c] = t;
+      square += t * t;
+    }
+    reach[j] = Math.sqrt(square) / 2;
+  }
+}
