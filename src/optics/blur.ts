@@ -13,7 +13,7 @@ const HERMITE: readonly (readonly [number, number])[] = [
   [1.355626179974266, 0.2220759220056126],
   [2.856970013872806, 0.011257411327720691],
 ];
-/** Phase spread (rad) that five nodes resolve; beyond it the rule is applied again to halves of the variance. */
+/** Phase spread (rad) that five nodes resolve; wider spreads go by the trapezium rule. */
 const RESOLVED_PHASE = 1;
 
 /**
