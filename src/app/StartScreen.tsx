@@ -4,7 +4,7 @@ import { keptPhoto, keptSetup } from './keep.ts';
 import { Icon } from './parts/Icon.tsx';
 import { ThemeButton } from './parts/ThemeButton.tsx';
 import { cancel, openPhoto } from './session.ts';
-import { failure, progress, STEPS, type Step, step } from './state.ts';
+import { beginMarking, failure, progress, STEPS, type Step, step } from './state.ts';
 
 const DEMOS = [
   { id: 'harbour', name: 'Sheen in a harbour' },
@@ -29,8 +29,10 @@ export function StartScreen() {
   };
   const again = async () => {
     const before = keptSetup();
-    if (!kept || !(await openPhoto(kept.blob, kept.name, before?.setup))) return;
-    if (before && STEPS.includes(before.step as Step)) step.value = before.step as Step;
+    const own = before?.name === kept?.name ? before : null;
+    if (!kept || !(await openPhoto(kept.blob, kept.name, own?.setup))) return;
+    if (own && STEPS.includes(own.step as Step)) step.value = own.step as Step;
+    if (step.value === 'mark') beginMarking();
   };
   const openDemo = async (id: (typeof DEMOS)[number]['id']) => {
     try {
@@ -52,30 +54,45 @@ export function StartScreen() {
       }}
     >
       <div class="bar">
+        <img class="sign" src="./icons/icon.svg" alt="" width="44" height="44" />
         <h1>Tintfathom</h1>
-        <a class="button" href="#/chart" aria-label="Colour chart">
+        <a class="button plain" href="#/chart" aria-label="Colour chart">
           <Icon name="chart" />
         </a>
-        <a class="button" href="#/about" aria-label="About">
+        <a class="button plain" href="#/about" aria-label="About">
           <Icon name="info" />
         </a>
         <ThemeButton />
       </div>
-      <p>
-        How thick is the film? The colours in a photo of oil on water, a soap film or a coating say it, with
-        an interval, on this phone, without a network.
+      <div class="hero">
+        <p class="lead">Every colour is a thickness.</p>
+        <img
+          src="./icons/film-band.svg"
+          alt="Colours of a soap film from 0 nm, black, through five orders to 1,000 nm"
+        />
+        <ol aria-hidden="true">
+          <li>0</li>
+          <li>250</li>
+          <li>500</li>
+          <li>750</li>
+          <li>1,000 nm</li>
+        </ol>
+      </div>
+      <p class="quiet">
+        Photograph oil on water, a soap film or a coating. Read how thick it is, and how sure that is, on this
+        device, without a network.
       </p>
       <p class="note small quiet">
         Indicative only. Vapour and wet edges hurt people: stay upwind, keep your footing, touch nothing,
         report first.
       </p>
       {failure.value ? (
-        <p role="alert" class="warn">
+        <p role="alert" class="note warn">
           {failure.value}
         </p>
       ) : null}
       <div class="low">
-        <h2>Try a made-up photo</h2>
+        <h2>Try it on a made-up photo</h2>
         <div class="demos">
           {DEMOS.map(({ id, name }) => (
             <button key={id} type="button" onClick={() => void openDemo(id)}>
@@ -94,12 +111,13 @@ export function StartScreen() {
           </section>
         ) : null}
         {kept ? (
-          <button type="button" onClick={() => void again()}>
+          <button type="button" class="plain" onClick={() => void again()}>
+            <Icon name="redo" />
             Go on with {kept.name}
           </button>
         ) : null}
         <label class="button">
-          <Icon name="save" />
+          <Icon name="open" />
           Open a photo
           <input class="hidden-input" type="file" accept="image/*,.heic,.heif,.avif" onChange={pick} />
         </label>

@@ -1,17 +1,19 @@
-import { useEffect, useState } from 'preact/hooks';
+import { useState } from 'preact/hooks';
 import type { Point } from '../engine/setup.ts';
-import { keepSetup } from './keep.ts';
-import { type MapPicture, mapPicture } from './mapPicture.ts';
 import { Icon, type IconName } from './parts/Icon.tsx';
 import { ThemeButton } from './parts/ThemeButton.tsx';
-import { Legend } from './reading/Legend.tsx';
+import { OrderScale, Scale } from './reading/Scale.tsx';
 import { cancel, closePhoto, measure, readAt } from './session.ts';
 import { Stage } from './stage/Stage.tsx';
+import { WipeHandle } from './stage/WipeHandle.tsx';
 import {
+  beginMarking,
   canRedo,
   canUndo,
   failure,
+  handing,
   mapView,
+  probe,
   progress,
   redo,
   result,
@@ -24,45 +26,36 @@ import { FilmStep } from './steps/FilmStep.tsx';
 import { LightStep } from './steps/LightStep.tsx';
 import { MapStep } from './steps/MapStep.tsx';
 import { MarkStep } from './steps/MarkStep.tsx';
+import { useMapPicture } from './useMapPicture.ts';
 
 const STEP_NAMES: Readonly<Record<Step, string>> = { film: 'Film', light: 'Light', mark: 'Mark', map: 'Map' };
 const NEXT: Readonly<Record<Step, Step | null>> = { film: 'light', light: 'mark', mark: 'map', map: null };
 
-/** The photo above, one decision below. */
+/** The photo above, one decision below; the map's scale is the edge between them. */
 export function WorkScreen() {
-  const [picture, setPicture] = useState<MapPicture | null>(null);
   const [corners, setCorners] = useState<readonly Point[]>([]);
   const measured = result.value;
-  const view = mapView.value;
-
-  useEffect(() => {
-    let stale = false;
-    setPicture(null);
-    if (!measured) return;
-    void mapPicture(measured.map, view).then((painted) => {
-      if (stale) painted.bitmap.close();
-      else setPicture(painted);
-    });
-    return () => {
-      stale = true;
-    };
-  }, [measured, view]);
+  const picture = useMapPicture(measured, mapView.value);
+  const current = step.value;
+  const busy = progress.value;
 
   const go = (next: Step) => {
     step.value = next;
-    keepSetup();
+    setCorners([]);
+    handing.value = false;
+    if (next === 'mark') beginMarking();
     if (next === 'map' && !result.value) void measure();
   };
-  const current = step.value;
   const next = NEXT[current];
-  const busy = progress.value;
+  const showsMap = current === 'map' && picture !== null;
 
   return (
     <main class="work">
       <Stage
-        map={current === 'map' ? (picture?.bitmap ?? null) : null}
+        map={showsMap ? picture.bitmap : null}
         onProbe={(at) => {
           step.value = 'map';
+          handing.value = false;
           void readAt(at);
         }}
         corners={corners}
@@ -72,34 +65,28 @@ export function WorkScreen() {
           <button type="button" class="over" onClick={closePhoto} aria-label="Back to the start">
             <Icon name="back" />
           </button>
-          <div class="bar">
-            <button type="button" class="over" onClick={undo} disabled={!canUndo.value} aria-label="Undo">
-              <Icon name="undo" />
-            </button>
-            <button type="button" class="over" onClick={redo} disabled={!canRedo.value} aria-label="Redo">
-              <Icon name="redo" />
-            </button>
-            <ThemeButton over />
-          </div>
+          <ThemeButton over />
         </div>
-        {picture && current === 'map' && view === 'thickness' ? (
-          <Legend ramp={picture.ramp} topNm={picture.topNm} />
-        ) : null}
+        {showsMap ? <WipeHandle /> : null}
       </Stage>
       <div class="sheet">
+        {showsMap ? (
+          mapView.value === 'order' ? (
+            <OrderScale ramp={picture.ramp} orders={picture.orders} />
+          ) : (
+            <Scale ramp={picture.ramp} topNm={picture.topNm} probe={probe.value} />
+          )
+        ) : null}
         <div class="content">
           {busy ? (
-            <section aria-label="Working" aria-live="polite">
+            <section aria-label="Working" aria-live="polite" class="busy">
               <h1>{busy.step}</h1>
               <progress value={busy.share} max={1} aria-label={busy.step} />
-              <button type="button" onClick={cancel}>
-                Stop
-              </button>
             </section>
           ) : (
             <>
               {failure.value ? (
-                <p role="alert" class="warn">
+                <p role="alert" class="note warn">
                   {failure.value}
                 </p>
               ) : null}
@@ -110,11 +97,32 @@ export function WorkScreen() {
             </>
           )}
         </div>
-        {next && !busy ? (
-          <button type="button" class="primary" onClick={() => go(next)}>
-            {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
+        <div class="act">
+          <button type="button" onClick={undo} disabled={!canUndo.value || !!busy} aria-label="Undo">
+            <Icon name="undo" />
           </button>
-        ) : null}
+          <button type="button" onClick={redo} disabled={!canRedo.value || !!busy} aria-label="Redo">
+            <Icon name="redo" />
+          </button>
+          {busy ? (
+            <button type="button" class="primary" onClick={cancel}>
+              Stop
+            </button>
+          ) : next ? (
+            <button type="button" class="primary" onClick={() => go(next)}>
+              {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
+            </button>
+          ) : measured ? (
+            <button type="button" class="primary" onClick={() => (handing.value = true)}>
+              <Icon name="save" />
+              Hand over
+            </button>
+          ) : (
+            <button type="button" class="primary" onClick={() => void measure()}>
+              Measure
+            </button>
+          )}
+        </div>
         <nav class="steps" aria-label="Steps">
           {STEPS.map((id) => (
             <button

@@ -1,7 +1,7 @@
 import { type ComponentType, render } from 'preact';
 import { useEffect, useState } from 'preact/hooks';
 import './app.css';
-import { restoreTheme } from './keep.ts';
+import { keepChanges, restoreTheme } from './keep.ts';
 import { StartScreen } from './StartScreen.tsx';
 import { image } from './state.ts';
 import { UpdatePrompt, watchForUpdates } from './update.tsx';
@@ -44,6 +44,7 @@ function App() {
 }
 
 restoreTheme();
+keepChanges();
 const root = document.getElementById('app');
 if (root) render(<App />, root);
 watchForUpdates();

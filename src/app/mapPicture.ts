@@ -4,6 +4,8 @@ export interface MapPicture {
   readonly bitmap: ImageBitmap;
   readonly topNm: number;
   readonly ramp: Uint8Array;
+  /** The highest interference order on the map, 0 where there is none. */
+  readonly orders: number;
 }
 
 /** Colours of orders: alternating light and dark of one ramp, so that neighbours always differ. */
@@ -47,6 +49,7 @@ export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order')
     bitmap: await createImageBitmap(new ImageData(pixels, width, height)),
     topNm,
     ramp: thicknessRamp(),
+    orders: highestOrder(map, stride),
   };
 }
 
@@ -73,7 +76,8 @@ function thinBand(
   return { width, height: rows, thicknessNm, lowNm: thicknessNm, highNm: thicknessNm, order: status, status };
 }
 
-function orderStep(order: number): number {
+/** Place on the ramp, 0 to 1, at which an order is painted in the order map. */
+export function orderStep(order: number): number {
   return order === 255 || order === 0 ? 0 : (ORDER_STEPS[(order - 1) % ORDER_STEPS.length] ?? 1);
 }
 
@@ -81,4 +85,14 @@ function orderStep(order: number): number {
 function opacityOf(status: number): number {
   if (status === PIXEL_STATUS.outside) return 0;
   return status === PIXEL_STATUS.noFilmColour ? 150 : 255;
+}
+
+/** The highest order among every `stride`-th pixel: a rarer one could not be seen on the stage. */
+function highestOrder({ order }: ThicknessMap, stride: number): number {
+  let highest = 0;
+  for (let i = 0; i < order.length; i += stride) {
+    const here = order[i] ?? 0;
+    if (here > highest && here !== 255) highest = here;
+  }
+  return highest;
 }

@@ -1,19 +1,20 @@
 import { Cancelled, type Job } from '../engine/contract.ts';
 import type { Engine } from '../engine/engine.client.ts';
 import type { Setup } from '../engine/setup.ts';
-import { forgetPhoto, keepPhoto, keepSetup } from './keep.ts';
+import { keepPhoto } from './keep.ts';
 import {
   begin,
-  change,
   DEFAULT_SETUP,
   failure,
   image,
+  mapView,
   probe,
   probeAt,
   progress,
   result,
   setup,
   step,
+  wipe,
 } from './state.ts';
 
 /** What runs between the screens and the engine: open, measure, probe, cancel. */
@@ -68,14 +69,21 @@ export async function openPhoto(blob: Blob, name: string, first?: Setup): Promis
   const current = await theEngine();
   const opened = await run((onProgress) => current.openPhoto(blob, name, onProgress), 'opening the photo');
   if (!opened) return false;
-  const bitmap = await previewOf(blob);
+  let bitmap: ImageBitmap;
+  try {
+    bitmap = await previewOf(blob);
+  } catch {
+    failure.value = 'This browser cannot show the photo. Open a JPEG or PNG copy of it.';
+    return false;
+  }
   image.value?.bitmap.close();
   image.value = { blob, name, bitmap, opened };
   probeAt.value = null;
   begin(first ?? { ...DEFAULT_SETUP, film: setup.value.film });
   step.value = first?.references ? 'map' : 'film';
+  wipe.value = 0;
+  mapView.value = 'thickness';
   void keepPhoto(blob, name);
-  keepSetup();
   return true;
 }
 
@@ -96,7 +104,6 @@ async function previewOf(blob: Blob): Promise<ImageBitmap> {
 /** Measures the open photo with the present set-up. */
 export async function measure(): Promise<void> {
   if (!image.value) return;
-  keepSetup();
   const current = await theEngine();
   result.value = null;
   probe.value = null;
@@ -114,18 +121,13 @@ export async function readAt(at: readonly [number, number]): Promise<void> {
   probe.value = await current.probe(at[0], at[1]);
 }
 
-export function changeAndKeep(next: Setup): void {
-  change(next);
-  keepSetup();
-}
-
-/** Back to the start; the photo is put away. */
+/** Back to the start. The photo and its marks stay on the device: the start offers to go on. */
 export function closePhoto(): void {
+  cancel();
   image.value?.bitmap.close();
   image.value = null;
   result.value = null;
   probe.value = null;
   probeAt.value = null;
   failure.value = null;
-  void forgetPhoto();
 }

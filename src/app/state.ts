@@ -1,6 +1,7 @@
 import { computed, signal } from '@preact/signals';
 import type { EstimateResult, OpenedPhoto, Probe } from '../engine/contract.ts';
 import type { FilmPreset, Point, Rectangle, Setup } from '../engine/setup.ts';
+import { hasMark, type MarkId } from './stage/grips.ts';
 
 /** The steps of a reading, in the order a person takes them. */
 export const STEPS = ['film', 'light', 'mark', 'map'] as const;
@@ -29,29 +30,47 @@ export const image = signal<OpenedImage | null>(null);
 export const step = signal<Step>('film');
 export const marking = signal<MarkKind>('clean');
 export const pinOrder = signal(2);
+/** The mark that handles and nudges act on. */
+export const selected = signal<MarkId | null>(null);
+/** A change under the finger: shown, not yet made. */
+export const draftSetup = signal<Setup | null>(null);
 export const result = signal<EstimateResult | null>(null);
 export const probe = signal<Probe | null>(null);
 export const probeAt = signal<Point | null>(null);
-/** Share of the photo's width from which the map is shown, 0 = all map, 1 = all photo. */
+/** Share of the stage's width from which the map is shown, 0 = all map, 1 = all photo. */
 export const wipe = signal(0);
 export const mapView = signal<'thickness' | 'order'>('thickness');
+/** Whether the files to take along are offered. */
+export const handing = signal(false);
 export const progress = signal<{ readonly share: number; readonly step: string } | null>(null);
 export const failure = signal<string | null>(null);
 export const theme = signal<'dark' | 'sunlight'>('dark');
 
 const MOST_UNDO = 100;
 
-/** Changes the set-up; the reading made with the old one is put aside. */
-export function change(next: Setup): void {
-  past.value = [...past.value.slice(-MOST_UNDO), setup.value];
+/** Nudges of one mark in a row are one thing to undo. */
+let lastSeries: string | null = null;
+
+/**
+ * Changes the set-up; the reading made with the old one is put aside.
+ * @param series changes in a row with the same name are undone together
+ */
+export function change(next: Setup, series: string | null = null): void {
+  if (series === null || series !== lastSeries)
+    past.value = [...past.value.slice(1 - MOST_UNDO), setup.value];
   future.value = [];
   replace(next);
+  lastSeries = series;
 }
 
 function replace(next: Setup): void {
+  lastSeries = null;
   setup.value = next;
   result.value = null;
+  handing.value = false;
   probe.value = null;
+  draftSetup.value = null;
+  if (selected.value && !hasMark(next, selected.value)) selected.value = null;
 }
 
 export function undo(): void {
@@ -60,6 +79,7 @@ export function undo(): void {
   future.value = [setup.value, ...future.value];
   past.value = past.value.slice(0, -1);
   replace(last);
+  if (!selected.value) chooseMarking(marking.value);
 }
 
 export function redo(): void {
@@ -68,6 +88,7 @@ export function redo(): void {
   past.value = [...past.value, setup.value];
   future.value = future.value.slice(1);
   replace(next);
+  if (!selected.value) chooseMarking(marking.value);
 }
 
 /** A fresh set-up for a newly opened photo. */
@@ -77,13 +98,31 @@ export function begin(next: Setup): void {
   replace(next);
 }
 
+/** A kind of mark to place; where the photo has a reference of that kind, its handles are shown. */
+export function chooseMarking(kind: MarkKind): void {
+  marking.value = kind;
+  const isReference = kind === 'clean' || kind === 'white' || kind === 'dark';
+  selected.value = isReference && setup.value.references?.[kind] ? { kind } : null;
+}
+
+/** The kind of mark to begin with: the reference that is there, else the one that suits the film. */
+export function beginMarking(): void {
+  const { clean, white, dark } = setup.value.references ?? {};
+  chooseMarking(
+    clean ? 'clean' : white ? 'white' : dark ? 'dark' : onWater(setup.value.film) ? 'clean' : 'white',
+  );
+}
+
 export function setReference(kind: 'clean' | 'white' | 'dark', rectangle: Rectangle | null): void {
   const { [kind]: _, ...others } = setup.value.references ?? {};
   change({ ...setup.value, references: rectangle ? { ...others, [kind]: rectangle } : others });
+  selected.value = rectangle ? { kind } : null;
 }
 
 export function addPin(at: Point, pin: { readonly is: 'bare' } | { readonly order: number }): void {
-  change({ ...setup.value, pins: [...(setup.value.pins ?? []), { at, ...pin }] });
+  const pins = [...(setup.value.pins ?? []), { at, ...pin }];
+  change({ ...setup.value, pins });
+  selected.value = { kind: 'pin', index: pins.length - 1 };
 }
 
 export function setRegion(region: readonly Point[] | null): void {

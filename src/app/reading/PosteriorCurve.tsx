@@ -1,73 +1,70 @@
 import type { Probe } from '../../engine/contract.ts';
 
 const WIDTH = 354;
-const HEIGHT = 84;
-const BASE = 64;
+const HEIGHT = 72;
+/** Room above the curves for the numbers of the orders. */
+const HEAD = 16;
+/** Least width of the interval's band, so that a sharp reading can still be seen. */
+const LEAST_BAND = 3;
 
-/** Path of a density, scaled so that the higher of the two curves fills the height. */
+/** Outline of a density over thickness, its own peak at full height. */
 function pathOf(
   thicknessNm: Float32Array,
   density: Float32Array,
-  top: number,
+  endNm: number,
   toX: (nm: number) => number,
 ): string {
-  let path = `M${toX(thicknessNm[0] ?? 0).toFixed(1)} ${BASE}`;
+  const top = density.reduce((most, value) => Math.max(most, value), 1e-12);
+  let path = `M0 ${HEIGHT}`;
+  let lastX = 0;
   for (let k = 0; k < density.length; k++) {
-    const y = BASE - (BASE - 6) * Math.min(1, (density[k] ?? 0) / top);
-    path += ` L${toX(thicknessNm[k] ?? 0).toFixed(1)} ${y.toFixed(1)}`;
+    const nm = thicknessNm[k] ?? 0;
+    if (nm > endNm) break;
+    lastX = toX(nm);
+    path += `L${lastX.toFixed(1)} ${(HEIGHT - (HEIGHT - HEAD) * ((density[k] ?? 0) / top)).toFixed(1)}`;
   }
-  return `${path} L${WIDTH} ${BASE}`;
+  return `${path}L${lastX.toFixed(1)} ${HEIGHT}`;
 }
 
-/** How likely each thickness is: by the pixel's own colour (line) and with its neighbours (filled), orders marked. */
-export function PosteriorCurve({ probe }: { readonly probe: Probe }) {
+/** How likely each thickness is: by the pixel's own colour (dashed line) and with its neighbours (filled), orders marked. */
+export function PosteriorCurve({ probe, endNm }: { readonly probe: Probe; readonly endNm: number }) {
   const { thicknessNm, posteriorAlone, posteriorWithNeighbours, orderBoundariesNm } = probe;
-  const last = thicknessNm[thicknessNm.length - 1] ?? 1;
-  const toX = (nm: number) => (nm / last) * WIDTH;
-  const top = Math.max(1e-9, ...posteriorAlone);
-  const topWith = Math.max(1e-9, ...posteriorWithNeighbours);
-  const ticks = [0, 0.25, 0.5, 0.75, 1].map((share) => Math.round((share * last) / 50) * 50);
+  const toX = (nm: number) => (nm / endNm) * WIDTH;
+  const starts = [0, ...orderBoundariesNm.filter((nm) => nm < endNm)];
+  const hasInterval = Number.isFinite(probe.mapLowNm) && Number.isFinite(probe.mapHighNm);
+  const bandWidth = Math.max(LEAST_BAND, toX(probe.mapHighNm) - toX(probe.mapLowNm));
   return (
     <svg
       class="curve"
       viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
+      preserveAspectRatio="none"
       role="img"
-      aria-label="How likely each thickness is, by colour alone and with the neighbours"
+      aria-label="How likely each thickness is: dashed by the colour alone, filled with the neighbours; dotted lines part the interference orders"
     >
-      {orderBoundariesNm
-        .filter((d) => d < last)
-        .map((d, i) => (
-          <g key={d}>
-            <line x1={toX(d)} x2={toX(d)} y1={4} y2={BASE} stroke="var(--line)" stroke-dasharray="2 4" />
-            <text x={toX(d) - 4} y={12} text-anchor="end" font-size="11" fill="var(--quiet)">
-              {i + 1}
-            </text>
+      {starts.map((nm, i) => {
+        const end = starts[i + 1] ?? endNm;
+        return (
+          <g key={nm}>
+            {i > 0 ? <line class="order" x1={toX(nm)} x2={toX(nm)} y1="2" y2={HEIGHT} /> : null}
+            {toX(end) - toX(nm) > 18 ? (
+              <text x={toX((nm + end) / 2)} y="11">
+                {i + 1}
+              </text>
+            ) : null}
           </g>
-        ))}
-      <path
-        d={pathOf(thicknessNm, posteriorWithNeighbours, topWith, toX)}
-        fill="var(--accent)"
-        fill-opacity="0.35"
-      />
-      <path
-        d={pathOf(thicknessNm, posteriorAlone, top, toX)}
-        fill="none"
-        stroke="var(--accent)"
-        stroke-width="2"
-      />
-      <line x1="0" x2={WIDTH} y1={BASE} y2={BASE} stroke="var(--line)" />
-      {ticks.map((nm, i) => (
-        <text
-          key={nm}
-          x={toX(nm)}
-          y={HEIGHT - 4}
-          font-size="11"
-          fill="var(--quiet)"
-          text-anchor={i === 0 ? 'start' : i === 4 ? 'end' : 'middle'}
-        >
-          {i === 4 ? `${nm} nm` : nm}
-        </text>
-      ))}
+        );
+      })}
+      {hasInterval ? (
+        <rect
+          class="band"
+          x={toX((probe.mapLowNm + probe.mapHighNm) / 2) - bandWidth / 2}
+          y={HEAD}
+          width={bandWidth}
+          height={HEIGHT - HEAD}
+        />
+      ) : null}
+      <path class="with" d={pathOf(thicknessNm, posteriorWithNeighbours, endNm, toX)} />
+      <path class="alone" d={pathOf(thicknessNm, posteriorAlone, endNm, toX)} />
     </svg>
   );
 }

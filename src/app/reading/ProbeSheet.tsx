@@ -1,15 +1,16 @@
 import type { Probe } from '../../engine/contract.ts';
+import { Icon } from '../parts/Icon.tsx';
+import { probeAt, probe as shownProbe } from '../state.ts';
 import { readingWords } from '../words/reading.ts';
-import { PosteriorCurve } from './PosteriorCurve.tsx';
 
 const css = (rgb: readonly number[]) => `rgb(${rgb.map((v) => Math.round(v)).join(' ')})`;
 
-/** A colour swatch drawn as SVG, because the page's security policy forbids inline style. */
+/** A colour drawn as SVG, because the page's security policy forbids inline style in markup. */
 function Swatch({ rgb, label }: { readonly rgb: readonly number[]; readonly label: string }) {
   return (
     <svg
-      class="swatch"
       viewBox="0 0 1 1"
+      preserveAspectRatio="none"
       role="img"
       aria-label={`${label} ${rgb.map((v) => Math.round(v)).join(', ')}`}
     >
@@ -22,22 +23,41 @@ function Swatch({ rgb, label }: { readonly rgb: readonly number[]; readonly labe
 export function ProbeSheet({
   probe,
   resolvableToNm,
+  calibrated,
 }: {
   readonly probe: Probe;
   readonly resolvableToNm: number;
+  readonly calibrated: boolean;
 }) {
   const words = readingWords(probe, resolvableToNm);
   return (
     <section aria-live="polite" aria-label="Reading">
-      <h1 class="reading">{words.big}</h1>
-      <p class="quiet">{words.quiet}</p>
-      <PosteriorCurve probe={probe} />
-      <div class="swatches">
-        <Swatch rgb={probe.seen} label="colour seen" />
-        {probe.matched ? <Swatch rgb={probe.matched} label="chart colour" /> : null}
-        <p class="small quiet">{probe.matched ? 'seen, and the chart’s colour' : 'seen'}</p>
+      <div class="headline">
+        <h1 class="reading">
+          {words.big}
+          <small>{words.quiet}</small>
+        </h1>
+        <figure class="swatch">
+          <div>
+            <Swatch rgb={probe.seen} label="Colour seen" />
+            {probe.matched ? <Swatch rgb={probe.matched} label="Chart colour" /> : null}
+          </div>
+          <figcaption>{probe.matched ? 'seen | chart' : 'seen'}</figcaption>
+        </figure>
+        <button
+          type="button"
+          class="plain"
+          aria-label="Close the reading"
+          onClick={() => {
+            shownProbe.value = null;
+            probeAt.value = null;
+          }}
+        >
+          <Icon name="remove" />
+        </button>
       </div>
       <p>{words.sentence}</p>
+      {calibrated ? null : <p class="badge warn">Uncalibrated: mark clean surface or a card</p>}
     </section>
   );
 }

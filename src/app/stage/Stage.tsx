@@ -1,20 +1,24 @@
 import type { ComponentChildren } from 'preact';
-import { useCallback, useEffect, useRef, useState } from 'preact/hooks';
+import { useEffect, useRef, useState } from 'preact/hooks';
 import type { Point, Rectangle } from '../../engine/setup.ts';
 import {
   addPin,
+  change,
+  draftSetup,
   image,
   marking,
   pinOrder,
   probeAt,
+  selected,
   setReference,
-  setRegion,
   setup,
   step,
   wipe,
 } from '../state.ts';
 import { drawStage } from './drawStage.ts';
-import { fitted, held, panned, type Size, toPhoto, type View, zoomed } from './viewTransform.ts';
+import { movedMark, withoutMark } from './grips.ts';
+import { useGestures } from './useGestures.ts';
+import { fitted, held, panned, recentred, type Size, toPhoto, type View, zoomed } from './viewTransform.ts';
 
 interface Props {
   readonly map: ImageBitmap | null;
@@ -28,46 +32,85 @@ interface Props {
 /** Side of a patch placed by a single tap, as a share of the photo's shorter side. */
 const TAP_PATCH = 0.06;
 const KEY_STEP = 40;
-/** Movement below this is a tap, CSS pixels: fingers in gloves are not steady. */
-const TAP_SLACK = 8;
+const ARROWS: Readonly<Record<string, readonly [number, number]>> = {
+  ArrowLeft: [-1, 0],
+  ArrowRight: [1, 0],
+  ArrowUp: [0, -1],
+  ArrowDown: [0, 1],
+};
+
+/** A rectangle of the given size about a place, kept on the photo. */
+function rectangleAbout(at: Point, width: number, height: number, photo: Size): Rectangle {
+  return [
+    Math.round(Math.min(photo.width - width, Math.max(0, at[0] - width / 2))),
+    Math.round(Math.min(photo.height - height, Math.max(0, at[1] - height / 2))),
+    width,
+    height,
+  ];
+}
 
 /** The photo as the stage: pan, pinch, wheel, keys; taps and drags mark or probe. */
 export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
   const canvas = useRef<HTMLCanvasElement>(null);
   const [size, setSize] = useState<Size>({ width: 390, height: 480 });
   const [view, setView] = useState<View | null>(null);
-  const [draft, setDraft] = useState<Rectangle | null>(null);
-  const [loupeAt, setLoupeAt] = useState<Point | null>(null);
-  const pointers = useRef(new Map<number, { x: number; y: number; startX: number; startY: number }>());
-  const moved = useRef(false);
   const shown = image.value;
   const photo: Size = shown
     ? { width: shown.opened.width, height: shown.opened.height }
     : { width: 1, height: 1 };
-  const current = view ?? fitted(photo, size);
+  const whole = fitted(photo, size);
+  const current = view ?? whole;
   const isMark = step.value === 'mark';
-  const draws =
-    isMark && (marking.value === 'clean' || marking.value === 'white' || marking.value === 'dark');
 
   useEffect(() => {
     const element = canvas.current;
     if (!element) return;
+    let before: Size | null = null;
     const observer = new ResizeObserver(() => {
-      setSize({ width: element.clientWidth, height: element.clientHeight });
-      setView(null);
+      const after = { width: element.clientWidth, height: element.clientHeight };
+      const old = before;
+      before = after;
+      setSize(after);
+      if (old) setView((now) => (now ? recentred(now, old, after, photo) : null));
     });
     observer.observe(element);
     return () => observer.disconnect();
-  }, []);
+  }, [photo.width, photo.height]);
+
+  // A new photo is shown whole.
+  useEffect(() => setView(null), [shown]);
+
+  const place = (event: PointerEvent | WheelEvent | MouseEvent): readonly [number, number] => {
+    const box = canvas.current?.getBoundingClientRect();
+    return [event.clientX - (box?.left ?? 0), event.clientY - (box?.top ?? 0)];
+  };
+
+  const tap = (at: Point) => {
+    const inside: Point = [Math.floor(at[0]), Math.floor(at[1])];
+    if (!isMark) return onProbe(inside);
+    const kind = marking.value;
+    if (kind === 'region') return onCorner(inside);
+    if (kind === 'bare') return addPin(inside, { is: 'bare' });
+    if (kind === 'order') return addPin(inside, { order: pinOrder.value });
+    const side = Math.round(TAP_PATCH * Math.min(photo.width, photo.height));
+    const [, , width, height] = setup.value.references?.[kind] ?? [0, 0, side, side];
+    setReference(kind, rectangleAbout(at, width, height, photo));
+  };
+
+  const gestures = useGestures({ view: current, setView, photo, size, place, onTap: tap, onProbe });
 
   useEffect(() => {
     const element = canvas.current;
     const context = element?.getContext('2d');
     if (!element || !context || !shown) return;
     const ratio = Math.min(3, globalThis.devicePixelRatio || 1);
-    element.width = Math.round(size.width * ratio);
-    element.height = Math.round(size.height * ratio);
+    const width = Math.round(size.width * ratio);
+    const height = Math.round(size.height * ratio);
+    // Setting the size clears and allocates anew: only when it changed.
+    if (element.width !== width) element.width = width;
+    if (element.height !== height) element.height = height;
     context.setTransform(ratio, 0, 0, ratio, 0, 0);
+    const { rectangle } = gestures;
     drawStage(
       context,
       current,
@@ -76,119 +119,40 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
         ...photo,
         map,
         wipe: wipe.value,
-        setup: setup.value,
-        probeAt: probeAt.value,
-        draft: draft ? { rectangle: draft } : corners.length > 0 ? { corners } : null,
-        loupeAt,
+        setup: draftSetup.value ?? setup.value,
+        showMarks: step.value !== 'map',
+        selected: isMark ? selected.value : null,
+        handles: isMark ? marking.value : null,
+        probeAt: step.value === 'map' ? (gestures.probeDraft ?? probeAt.value) : null,
+        draft: rectangle ? { rectangle } : corners.length > 0 ? { corners } : null,
+        loupeAt: gestures.loupeAt,
       },
       size.width,
       size.height,
     );
   });
 
-  const place = useCallback((event: PointerEvent | WheelEvent): readonly [number, number] => {
-    const box = canvas.current?.getBoundingClientRect();
-    return [event.clientX - (box?.left ?? 0), event.clientY - (box?.top ?? 0)];
-  }, []);
+  const zoomBy = (factor: number, x = size.width / 2, y = size.height / 2) =>
+    setView(zoomed(current, factor, x, y, photo, size));
 
-  const inPhoto = (x: number, y: number): Point => {
-    const [px, py] = toPhoto(current, x, y);
-    return [Math.min(photo.width - 1, Math.max(0, px)), Math.min(photo.height - 1, Math.max(0, py))];
-  };
-
-  const tap = (at: Point) => {
-    const whole: Point = [Math.floor(at[0]), Math.floor(at[1])];
-    if (!isMark) return onProbe(whole);
-    const kind = marking.value;
-    if (kind === 'region') return onCorner(whole);
-    if (kind === 'bare') return addPin(whole, { is: 'bare' });
-    if (kind === 'order') return addPin(whole, { order: pinOrder.value });
-    const side = Math.round(TAP_PATCH * Math.min(photo.width, photo.height));
-    const left = Math.round(Math.min(photo.width - side, Math.max(0, at[0] - side / 2)));
-    const top = Math.round(Math.min(photo.height - side, Math.max(0, at[1] - side / 2)));
-    setReference(kind, [left, top, side, side]);
-  };
-
-  const down = (event: PointerEvent) => {
-    canvas.current?.setPointerCapture(event.pointerId);
-    const [x, y] = place(event);
-    pointers.current.set(event.pointerId, { x, y, startX: x, startY: y });
-    if (pointers.current.size === 1) {
-      moved.current = false;
-      if (isMark) setLoupeAt(inPhoto(x, y));
-    } else {
-      moved.current = true;
-      setDraft(null);
-      setLoupeAt(null);
-    }
-  };
-
-  const move = (event: PointerEvent) => {
-    const own = pointers.current.get(event.pointerId);
-    if (!own) return;
-    const [x, y] = place(event);
-    const all = [...pointers.current.values()];
-    if (all.length === 2) {
-      const other = all.find((p) => p !== own);
-      if (other) {
-        const before = Math.hypot(own.x - other.x, own.y - other.y);
-        const now = Math.hypot(x - other.x, y - other.y);
-        const centreX = (x + other.x) / 2;
-        const centreY = (y + other.y) / 2;
-        const next = zoomed(current, now / Math.max(1, before), centreX, centreY, photo, size);
-        setView(panned(next, (x - own.x) / 2, (y - own.y) / 2, photo, size));
-      }
-    } else {
-      if (Math.hypot(x - own.startX, y - own.startY) > TAP_SLACK) moved.current = true;
-      if (draws && moved.current) {
-        const a = inPhoto(own.startX, own.startY);
-        const b = inPhoto(x, y);
-        setDraft([
-          Math.round(Math.min(a[0], b[0])),
-          Math.round(Math.min(a[1], b[1])),
-          Math.max(1, Math.round(Math.abs(a[0] - b[0]))),
-          Math.max(1, Math.round(Math.abs(a[1] - b[1]))),
-        ]);
-      } else if (!draws && moved.current) setView(panned(current, x - own.x, y - own.y, photo, size));
-      if (isMark) setLoupeAt(inPhoto(x, y));
-    }
-    pointers.current.set(event.pointerId, { ...own, x, y });
-  };
-
-  const up = (event: PointerEvent) => {
-    const own = pointers.current.get(event.pointerId);
-    pointers.current.delete(event.pointerId);
-    setLoupeAt(null);
-    if (!own || event.type === 'pointercancel') return setDraft(null);
-    const kind = marking.value;
-    if (draft && (kind === 'clean' || kind === 'white' || kind === 'dark')) setReference(kind, draft);
-    else if (!moved.current) tap(inPhoto(own.x, own.y));
-    setDraft(null);
-  };
-
-  const wheel = (event: WheelEvent) => {
-    event.preventDefault();
-    const [x, y] = place(event);
-    setView(zoomed(current, Math.exp(-event.deltaY / 400), x, y, photo, size));
-  };
-
-  const middle = (): Point => inPhoto(size.width / 2, size.height / 2);
   const key = (event: KeyboardEvent) => {
-    const moves: Record<string, readonly [number, number]> = {
-      ArrowLeft: [KEY_STEP, 0],
-      ArrowRight: [-KEY_STEP, 0],
-      ArrowUp: [0, KEY_STEP],
-      ArrowDown: [0, -KEY_STEP],
-    };
-    const by = moves[event.key];
-    if (by) setView(panned(current, by[0], by[1], photo, size));
-    else if (event.key === '+' || event.key === '=')
-      setView(zoomed(current, 1.4, size.width / 2, size.height / 2, photo, size));
-    else if (event.key === '-')
-      setView(zoomed(current, 1 / 1.4, size.width / 2, size.height / 2, photo, size));
+    const by = ARROWS[event.key];
+    const mark = isMark ? selected.value : null;
+    if (by && mark) {
+      const one = event.shiftKey ? 10 : 2;
+      const grip = { mark, corner: null };
+      change(movedMark(setup.value, grip, by[0] * one, by[1] * one, photo), `move ${JSON.stringify(mark)}`);
+    } else if (by) setView(panned(current, -by[0] * KEY_STEP, -by[1] * KEY_STEP, photo, size));
+    else if (event.key === '+' || event.key === '=') zoomBy(1.4);
+    else if (event.key === '-') zoomBy(1 / 1.4);
     else if (event.key === '0') setView(null);
-    else if (event.key === 'Enter' || event.key === ' ') tap(middle());
-    else return;
+    else if (event.key === 'Escape' && mark) selected.value = null;
+    else if ((event.key === 'Delete' || event.key === 'Backspace') && mark)
+      change(withoutMark(setup.value, mark));
+    else if (event.key === 'Enter' || event.key === ' ') {
+      const [x, y] = toPhoto(current, size.width / 2, size.height / 2);
+      tap([x, y]);
+    } else return;
     event.preventDefault();
   };
 
@@ -199,27 +163,25 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
         ref={canvas}
         tabIndex={0}
         role="application"
-        aria-label="Photo. Arrows move it, plus and minus zoom, Enter marks or reads the middle."
-        onPointerDown={down}
-        onPointerMove={move}
-        onPointerUp={up}
-        onPointerCancel={up}
-        onWheel={wheel}
+        aria-label="Photo. Arrows move it or the chosen mark, plus and minus zoom, Enter marks or reads the middle, Delete removes the chosen mark."
+        onPointerDown={gestures.down}
+        onPointerMove={gestures.move}
+        onPointerUp={gestures.up}
+        onPointerCancel={gestures.up}
+        onWheel={(event) => {
+          event.preventDefault();
+          zoomBy(Math.exp(-event.deltaY / 400), ...place(event));
+        }}
         onKeyDown={key}
         onDblClick={(event) => {
-          const box = canvas.current?.getBoundingClientRect();
-          const x = event.clientX - (box?.left ?? 0);
-          const y = event.clientY - (box?.top ?? 0);
-          const isFitted = Math.abs(current.scale - fitted(photo, size).scale) < 1e-6;
-          setView(isFitted ? zoomed(current, 3, x, y, photo, size) : held(fitted(photo, size), photo, size));
+          // In marking, two quick taps are two marks.
+          if (isMark) return;
+          const isWhole = Math.abs(current.scale - whole.scale) < 1e-6;
+          if (isWhole) zoomBy(3, ...place(event));
+          else setView(held(whole, photo, size));
         }}
       />
       {children}
     </div>
   );
-}
-
-/** Corners closed into a region, where there are three or more. */
-export function closeRegion(corners: readonly Point[]): void {
-  if (corners.length >= 3) setRegion(corners);
 }

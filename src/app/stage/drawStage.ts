@@ -1,4 +1,6 @@
 import type { Point, Rectangle, Setup } from '../../engine/setup.ts';
+import type { MarkKind } from '../state.ts';
+import { type MarkId, sameMark } from './grips.ts';
 import { toScreen, type View } from './viewTransform.ts';
 
 export interface StagePicture {
@@ -9,6 +11,11 @@ export interface StagePicture {
   readonly map: ImageBitmap | null;
   readonly wipe: number;
   readonly setup: Setup;
+  /** Marks are put away while the map is read. */
+  readonly showMarks: boolean;
+  readonly selected: MarkId | null;
+  /** Kind of mark whose handles are shown. */
+  readonly handles: MarkKind | null;
   readonly probeAt: Point | null;
   /** Rectangle or corner list being drawn. */
   readonly draft: { readonly rectangle?: Rectangle; readonly corners?: readonly Point[] } | null;
@@ -33,7 +40,7 @@ export function drawStage(
   const h = picture.height * view.scale;
   context.drawImage(picture.photo, left, top, w, h);
   if (picture.map && picture.wipe < 1) {
-    const from = left + w * picture.wipe;
+    const from = width * picture.wipe;
     context.save();
     context.beginPath();
     context.rect(from, 0, width - from, height);
@@ -42,10 +49,10 @@ export function drawStage(
     context.restore();
     if (picture.wipe > 0) {
       context.fillStyle = '#fff';
-      context.fillRect(from - 1, Math.max(0, top), 2, Math.min(h, height));
+      context.fillRect(from - 1, 0, 2, height);
     }
   }
-  drawMarks(context, view, picture);
+  if (picture.showMarks) drawMarks(context, view, picture);
   if (picture.probeAt) drawProbe(context, view, picture.probeAt);
   if (picture.loupeAt) drawLoupe(context, view, picture, picture.loupeAt, width);
 }
@@ -61,7 +68,23 @@ function outline(context: CanvasRenderingContext2D, path: () => void, colour: st
   context.stroke();
 }
 
-function drawMarks(context: CanvasRenderingContext2D, view: View, { setup, draft }: StagePicture): void {
+/** Half the side of a handle, CSS pixels: what is seen; what can be touched is larger. */
+const HANDLE = 7;
+
+function drawMarks(
+  context: CanvasRenderingContext2D,
+  view: View,
+  { setup, draft, selected, handles }: StagePicture,
+): void {
+  const handle = (x: number, y: number, colour: string) => {
+    context.beginPath();
+    context.roundRect(x - HANDLE, y - HANDLE, 2 * HANDLE, 2 * HANDLE, 4);
+    context.fillStyle = colour;
+    context.fill();
+    context.lineWidth = 2;
+    context.strokeStyle = 'rgba(0,0,0,.75)';
+    context.stroke();
+  };
   const rectangle = (r: Rectangle, colour: string, label: string) => {
     const [x, y] = toScreen(view, r[0], r[1]);
     outline(
@@ -81,7 +104,12 @@ function drawMarks(context: CanvasRenderingContext2D, view: View, { setup, draft
   };
   for (const kind of ['clean', 'white', 'dark'] as const) {
     const r = setup.references?.[kind];
-    if (r) rectangle(r, COLOURS[kind], LABELS[kind]);
+    if (!r) continue;
+    rectangle(r, COLOURS[kind], LABELS[kind]);
+    if (!sameMark(selected, { kind })) continue;
+    for (const px of [r[0], r[0] + r[2]]) {
+      for (const py of [r[1], r[1] + r[3]]) handle(...toScreen(view, px, py), COLOURS[kind]);
+    }
   }
   const polygon = (points: readonly Point[], close: boolean) =>
     outline(
@@ -98,22 +126,26 @@ function drawMarks(context: CanvasRenderingContext2D, view: View, { setup, draft
       '#ffe08a',
     );
   if (setup.region) polygon(setup.region, true);
+  if (setup.region && handles === 'region')
+    for (const at of setup.region) handle(...toScreen(view, at[0], at[1]), '#ffe08a');
   if (draft?.corners && draft.corners.length > 0) polygon(draft.corners, false);
   if (draft?.rectangle) rectangle(draft.rectangle, '#ffe08a', '');
-  for (const pin of setup.pins ?? []) {
+  setup.pins?.forEach((pin, index) => {
     const [x, y] = toScreen(view, pin.at[0], pin.at[1]);
-    outline(
-      context,
-      () => {
-        context.beginPath();
-        context.arc(x, y, 9, 0, 2 * Math.PI);
-      },
-      '#ffe08a',
-    );
-    context.fillStyle = '#ffe08a';
-    context.font = '700 13px system-ui';
-    context.fillText(pin.is === 'bare' ? '0' : String(pin.order), x - 4, y + 5);
-  }
+    const isSelected = sameMark(selected, { kind: 'pin', index });
+    context.beginPath();
+    context.arc(x, y, 12, 0, 2 * Math.PI);
+    context.fillStyle = isSelected ? '#ffe08a' : 'rgba(6,10,11,.8)';
+    context.fill();
+    context.lineWidth = 2;
+    context.strokeStyle = isSelected ? 'rgba(0,0,0,.75)' : '#ffe08a';
+    context.stroke();
+    context.fillStyle = isSelected ? '#060a0b' : '#ffe08a';
+    context.font = '700 14px system-ui';
+    context.textAlign = 'center';
+    context.fillText(pin.is === 'bare' ? '0' : String(pin.order), x, y + 5);
+    context.textAlign = 'start';
+  });
 }
 
 function drawProbe(context: CanvasRenderingContext2D, view: View, at: Point): void {

@@ -46,3 +46,12 @@ export function held(view: View, photo: Size, stage: Size): View {
     y: hold(view.y, photo.height * view.scale, stage.height),
   };
 }
+
+/** The same part of the photo in the middle, at the same scale, after the stage changed its size. */
+export function recentred(view: View, before: Size, after: Size, photo: Size): View {
+  const least = fitted(photo, after).scale;
+  const dx = (after.width - before.width) / 2;
+  const dy = (after.height - before.height) / 2;
+  if (view.scale < least) return fitted(photo, after);
+  return held({ scale: view.scale, x: view.x + dx, y: view.y + dy }, photo, after);
+}

@@ -1,11 +1,17 @@
-import { exportMap, exportRows, exportSummary } from '../handOver.ts';
-import { Icon } from '../parts/Icon.tsx';
 import { ProbeSheet } from '../reading/ProbeSheet.tsx';
-import { measure } from '../session.ts';
-import { image, mapView, probe, result, setup, wipe } from '../state.ts';
+import { handing, image, mapView, probe, result, setup, wipe } from '../state.ts';
+import { shareText } from '../words/numbers.ts';
 import { summaryWords } from '../words/reading.ts';
+import { HandOver } from './HandOver.tsx';
 
-/** The reading: measure, wipe, probe, hand over. */
+/** Wipe positions that a tap reaches, for those who do not drag. */
+const WIPES = [
+  ['Map', 0],
+  ['Half', 0.5],
+  ['Photo', 1],
+] as const;
+
+/** The reading: wipe, probe, hand over. */
 export function MapStep() {
   const done = result.value;
   if (!done) {
@@ -19,92 +25,76 @@ export function MapStep() {
             ? 'The photo’s own film colours will calibrate its camera.'
             : 'Without clean surface or a card the reading is uncalibrated. Marking one takes a tap.'}
         </p>
-        <button type="button" class="primary" onClick={() => void measure()}>
-          <Icon name="map" />
-          Measure
-        </button>
       </section>
     );
   }
+  if (handing.value) return <HandOver />;
   const { summary } = done;
+  const { counts } = summary;
+  const key = [
+    ['i-bare', 'bare surface', counts.bare],
+    ['i-unsure', 'order not sure', counts.ambiguous],
+    ['i-least', 'too thick for colour', counts.atLeast],
+    ['i-none', 'no film colour', counts.noFilmColour],
+  ] as const;
+  const notices = [...summary.notices.map((n) => n.text), ...(image.value?.opened.notices ?? [])];
   return (
     <section aria-label="Map">
       {probe.value ? (
-        <ProbeSheet probe={probe.value} resolvableToNm={summary.resolvableNm.toNm} />
+        <ProbeSheet
+          probe={probe.value}
+          resolvableToNm={summary.resolvableNm.toNm}
+          calibrated={summary.calibrated}
+        />
       ) : (
         <>
-          <h1>{summary.calibrated ? 'Tap the map to read it' : 'Uncalibrated: tap the map to read it'}</h1>
+          <h1>Tap the map to read it</h1>
+          <p class={summary.calibrated ? 'badge' : 'badge warn'}>
+            {summary.calibrated ? 'Calibrated by a reference' : 'Uncalibrated: mark clean surface or a card'}
+          </p>
           <p>{summaryWords(summary)}</p>
         </>
       )}
-      <label class="field">
-        <span class="small quiet">Photo left, map right: slide to compare</span>
-        <input
-          type="range"
-          min="0"
-          max="1"
-          step="0.01"
-          value={wipe.value}
-          onInput={(e) => (wipe.value = Number(e.currentTarget.value))}
-        />
-      </label>
-      <div class="row">
+      <div class="split">
+        <fieldset class="segments" aria-label="What the stage shows">
+          {WIPES.map(([name, share]) => (
+            <button
+              key={name}
+              type="button"
+              aria-pressed={wipe.value === share}
+              onClick={() => (wipe.value = share)}
+            >
+              {name}
+            </button>
+          ))}
+        </fieldset>
         <button
           type="button"
           class="plain"
+          aria-pressed={mapView.value === 'order'}
           onClick={() => (mapView.value = mapView.value === 'order' ? 'thickness' : 'order')}
         >
-          {mapView.value === 'order' ? 'Show thickness' : 'Show orders'}
-        </button>
-        <button type="button" class="plain" onClick={() => (probe.value = null)} disabled={!probe.value}>
-          Whole photo
+          Orders
         </button>
       </div>
-      <details>
-        <summary>Key, fit and notices</summary>
-        <ul class="key" aria-label="Key of the map">
-          <li>
-            <i class="i-bare" />
-            bare surface
-          </li>
-          <li>
-            <i class="i-unsure" />
-            order not sure
-          </li>
-          <li>
-            <i class="i-least" />
-            at least, past colour
-          </li>
-          <li>
-            <i class="i-none" />
-            no film colour
-          </li>
-        </ul>
-        {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
-        {[...summary.notices.map((n) => n.text), ...(image.value?.opened.notices ?? [])].map((text) => (
-          <p key={text} class="note small warn">
-            {text}
-          </p>
-        ))}
-      </details>
-      <details>
-        <summary>Hand over</summary>
-        <div class="row">
-          <button type="button" onClick={() => void exportMap()}>
-            <Icon name="save" />
-            Map PNG
-          </button>
-          <button type="button" onClick={exportRows}>
-            <Icon name="save" />
-            Rows CSV
-          </button>
-          <button type="button" onClick={exportSummary}>
-            <Icon name="save" />
-            Summary
-          </button>
-        </div>
-        <p class="small quiet">Indicative only: the responsible authority decides.</p>
-      </details>
+      <ul class="key" aria-label="Key of the map">
+        {key
+          .filter(([, , count]) => count > 0)
+          .map(([id, name, count]) => (
+            <li key={id}>
+              <i class={id} />
+              <span>
+                {name} <span class="quiet">{shareText(count, counts.inRegion)}</span>
+              </span>
+            </li>
+          ))}
+      </ul>
+      {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
+      {notices.map((text) => (
+        <p key={text} class="note small warn">
+          {text}
+        </p>
+      ))}
     </section>
   );
 }

@@ -1,20 +1,42 @@
-import type { Point } from '../../engine/setup.ts';
-import { changeAndKeep } from '../session.ts';
-import { closeRegion } from '../stage/Stage.tsx';
-import { type MarkKind, marking, onWater, pinOrder, setReference, setRegion, setup } from '../state.ts';
+import type { Point, Setup } from '../../engine/setup.ts';
+import { Icon } from '../parts/Icon.tsx';
+import {
+  change,
+  chooseMarking,
+  type MarkKind,
+  marking,
+  pinOrder,
+  selected,
+  setRegion,
+  setup,
+} from '../state.ts';
+import { CardLevel } from './CardLevel.tsx';
+import { NudgePad } from './NudgePad.tsx';
 
 const KINDS: readonly (readonly [MarkKind, string, string])[] = [
-  ['clean', 'Clean surface', 'Tap or drag over bare surface right beside the film: it is thickness 0.'],
-  [
-    'white',
-    'Grey card',
-    'Tap or drag over a grey card in the same light. White cards are easily too bright.',
-  ],
-  ['dark', 'Dark', 'Tap or drag over black film or deep shadow: it shows stray light.'],
+  ['clean', 'Clean surface', 'Tap bare surface right beside the film. It is thickness 0.'],
+  ['white', 'Grey card', 'Tap a grey card in the same light. White cards are easily too bright.'],
+  ['dark', 'Dark', 'Tap black film or deep shadow. It shows stray light.'],
   ['region', 'Region', 'Tap the corners of the part to look at, then close it.'],
   ['bare', 'Pin: bare', 'Tap where you know that there is no film.'],
   ['order', 'Pin: order', 'Tap where you know the interference order.'],
 ];
+
+const TITLES: Readonly<Record<MarkKind, string>> = {
+  clean: 'Mark clean surface',
+  white: 'Mark a grey card',
+  dark: 'Mark something dark',
+  region: 'Mark the region',
+  bare: 'Pin bare surface',
+  order: 'Pin an order',
+};
+
+function isMarked(kind: MarkKind, { references, region, pins }: Setup): boolean {
+  if (kind === 'region') return region !== undefined;
+  if (kind === 'bare') return pins?.some((pin) => pin.is === 'bare') ?? false;
+  if (kind === 'order') return pins?.some((pin) => pin.order !== undefined) ?? false;
+  return references?.[kind] !== undefined;
+}
 
 /** References, region and pins. */
 export function MarkStep({
@@ -25,32 +47,27 @@ export function MarkStep({
   readonly onClear: () => void;
 }) {
   const kind = marking.value;
-  const references = setup.value.references ?? {};
-  const marked = kind === 'clean' || kind === 'white' || kind === 'dark' ? references[kind] : undefined;
-  const { references: _r, pins: _p, region: _g, ...bare } = setup.value;
+  const { references: _r, pins: _p, region: _g, ...unmarked } = setup.value;
+  const hasMarks = KINDS.some(([id]) => isMarked(id, setup.value));
   return (
     <section aria-label="Mark">
-      <h1>{onWater(setup.value.film) ? 'Mark clean water' : 'Mark a reference'}</h1>
-      <div class="choices">
+      <h1>{selected.value ? 'Drag it, or tap the arrows' : TITLES[kind]}</h1>
+      <fieldset class="kinds" aria-label="What to mark">
         {KINDS.map(([id, name]) => (
-          <button key={id} type="button" aria-pressed={kind === id} onClick={() => (marking.value = id)}>
+          <button key={id} type="button" aria-pressed={kind === id} onClick={() => chooseMarking(id)}>
+            {isMarked(id, setup.value) ? <Icon name="tick" /> : null}
             {name}
           </button>
         ))}
-      </div>
-      <p class="quiet">{KINDS.find(([id]) => id === kind)?.[2]}</p>
+      </fieldset>
+      {selected.value ? <NudgePad /> : <p class="quiet">{KINDS.find(([id]) => id === kind)?.[2]}</p>}
       <div class="row">
-        {marked && (kind === 'clean' || kind === 'white' || kind === 'dark') ? (
-          <button type="button" class="plain" onClick={() => setReference(kind, null)}>
-            Remove this mark
-          </button>
-        ) : null}
         {kind === 'region' && corners.length >= 3 ? (
           <button
             type="button"
             class="primary"
             onClick={() => {
-              closeRegion(corners);
+              setRegion(corners);
               onClear();
             }}
           >
@@ -63,22 +80,17 @@ export function MarkStep({
             class="plain"
             onClick={() => {
               onClear();
-              setRegion(null);
+              if (setup.value.region) setRegion(null);
             }}
           >
             Look at the whole photo
-          </button>
-        ) : null}
-        {setup.value.pins?.length || setup.value.region || setup.value.references ? (
-          <button type="button" class="plain" onClick={() => changeAndKeep(bare)}>
-            Clear all marks
           </button>
         ) : null}
       </div>
       {kind === 'white' ? <CardLevel /> : null}
       {kind === 'order' ? (
         <label class="field">
-          Order
+          Order of the next pin
           <select value={pinOrder.value} onChange={(e) => (pinOrder.value = Number(e.currentTarget.value))}>
             {[1, 2, 3, 4, 5, 6].map((n) => (
               <option key={n} value={n}>
@@ -88,33 +100,11 @@ export function MarkStep({
           </select>
         </label>
       ) : null}
+      {hasMarks ? (
+        <button type="button" class="plain" onClick={() => change(unmarked)}>
+          Clear all marks
+        </button>
+      ) : null}
     </section>
-  );
-}
-
-function CardLevel() {
-  const references = setup.value.references ?? {};
-  return (
-    <label class="field">
-      Reflectance of the card, %, if it is stated on it
-      <input
-        class="entry"
-        type="number"
-        inputMode="decimal"
-        min="0.5"
-        max="100"
-        step="0.5"
-        value={references.whiteReflectance === undefined ? '' : references.whiteReflectance * 100}
-        onChange={(e) => {
-          const percent = Number(e.currentTarget.value);
-          const { whiteReflectance: _, ...others } = references;
-          const valid = percent >= 0.5 && percent <= 100;
-          changeAndKeep({
-            ...setup.value,
-            references: valid ? { ...others, whiteReflectance: percent / 100 } : others,
-          });
-        }}
-      />
-    </label>
   );
 }

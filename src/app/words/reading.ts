@@ -62,7 +62,10 @@ function nearest(probe: Probe, d: number) {
   return [...probe.readings].sort((a, b) => Math.abs(a.thicknessNm - d) - Math.abs(b.thicknessNm - d))[0];
 }
 
-/** One sentence on a whole map. */
+/** Coarsest interval whose rounding a median is given: medians of many pixels are sharper than one pixel. */
+const MEDIAN_WIDTH_NM = 20;
+
+/** Two sentences on a whole map. Its quantiles count bare surface as 0 nm. */
 export function summaryWords({ counts, quantilesNm }: EstimateSummary): string {
   const read = counts.measured + counts.ambiguous;
   if (!quantilesNm || read === 0) {
@@ -70,11 +73,14 @@ export function summaryWords({ counts, quantilesNm }: EstimateSummary): string {
       ? `Only bare surface: ${shareText(counts.bare, counts.inRegion)} of the region.`
       : 'No film colours were found in the region.';
   }
+  const parts = [`Film on ${shareText(read, counts.inRegion)} of the region`];
+  if (counts.bare > 0) parts.push(`bare surface on ${shareText(counts.bare, counts.inRegion)}`);
   const spread = quantilesNm.p95 - quantilesNm.p05;
-  const parts = [
-    `${shareText(read, counts.inRegion)} of the region shows film; the middle nine tenths of what was read span ${intervalText(quantilesNm.p05, quantilesNm.p95)} nm`,
-    `median ${thicknessText(quantilesNm.p50, Math.min(spread, 20))} nm`,
-  ];
-  if (counts.bare > 0) parts.push(`${shareText(counts.bare, counts.inRegion)} bare`);
-  return `${parts.join('; ')}.`;
+  const half = thicknessText(quantilesNm.p50, Math.min(spread, MEDIAN_WIDTH_NM));
+  const most = thicknessText(quantilesNm.p95, spread);
+  const spans =
+    half === '0'
+      ? `95 % of what was read is under ${most} nm`
+      : `Half of what was read is under ${half} nm, 95 % of it under ${most} nm`;
+  return `${parts.join(', ')}. ${spans}.`;
 }
