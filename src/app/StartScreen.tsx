@@ -56,10 +56,7 @@ export function StartScreen() {
       <div class="bar">
         <img class="sign" src="./icons/icon.svg" alt="" width="44" height="44" />
         <h1>Tintfathom</h1>
-        <a class="button plain" href="#/chart" aria-label="Colour chart">
-          <Icon name="chart" />
-        </a>
-        <a class="button plain" href="#/about" aria-label="About">
+        <a class="button" href="#/about" aria-label="About">
           <Icon name="info" />
         </a>
         <ThemeButton />
@@ -78,10 +75,12 @@ export function StartScreen() {
           <li>1,000 nm</li>
         </ol>
       </div>
-      <p class="quiet">
-        Photograph oil on water, a soap film or a coating. Read how thick it is, and how sure that is, on this
-        device, without a network.
-      </p>
+      {kept ? null : (
+        <p class="quiet">
+          Photograph oil on water, a soap film or a coating. Read how thick it is, and how sure that is, with
+          no network.
+        </p>
+      )}
       <p class="note small quiet">
         Indicative only. Vapour and wet edges hurt people: stay upwind, keep your footing, touch nothing,
         report first.
@@ -116,11 +115,17 @@ export function StartScreen() {
             Go on with {kept.name}
           </button>
         ) : null}
-        <label class="button">
-          <Icon name="open" />
-          Open a photo
-          <input class="hidden-input" type="file" accept="image/*,.heic,.heif,.avif" onChange={pick} />
-        </label>
+        <div class="row tight">
+          <label class="button">
+            <Icon name="open" />
+            Open a photo
+            <input class="hidden-input" type="file" accept="image/*,.heic,.heif,.avif" onChange={pick} />
+          </label>
+          <a class="button" href="#/chart">
+            <Icon name="chart" />
+            Colour chart
+          </a>
+        </div>
         <label class="button primary">
           <Icon name="photo" />
           Take a photo

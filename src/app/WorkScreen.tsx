@@ -77,7 +77,8 @@ export function WorkScreen() {
             <Scale ramp={picture.ramp} topNm={picture.topNm} probe={probe.value} />
           )
         ) : null}
-        <div class="content">
+        {/* A new element for each step, so that each begins at its top. */}
+        <div class="content" key={handing.value ? 'files' : current}>
           {busy ? (
             <section aria-label="Working" aria-live="polite" class="busy">
               <h1>{busy.step}</h1>

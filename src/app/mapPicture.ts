@@ -1,4 +1,5 @@
 import { PIXEL_STATUS, type ThicknessMap } from '../match/types.ts';
+import { inTurns, pause } from './turns.ts';
 
 export interface MapPicture {
   readonly bitmap: ImageBitmap;
@@ -14,10 +15,6 @@ const ORDER_STEPS = [0.35, 0.85, 0.5, 1, 0.6, 0.92, 0.45, 0.75];
 const MOST_PIXELS = 1_500_000;
 /** Rows painted at once: a multiple of the patterns' period. */
 const BAND = 32;
-/** Bands are painted in turns of about this long, ms, so that the page goes on answering. */
-const TURN_MS = 10;
-
-const pause = () => new Promise<void>((resolve) => setTimeout(resolve, 0));
 
 /** Paints a map for the stage, in short turns. The painter comes lazily: it brings the colour library. */
 export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order'): Promise<MapPicture> {
@@ -28,7 +25,7 @@ export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order')
   const topNm = view === 'thickness' ? niceTop(thinBand(map, view, 0, height, stride, width)) : 1;
   await pause();
   const pixels = new Uint8ClampedArray(4 * width * height);
-  let turn = performance.now();
+  const breathe = inTurns();
   for (let y = 0; y < height; y += BAND) {
     const rows = Math.min(BAND, height - y);
     const band = thinBand(map, view, y, rows, stride, width);
@@ -40,10 +37,7 @@ export async function mapPicture(map: ThicknessMap, view: 'thickness' | 'order')
       pixels[to++] = rgb[3 * i + 2] ?? 0;
       pixels[to++] = opacityOf(band.status[i] ?? 0);
     }
-    if (performance.now() - turn > TURN_MS) {
-      await pause();
-      turn = performance.now();
-    }
+    await breathe();
   }
   return {
     bitmap: await createImageBitmap(new ImageData(pixels, width, height)),

@@ -30,6 +30,10 @@ export function ProbeSheet({
   readonly calibrated: boolean;
 }) {
   const words = readingWords(probe, resolvableToNm);
+  const close = () => {
+    shownProbe.value = null;
+    probeAt.value = null;
+  };
   return (
     <section aria-live="polite" aria-label="Reading">
       <div class="headline">
@@ -37,6 +41,11 @@ export function ProbeSheet({
           {words.big}
           <small>{words.quiet}</small>
         </h1>
+        <button type="button" class="plain" aria-label="Close the reading" onClick={close}>
+          <Icon name="remove" />
+        </button>
+      </div>
+      <div class="seen">
         <figure class="swatch">
           <div>
             <Swatch rgb={probe.seen} label="Colour seen" />
@@ -44,19 +53,8 @@ export function ProbeSheet({
           </div>
           <figcaption>{probe.matched ? 'seen | chart' : 'seen'}</figcaption>
         </figure>
-        <button
-          type="button"
-          class="plain"
-          aria-label="Close the reading"
-          onClick={() => {
-            shownProbe.value = null;
-            probeAt.value = null;
-          }}
-        >
-          <Icon name="remove" />
-        </button>
+        <p>{words.sentence}</p>
       </div>
-      <p>{words.sentence}</p>
       {calibrated ? null : <p class="badge warn">Uncalibrated: mark clean surface or a card</p>}
     </section>
   );

@@ -31,15 +31,7 @@ export function Scale({
   }, [ramp, endNm, topNm]);
   return (
     <figure class="legend" aria-label="Thickness scale">
-      {probe ? (
-        <>
-          <PosteriorCurve probe={probe} endNm={endNm} />
-          <figcaption>
-            <span class="i-alone">by its colour</span>
-            <span class="i-with">with its neighbours</span>
-          </figcaption>
-        </>
-      ) : null}
+      {probe ? <PosteriorCurve probe={probe} endNm={endNm} /> : null}
       <canvas ref={canvas} width={256} height={1} />
       <ol>
         {ticksTo(endNm, 4).map(({ nm, text }) => (

@@ -61,6 +61,15 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
   const whole = fitted(photo, size);
   const current = view ?? whole;
   const isMark = step.value === 'mark';
+  // Read while rendering, so that the stage is drawn anew when one of them changes.
+  const shows = {
+    wipe: wipe.value,
+    setup: draftSetup.value ?? setup.value,
+    showMarks: step.value !== 'map',
+    selected: isMark ? selected.value : null,
+    handles: isMark ? marking.value : null,
+  };
+  const readAt = step.value === 'map' ? probeAt.value : null;
 
   useEffect(() => {
     const element = canvas.current;
@@ -118,12 +127,8 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
         photo: shown.bitmap,
         ...photo,
         map,
-        wipe: wipe.value,
-        setup: draftSetup.value ?? setup.value,
-        showMarks: step.value !== 'map',
-        selected: isMark ? selected.value : null,
-        handles: isMark ? marking.value : null,
-        probeAt: step.value === 'map' ? (gestures.probeDraft ?? probeAt.value) : null,
+        ...shows,
+        probeAt: readAt ? (gestures.probeDraft ?? readAt) : null,
         draft: rectangle ? { rectangle } : corners.length > 0 ? { corners } : null,
         loupeAt: gestures.loupeAt,
       },

@@ -89,6 +89,12 @@ export function MapStep() {
             </li>
           ))}
       </ul>
+      {probe.value ? (
+        <p class="small quiet">
+          Curve: dashed by the place’s own colour, filled with its neighbours; the numbers are interference
+          orders.
+        </p>
+      ) : null}
       {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
       {notices.map((text) => (
         <p key={text} class="note small warn">

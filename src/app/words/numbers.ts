@@ -29,10 +29,10 @@ export function orderText(order: number): string {
   return `${ORDINALS[order] ?? `${order}th`} order`;
 }
 
-/** "42 %", never "0 %" for something that is there. */
+/** "42 %", never "0 %" for something that is there; number and sign are not parted at a line's end. */
 export function shareText(part: number, whole: number): string {
-  if (whole <= 0) return '0 %';
+  if (whole <= 0) return '0\u00a0%';
   const percent = (100 * part) / whole;
-  if (percent > 0 && percent < 1) return 'under 1 %';
-  return `${Math.round(percent)} %`;
+  if (percent > 0 && percent < 1) return 'under 1\u00a0%';
+  return `${Math.round(percent)}\u00a0%`;
 }
