@@ -38,6 +38,44 @@ const stack = v.strictObject({
   substrate: material,
 });
 
+const stroke = v.strictObject({
+  paint: v.picklist(['in', 'out'] as const),
+  points: v.pipe(v.array(point), v.minLength(1, 'a stroke needs a point or more')),
+  widthPx: between(1, 10_000),
+});
+
+const view = v.pipe(
+  v.strictObject({
+    heightM: v.optional(between(0.05, 20_000)),
+    focal35mm: v.optional(between(5, 2000)),
+    horizon: v.optional(v.strictTuple([point, point])),
+    pitchDeg: v.optional(between(-90, 90)),
+    rollDeg: v.optional(between(-180, 180)),
+    pixelSizeM: v.optional(between(1e-6, 1000)),
+    radial: v.optional(between(-0.5, 0.5)),
+    knownLength: v.optional(
+      v.strictObject({
+        ends: v.strictTuple([point, point]),
+        lengthM: between(1e-4, 1e5),
+        sets: v.optional(v.boolean()),
+      }),
+    ),
+    heightSdShare: v.optional(between(0, 1)),
+    focalSdShare: v.optional(between(0, 1)),
+    pitchSdDeg: v.optional(between(0, 45)),
+    rollSdDeg: v.optional(between(0, 45)),
+  }),
+  v.check(
+    (given) =>
+      given.pixelSizeM !== undefined || given.heightM !== undefined || given.knownLength?.sets === true,
+    'give heightM, a known length that sets it, or pixelSizeM for a view straight down',
+  ),
+  v.check(
+    (given) => given.pixelSizeM !== undefined || given.horizon !== undefined || given.pitchDeg !== undefined,
+    'give two horizon points, or pitchDeg',
+  ),
+);
+
 const schema = v.strictObject({
   film: v.union([v.picklist(FILM_PRESETS), stack]),
   water: v.optional(v.strictObject({ temperatureC: between(0, 30), salinity: between(0, 40) })),
@@ -70,6 +108,11 @@ const schema = v.strictObject({
     ),
   ),
   trend: v.optional(v.literal('thickerDown')),
+  strokes: v.optional(v.array(stroke)),
+  view: v.optional(view),
+  windMS: v.optional(between(0, 60)),
+  position: v.optional(v.strictObject({ latitudeDeg: between(-90, 90), longitudeDeg: between(-180, 180) })),
+  headingDeg: v.optional(between(-360, 360)),
 });
 
 /**
