@@ -3,6 +3,7 @@ import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { estimate } from '../engine/estimate.ts';
 import { parseSetup } from '../engine/parseSetup.ts';
+import { withPhotoFocal } from '../engine/photoView.ts';
 import { SetupError } from '../engine/prepareScene.ts';
 import type { Setup } from '../engine/setup.ts';
 import { PhotoError } from '../photo/types.ts';
@@ -37,8 +38,9 @@ async function main(): Promise<number> {
     return 0;
   }
   const started = performance.now();
-  const setup = await readSetup(options.setup);
+  const stated = await readSetup(options.setup);
   const photo = await decodePhotoFile(options.photo);
+  const setup = withPhotoFocal(stated, photo.metadata);
   const decoded = performance.now();
   const result = estimate(photo.pixels, setup, () => performance.now());
   try {

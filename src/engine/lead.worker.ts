@@ -11,6 +11,7 @@ import { chartFor } from './chartFor.ts';
 import { emptyField, joinBands, readBand, settle } from './estimate.ts';
 import type { BandTask, LeadJobs } from './jobs.ts';
 import { leftOutOf } from './leftOut.ts';
+import { withPhotoFocal } from './photoView.ts';
 import { probePixel } from './probe.ts';
 import { buffersIn, serve } from './serve.worker.ts';
 import { summarise } from './summarise.ts';
@@ -58,8 +59,9 @@ serve<LeadJobs>(
       const { pixels, metadata, scale, notices } = photo;
       return { width: pixels.width, height: pixels.height, scale, metadata, notices };
     },
-    prepare: ({ setup, bands: wanted }, onProgress) => {
+    prepare: ({ setup: stated, bands: wanted }, onProgress) => {
       const pixels = openPixels();
+      const setup = photo ? withPhotoFocal(stated, photo.metadata) : stated;
       const startedAt = performance.now();
       const leftOut = leftOutOf(pixels, setup);
       const activity = activityMap(pixels);
