@@ -1,50 +1,53 @@
 import { pixelsOf } from '../photo/rectangle.ts';
 import type { PhotoPixels } from '../photo/types.ts';
-import type { Point, Setup } from './setup.ts';
+import type { Setup } from './setup.ts';
+import { fillCapsule, fillPolygon } from './spans.ts';
 
 /** Marks of pixels that are not read. */
 export const LEFT_OUT = { no: 0, outsideRegion: 1, noColour: 2 } as const;
 
-/** Whether (x, y) lies in a polygon, by crossings of a ray (even-odd). */
-function inside(polygon: readonly Point[], x: number, y: number): boolean {
-  let odd = false;
-  for (let i = 0, j = polygon.length - 1; i < polygon.length; j = i++) {
-    const [xi, yi] = polygon[i]!;
-    const [xj, yj] = polygon[j]!;
-    if (yi > y !== yj > y && x < ((xj - xi) * (y - yi)) / (yj - yi) + xi) odd = !odd;
+/**
+ * What a person says takes part: the region's polygon, else the whole photo, then each stroke of the brush over it in
+ * its turn. Without a polygon, a first stroke that paints in begins with nothing: the region is then what is painted.
+ * @returns one byte a pixel, row by row, of `LEFT_OUT` (no or outsideRegion)
+ */
+export function paintedOutside(
+  width: number,
+  height: number,
+  { region, strokes = [] }: Pick<Setup, 'region' | 'strokes'>,
+): Uint8Array {
+  const out = new Uint8Array(width * height);
+  const polygon = region && region.length >= 3 ? region : null;
+  if (polygon || strokes[0]?.paint === 'in') out.fill(LEFT_OUT.outsideRegion);
+  if (polygon) fillPolygon(out, width, height, polygon, LEFT_OUT.no);
+  for (const { paint, points, widthPx } of strokes) {
+    const value = paint === 'in' ? LEFT_OUT.no : LEFT_OUT.outsideRegion;
+    for (let k = 0; k < points.length; k++)
+      fillCapsule(out, width, height, points[Math.max(0, k - 1)]!, points[k]!, widthPx / 2, value);
   }
-  return odd;
+  return out;
 }
 
 /**
- * Pixels that take no part: outside the region, a card, clipped, or too dark to hold colour in a film that is not dark.
+ * Pixels that take no part: outside the region or painted out, a card, or clipped. Painting in brings no colour back:
+ * clipped pixels and the card stay out.
  * @returns one byte a pixel of `LEFT_OUT`
  */
 export function leftOutOf(pixels: PhotoPixels, setup: Setup): Uint8Array {
   const { width, height, codes, channels, maxCode } = pixels;
-  const out = new Uint8Array(width * height);
+  const out = paintedOutside(width, height, setup);
   const clipped = (maxCode * 254) / 255;
   for (let i = 0, at = 0; i < out.length; i++, at += channels) {
+    if (out[i]) continue;
     if (codes[at]! >= clipped || codes[at + 1]! >= clipped || codes[at + 2]! >= clipped)
       out[i] = LEFT_OUT.noColour;
   }
   const white = setup.references?.white;
   if (white) {
     const [left, top, right, bottom] = pixelsOf(white, pixels);
-    for (let y = top; y < bottom; y++) out.fill(LEFT_OUT.noColour, y * width + left, y * width + right);
-  }
-  const region = setup.region;
-  if (region && region.length >= 3) {
-    const xs = region.map((p) => p[0]);
-    const ys = region.map((p) => p[1]);
-    const left = Math.min(...xs);
-    const right = Math.max(...xs);
-    const top = Math.min(...ys);
-    const bottom = Math.max(...ys);
-    for (let y = 0; y < height; y++) {
-      for (let x = 0; x < width; x++) {
-        const near = x + 0.5 >= left && x + 0.5 <= right && y + 0.5 >= top && y + 0.5 <= bottom;
-        if (!near || !inside(region, x + 0.5, y + 0.5)) out[y * width + x] = LEFT_OUT.outsideRegion;
+    for (let y = top; y < bottom; y++) {
+      for (let i = y * width + left; i < y * width + right; i++) {
+        if (out[i] === LEFT_OUT.no) out[i] = LEFT_OUT.noColour;
       }
     }
   }
