@@ -56,6 +56,18 @@ export function indexDraw(film: FilmIndex, incidenceRad = 0): CommonDraw {
   };
 }
 
+/**
+ * The same where only the size of a pixel on the water is known, straight down: one log-normal factor for all lengths, with
+ * `lengthShare` as its standard deviation, and the index.
+ */
+export function scaleDraw(film: FilmIndex, lengthShare: number): CommonDraw {
+  const index = indexDraw(film);
+  return (random, areaFactor, thicknessFactor) => {
+    index(random, areaFactor, thicknessFactor);
+    areaFactor.fill(Math.exp(2 * lengthShare * random.normal()));
+  };
+}
+
 /** n cos(angle inside the film), which is what the phase of a film goes by. */
 function phaseRoot(index: number, incidenceRad: number): number {
   const sine = Math.sin(incidenceRad);
