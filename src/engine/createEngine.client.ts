@@ -101,6 +101,7 @@ export function createEngine(): Engine {
         mapHighNm: map.highNm[i] ?? Number.NaN,
       };
     },
+    tally: (request = {}) => jobOf(async () => (lead ? lead.call('tally', request) : null), stop),
     chart: (setup, maxThicknessNm) => jobOf(() => theLead().call('chart', { setup, maxThicknessNm }), stop),
     dispose: stop,
   };

@@ -1,5 +1,6 @@
 import type { ChartView, EstimateResult, Job, OnProgress, OpenedPhoto, Probe } from './contract.ts';
 import type { Setup } from './setup.ts';
+import type { TallyReport, TallyRequest } from './tallyContract.ts';
 
 /** The face the page sees. One photo is open at a time; a second `openPhoto` replaces the first. */
 export interface Engine {
@@ -7,6 +8,11 @@ export interface Engine {
   estimate(setup: Setup, onProgress?: OnProgress): Job<EstimateResult>;
   /** After `estimate`; x, y in pixels of the opened photo. Resolves null outside the photo. */
   probe(x: number, y: number): Promise<Probe | null>;
+  /**
+   * After `estimate`: how much there is on its map. Cheap enough to ask again with every change of height, wind or shares.
+   * Resolves null where there is no map (none measured, or the last measurement was cancelled).
+   */
+  tally(request?: TallyRequest): Job<TallyReport | null>;
   chart(setup: Setup, maxThicknessNm: number): Job<ChartView>;
   dispose(): void;
 }

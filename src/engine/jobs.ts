@@ -4,6 +4,7 @@ import type { MapRows, ReadingRules, SettledField } from '../match/mapPixels.ts'
 import type { PhotoPixels } from '../photo/types.ts';
 import type { ChartView, EstimateResult, OpenedPhoto, Probe } from './contract.ts';
 import type { Setup } from './setup.ts';
+import type { TallyReport, TallyRequest } from './tallyContract.ts';
 
 /** Pixels as they cross between threads: functions cannot, so the encoding stays behind (rows need none). */
 export type RowPixels = Omit<PhotoPixels, 'encoding'>;
@@ -32,6 +33,8 @@ export interface LeadJobs {
   /** Reads the band that the lead keeps for itself. */
   readOwn: { readonly in: null; readonly out: null };
   finish: { readonly in: { readonly bands: readonly MapRows[] }; readonly out: EstimateResult };
+  /** How much there is on the last finished map; null before there is one. */
+  tally: { readonly in: TallyRequest; readonly out: TallyReport | null };
   probe: { readonly in: { readonly x: number; readonly y: number }; readonly out: Probe | null };
   chart: { readonly in: { readonly setup: Setup; readonly maxThicknessNm: number }; readonly out: ChartView };
 }

@@ -3,6 +3,7 @@
 import { type ActivityMap, activityMap } from '../match/activity.ts';
 import { fillCandidates, type MapRows, type SettledField } from '../match/mapPixels.ts';
 import { makePixelReader, type PixelReader } from '../match/pixelReader.ts';
+import type { ThicknessMap } from '../match/types.ts';
 import { decodePhoto } from '../photo/decode.browser.ts';
 import type { DecodedPhoto } from '../photo/types.ts';
 import { type Band, bandsOf, bandTask } from './bands.ts';
@@ -11,12 +12,17 @@ import { chartFor } from './chartFor.ts';
 import { emptyField, joinBands, readBand, settle } from './estimate.ts';
 import type { BandTask, LeadJobs } from './jobs.ts';
 import { leftOutOf } from './leftOut.ts';
-import { withPhotoFocal } from './photoView.ts';
+import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import { probePixel } from './probe.ts';
 import { buffersIn, serve } from './serve.worker.ts';
+import type { Setup } from './setup.ts';
 import { summarise } from './summarise.ts';
+import { tallyPhoto } from './tally.ts';
+import { clippedShareOf } from './tallyFacts.ts';
 
 interface Measured {
+  readonly setup: Setup;
+  readonly clippedShare: number;
   readonly calibration: Calibration;
   readonly reader: PixelReader;
   readonly settled: SettledField;
@@ -24,6 +30,8 @@ interface Measured {
   readonly activity: ActivityMap;
   readonly own: BandTask;
   ownRows: MapRows | null;
+  /** What the page got, kept for the tally; the order has no part in it and is left empty. */
+  map: ThicknessMap | null;
   readonly startedAt: number;
   readonly timingsMs: Record<string, number>;
 }
@@ -86,6 +94,8 @@ serve<LeadJobs>(
         orders: ordered - matched,
       };
       measured = {
+        setup,
+        clippedShare: clippedShareOf(leftOut),
         calibration,
         reader,
         settled,
@@ -93,6 +103,7 @@ serve<LeadJobs>(
         activity,
         own: tasks[0]!,
         ownRows: null,
+        map: null,
         startedAt,
         timingsMs,
       };
@@ -112,10 +123,27 @@ serve<LeadJobs>(
       const all = [measured.ownRows, ...others].map((rows, k) => cut(rows, bands[k]!, pixels.width));
       measured.ownRows = null;
       const map = joinBands(pixels.width, pixels.height, all);
+      // The map itself is handed over to the page.
+      measured.map = {
+        ...map,
+        thicknessNm: map.thicknessNm.slice(),
+        lowNm: map.lowNm.slice(),
+        highNm: map.highNm.slice(),
+        order: new Uint8Array(0),
+        status: map.status.slice(),
+      };
       return {
         map,
         summary: summarise(map, calibration, { ...timingsMs, total: performance.now() - startedAt }),
       };
+    },
+    tally: ({ setup: changed, ...options }) => {
+      if (!photo || !measured?.map) return null;
+      const { map, clippedShare } = measured;
+      const { metadata } = photo;
+      const setup = changed ? withPhotoFocal(changed, metadata) : measured.setup;
+      const view = photoViewOf(setup, map.width, map.height);
+      return tallyPhoto(map, setup, view, options, { metadata, clippedShare });
     },
     probe: ({ x, y }) => {
       if (!photo || !measured) return null;

@@ -24,6 +24,7 @@ const engine: Engine = {
   openPhoto: never,
   estimate: never,
   probe: never,
+  tally: never,
   dispose: never,
   chart: (setup, maxThicknessNm): Job<ChartView> => {
     chartTests.asked.push({ setup, maxThicknessNm });
