@@ -66,6 +66,7 @@ function drawLine(reading: SceneReading): ReportLine {
     label: `    seed ${task.seed}`,
     figures: summariseErrors([reading.raw]),
     note: [
+      drawn.measuredSensor ?? '',
       String(reading.setup.film),
       `index off ${drawn.indexError.toFixed(4)}`,
       `${drawn.daylightK.toFixed(0)} K`,

@@ -68,7 +68,13 @@ export function soapScene(request: SceneRequest, black: boolean): Scene {
   const incidenceDeg = Math.round(draw.uniform(0, 20));
   const cardReflectance = Math.round(draw.uniform(0.04, 0.1) * 1000) / 1000;
   const cardStated = draw.next() < 2 / 3;
-  const drawn = drawConditions(random.fork('conditions'), stack, incidenceDeg, request.conditions);
+  const drawn = drawConditions(
+    random.fork('conditions'),
+    stack,
+    incidenceDeg,
+    request.conditions,
+    request.seed,
+  );
   const camera = cameraOf(drawn, random);
   const table = filmTableOf(stack, drawn, camera, {
     maxNm: SOAP_MAX_NM,
@@ -129,7 +135,13 @@ export function oilScene(request: SceneRequest, shape: 'sheen' | 'lens'): Scene 
   const preset = OILS[Math.floor(OILS.length * draw.next())]!;
   const incidenceDeg = Math.round(draw.uniform(0, 40));
   const stack = filmStackFor(preset);
-  const drawn = drawConditions(random.fork('conditions'), stack, incidenceDeg, request.conditions);
+  const drawn = drawConditions(
+    random.fork('conditions'),
+    stack,
+    incidenceDeg,
+    request.conditions,
+    request.seed,
+  );
   const camera = cameraOf(drawn, random);
   const table = filmTableOf(stack, drawn, camera, {
     maxNm: OIL_MAX_NM,

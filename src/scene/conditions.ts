@@ -4,6 +4,7 @@ import type { FilmStack } from '../optics/types.ts';
 import { withIndexShift } from '../optics/withIndexShift.ts';
 import type { Development } from './develop.ts';
 import { buildFilmTable, type FilmTable } from './filmTable.ts';
+import { MEASURED_SENSORS, measuredSensorOf } from './measuredSensors.ts';
 import type { Random } from './random.ts';
 import { type SceneCamera, sceneCamera } from './sceneCamera.ts';
 import { drawFilmic, drawSigmoid } from './toneCurve.ts';
@@ -11,7 +12,7 @@ import type { DrawnConditions } from './types.ts';
 
 /** Which draws a scene makes. `STATED` are the conditions that the project's figures are set for. */
 export interface ConditionOptions {
-  readonly sensor: 'family' | 'outside';
+  readonly sensor: 'family' | 'outside' | 'measured';
   readonly tone: 'none' | 'sigmoid' | 'filmic';
   /** Gains, veil, light and index as drawn, or all exactly as the reader is told. */
   readonly errors: 'drawn' | 'none';
@@ -35,6 +36,8 @@ export const CONDITIONS = {
   filmic: { ...STATED, tone: 'filmic' },
   /** Sensors that are not in the family. */
   outside: { ...STATED, sensor: 'outside' },
+  /** Sensors that others measured, one after another by the seed. */
+  measured: { ...STATED, sensor: 'measured' },
   /** Thickness varies by 4 % inside a pixel. */
   blurred: { ...STATED, relativeThicknessSpread: 0.04 },
 } as const satisfies Record<string, ConditionOptions>;
@@ -50,12 +53,13 @@ export type EarlyDraws = Omit<DrawnConditions, 'exposure' | 'veil'> & {
 const DAYLIGHT_K = [5000, 12000] as const;
 const TOLD_OFF_K = 1500;
 
-/** Draws a camera, a light and a film index. `incidenceDeg` is taken as given. */
+/** Draws a camera, a light and a film index. `incidenceDeg` is taken as given; `seed` names the measured camera. */
 export function drawConditions(
   random: Random,
   stack: FilmStack,
   incidenceDeg: number,
   options: ConditionOptions,
+  seed: number | string,
 ): EarlyDraws {
   const exact = options.errors === 'none';
   const daylightK = random.uniform(...DAYLIGHT_K);
@@ -72,6 +76,7 @@ export function drawConditions(
   const tone = options.tone === 'filmic' ? drawFilmic(random) : drawSigmoid(random);
   return {
     sensor: options.sensor,
+    ...(options.sensor === 'measured' ? { measuredSensor: measuredSensorOf(seed).name } : {}),
     coefficients: options.sensor === 'family' ? coefficients : [],
     gains: exact ? [1, 1, 1] : gains,
     gainStage,
@@ -90,8 +95,9 @@ export function drawConditions(
 
 /** The camera that was drawn, under the light that was drawn. */
 export function cameraOf(drawn: EarlyDraws, random: Random): SceneCamera {
+  const measured = MEASURED_SENSORS.find(({ name }) => name === drawn.measuredSensor);
   return sceneCamera(
-    drawn.sensor === 'outside' ? 'outside' : drawn.coefficients,
+    drawn.sensor === 'outside' ? 'outside' : (measured ?? drawn.coefficients),
     drawn.daylightK,
     random.fork('camera'),
   );

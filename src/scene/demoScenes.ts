@@ -50,7 +50,7 @@ export function demoSoapFilm(size: DemoSize = DEMO_SIZE): Scene {
   const stack = filmStackFor('soap');
   const incidenceDeg = 8;
   const cardReflectance = 0.06;
-  const drawn = drawConditions(random.fork('conditions'), stack, incidenceDeg, STATED);
+  const drawn = drawConditions(random.fork('conditions'), stack, incidenceDeg, STATED, 'demo');
   const camera = cameraOf(drawn, random);
   const table = filmTableOf(stack, drawn, camera, {
     maxNm: 1250,

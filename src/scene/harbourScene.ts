@@ -44,7 +44,13 @@ export function harbourScene(request: HarbourRequest): HarbourScene {
   const region = waterRegion(view, place.quayX, STEEPEST_DEG);
   const clean = bareRectangle(place.bare, view);
   const cleanIncidenceDeg = incidenceAtDeg(view, clean[0] + clean[2] / 2, clean[1] + clean[3] / 2);
-  const drawn = drawConditions(random.fork('conditions'), stack, cleanIncidenceDeg, request.conditions);
+  const drawn = drawConditions(
+    random.fork('conditions'),
+    stack,
+    cleanIncidenceDeg,
+    request.conditions,
+    request.seed,
+  );
   const camera = cameraOf(drawn, random);
   const table = filmTableOf(stack, drawn, camera, { maxNm: OIL_MAX_NM, stepNm: 1, fromDeg: 15, toDeg: 88 });
   const film = filmColours(table, STEEPEST_DEG, OIL_MAX_NM);

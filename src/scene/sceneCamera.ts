@@ -5,6 +5,7 @@ import { SRGB } from '../colour/rgb.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import { sensorCurves } from '../colour/sensorFamily.ts';
 import { fitCameraMatrix, lightWeighted, rawResponses } from './cameraMatrix.ts';
+import { type MeasuredSensor, measuredSensorCurves } from './measuredSensors.ts';
 import { outsideSensorCurves } from './outsideSensor.ts';
 import type { Random } from './random.ts';
 import { randomReflectances } from './reflectances.ts';
@@ -33,18 +34,21 @@ function matrixTargets(random: Random): { spectra: Float64Array; wanted: Float64
 }
 
 /**
- * A camera from its sensor (nine coefficients of the family, or 'outside' for curves that are none of it) under a daylight.
+ * A camera from its sensor (nine coefficients of the family, a measured camera, or 'outside' for invented curves that are
+ * none of the family) under a daylight.
  * The matrix is the white-preserving least-squares one onto the colours that the surfaces have under D65.
  */
 export function sceneCamera(
-  sensor: ArrayLike<number> | 'outside',
+  sensor: ArrayLike<number> | MeasuredSensor | 'outside',
   daylightK: number,
   random: Random,
 ): SceneCamera {
   const curves =
     sensor === 'outside'
       ? outsideSensorCurves(FILM_WAVELENGTHS_NM, random.fork('sensor'))
-      : sensorCurves(sensor, FILM_WAVELENGTHS_NM);
+      : 'curves' in sensor
+        ? measuredSensorCurves(sensor, FILM_WAVELENGTHS_NM)
+        : sensorCurves(sensor, FILM_WAVELENGTHS_NM);
   const rawWeights = lightWeighted(curves, daylightSpectrum(daylightK, FILM_WAVELENGTHS_NM));
   const { spectra, wanted } = matrixTargets(random.fork('matrix'));
   return { rawWeights, matrix: fitCameraMatrix(rawResponses(spectra, rawWeights), wanted) };

@@ -16,7 +16,9 @@ export const TRUE_KIND = {
 
 /** Everything that was drawn at random and that the reader is not told. */
 export interface DrawnConditions {
-  readonly sensor: 'family' | 'outside';
+  readonly sensor: 'family' | 'outside' | 'measured';
+  /** The camera's name where `sensor` is 'measured'. */
+  readonly measuredSensor?: string;
   /** The nine family coefficients (r, g, b by three components); empty outside the family. */
   readonly coefficients: readonly number[];
   /** White balance error, one factor a channel, and the stage it acts at. */

@@ -13,6 +13,7 @@ import { CONDITIONS, type EarlyDraws, filmTableOf, STATED } from '../../src/scen
 import { developPhoto } from '../../src/scene/develop.ts';
 import { waterToPixel } from '../../src/scene/harbour/harbourPlace.ts';
 import { harbourScene } from '../../src/scene/harbourScene.ts';
+import { MEASURED_SENSORS } from '../../src/scene/measuredSensors.ts';
 import { seededRandom } from '../../src/scene/random.ts';
 import { randomReflectances } from '../../src/scene/reflectances.ts';
 import { insidePolygon, regionMask } from '../../src/scene/region.ts';
@@ -239,6 +240,14 @@ describe('the harder conditions', () => {
     expect(of('filmic').tone.shape).toBe('filmic');
     expect(of('outside').sensor).toBe('outside');
     expect(of('outside').coefficients).toHaveLength(0);
+    expect(MEASURED_SENSORS.map(({ name }) => name)).toContain(of('measured').measuredSensor);
+    expect(of('measured').coefficients).toHaveLength(0);
+    // The draws do not depend on the camera: all else is as under the stated conditions.
+    expect(of('measured')).toMatchObject({
+      gains: of('stated').gains,
+      tone: of('stated').tone,
+      daylightK: of('stated').daylightK,
+    });
     expect(of('blurred').relativeThicknessSpread).toBeGreaterThan(0);
   });
 
