@@ -15,6 +15,10 @@ export type ObservationEntry =
 export interface RecordStore {
   /** Keeps an observation and its files, in place of one of the same id. @throws RecordError */
   save(content: ArchiveContent): Promise<void>;
+  /** Keeps an observation whose files are as they were: only its words change. @throws RecordError */
+  revise(observation: Observation): Promise<void>;
+  /** Bytes of one file by its SHA-256; null where they are not here. */
+  file(sha256: string): Promise<Uint8Array | null>;
   /** Those whose words hold all of the query's, the last changed first; all without a query. */
   list(query?: string): Promise<ObservationEntry[]>;
   /** @throws RecordError where it is not there or cannot be read */
@@ -62,9 +66,12 @@ export async function openStore(name = 'tintfathom-records'): Promise<RecordStor
   const store: RecordStore = {
     save: async (content) => {
       await guarded(async () => save(await database(), content));
-      // Only now is there something worth asking for: browsers weigh what a person has done.
-      await navigator.storage?.persist?.().catch(() => false);
+      // Only now is there something worth asking for: browsers weigh what a person has done. Workers cannot ask.
+      const storage: StorageManager & { persist?: () => Promise<boolean> } = navigator.storage;
+      await storage?.persist?.().catch(() => false);
     },
+    revise: (observation) => guarded(async () => revise(await database(), observation)),
+    file: async (sha256) => (await (await database()).get('files', sha256)) ?? null,
     list: async (query = '') => list(await database(), query),
     open: async (id) => open(await database(), id),
     duplicate: (id) => guarded(async () => duplicate(await database(), id)),
@@ -119,6 +126,19 @@ async function save(database: RecordDatabase, { observation, files }: ArchiveCon
   ];
   // The transaction tells why all failed, the single requests only that they did.
   await Promise.allSettled(puts);
+  await transaction.done;
+}
+
+async function revise(database: RecordDatabase, observation: Observation): Promise<void> {
+  const kept: unknown = JSON.parse(writeObservation(readObservation(observation)));
+  const transaction = database.transaction('observations', 'readwrite');
+  const stored = await transaction.store.get(observation.id);
+  const hashes = observation.files.map(({ sha256 }) => sha256);
+  if (stored?.deletedAt !== null || hashes.join() !== stored.fileHashes.join()) {
+    await transaction.done;
+    throw new RecordError('This observation is no longer on this device: import its ZIP.');
+  }
+  await transaction.store.put({ ...stored, observation: kept });
   await transaction.done;
 }
 
