@@ -1,6 +1,6 @@
 import type { EstimateResult } from '../engine/contract.ts';
 import type { Setup } from '../engine/setup.ts';
-import { ROW_PROFILE_HEADER, rowProfile } from './rowProfile.ts';
+import { ROW_PROFILE_HEADER, rowProfile } from '../record/rowProfile.ts';
 import { inTurns } from './turns.ts';
 
 /** Version of the app, from package.json at build time. */

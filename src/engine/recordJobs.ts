@@ -5,6 +5,13 @@ import type { Observation } from '../record/observation.ts';
 export const MAP_LAYERS = ['thicknessNm', 'lowNm', 'highNm', 'order', 'status'] as const;
 export type MapLayer = (typeof MAP_LAYERS)[number];
 
+/** What both sides need of a Blob, which this file's world does not know. */
+export interface FileBytes {
+  readonly type: string;
+  readonly size: number;
+  arrayBuffer(): Promise<ArrayBuffer>;
+}
+
 /** Every hand-over file that the worker writes. */
 export type ExportKind = 'zip' | 'csv' | 'rows' | 'geojson' | 'geotiff';
 
@@ -16,7 +23,7 @@ export interface HandOverChoice {
 }
 
 export interface WrittenFile {
-  readonly blob: Blob;
+  readonly blob: FileBytes;
   readonly name: string;
   /** What the person must know before handing it over. */
   readonly notices: readonly string[];
@@ -37,8 +44,8 @@ export interface RecordJobs {
   readonly keep: {
     readonly in: {
       readonly observation: Observation;
-      readonly original: Blob | null;
-      readonly thumbnail: Blob | null;
+      readonly original: FileBytes | null;
+      readonly thumbnail: FileBytes | null;
       readonly map: { readonly width: number; readonly height: number } | null;
     };
     readonly out: KeptRecord;
@@ -58,5 +65,5 @@ export interface RecordJobs {
   readonly map: { readonly in: { readonly id: string }; readonly out: ThicknessMap | null };
   readonly write: { readonly in: HandOverChoice & { readonly kind: ExportKind }; readonly out: WrittenFile };
   /** Keeps what a ZIP holds. @throws RecordError with what to do */
-  readonly import: { readonly in: { readonly file: Blob }; readonly out: KeptRecord };
+  readonly import: { readonly in: { readonly file: FileBytes }; readonly out: KeptRecord };
 }

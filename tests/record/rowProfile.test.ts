@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { rowProfile } from '../../src/app/rowProfile.ts';
+import { rowProfile } from '../../src/record/rowProfile.ts';
 import { PIXEL_STATUS, type ThicknessMap } from '../../src/match/types.ts';
 
 const NONE = Number.NaN;
