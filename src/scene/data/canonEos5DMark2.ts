@@ -1,3 +1,4 @@
+// biome-ignore-all lint/suspicious/noApproximativeNumericConstant: 0.4343 was measured; it is not log10 of e.
 /**
  * Measured spectral sensitivity of the Canon EOS 5D Mark II, relative to green's peak, 380 to 780 nm in steps of 5 nm: red, green, blue.
  * Source: AcademySoftwareFoundation/rawtoaces-data, data/camera/Canon_EOS_5D_Mark_II_380_780_5.json,
