@@ -7,8 +7,8 @@ import { hasMark, type MarkId } from './stage/grips.ts';
 export const STEPS = ['film', 'light', 'mark', 'map'] as const;
 export type Step = (typeof STEPS)[number];
 
-/** What marking adds: a reference patch, a pin, or the corners of the region. */
-export type MarkKind = 'clean' | 'white' | 'dark' | 'region' | 'bare' | 'order';
+/** What marking adds: a reference patch, the corners of the region, a stroke of the brush, or a pin. */
+export type MarkKind = 'clean' | 'white' | 'dark' | 'region' | 'out' | 'in' | 'bare' | 'order';
 
 export interface OpenedImage {
   readonly blob: Blob;
@@ -30,6 +30,8 @@ export const image = signal<OpenedImage | null>(null);
 export const step = signal<Step>('film');
 export const marking = signal<MarkKind>('clean');
 export const pinOrder = signal(2);
+/** Full width of the brush on the screen, CSS pixels: one of `BRUSHES`. */
+export const brush = signal(30);
 /** The mark that handles and nudges act on. */
 export const selected = signal<MarkId | null>(null);
 /** A change under the finger: shown, not yet made. */

@@ -3,6 +3,7 @@ import { useEffect, useRef, useState } from 'preact/hooks';
 import type { Point, Rectangle } from '../../engine/setup.ts';
 import {
   addPin,
+  brush,
   change,
   draftSetup,
   image,
@@ -15,6 +16,7 @@ import {
   step,
   wipe,
 } from '../state.ts';
+import { begunStroke, painted } from './brush.ts';
 import { drawStage } from './drawStage.ts';
 import { movedMark, withoutMark } from './grips.ts';
 import { useGestures } from './useGestures.ts';
@@ -99,6 +101,8 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
     if (!isMark) return onProbe(inside);
     const kind = marking.value;
     if (kind === 'region') return onCorner(inside);
+    if (kind === 'out' || kind === 'in')
+      return change(painted(setup.value, begunStroke(kind, inside, brush.value, current.scale)));
     if (kind === 'bare') return addPin(inside, { is: 'bare' });
     if (kind === 'order') return addPin(inside, { order: pinOrder.value });
     const side = Math.round(TAP_PATCH * Math.min(photo.width, photo.height));

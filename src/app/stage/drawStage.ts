@@ -1,5 +1,6 @@
 import type { Point, Rectangle, Setup } from '../../engine/setup.ts';
 import type { MarkKind } from '../state.ts';
+import { drawLeftOut } from './drawLeftOut.ts';
 import { type MarkId, sameMark } from './grips.ts';
 import { toScreen, type View } from './viewTransform.ts';
 
@@ -52,7 +53,10 @@ export function drawStage(
       context.fillRect(from - 1, 0, 2, height);
     }
   }
-  if (picture.showMarks) drawMarks(context, view, picture);
+  if (picture.showMarks) {
+    drawLeftOut(context, view, picture, picture.setup, width, height);
+    drawMarks(context, view, picture);
+  }
   if (picture.probeAt) drawProbe(context, view, picture.probeAt);
   if (picture.loupeAt) drawLoupe(context, view, picture, picture.loupeAt, width);
 }

@@ -1,6 +1,7 @@
 import { useRef, useState } from 'preact/hooks';
-import type { Point, Rectangle, Setup } from '../../engine/setup.ts';
+import type { Point, Rectangle, Setup, Stroke } from '../../engine/setup.ts';
 import {
+  brush,
   change,
   draftSetup,
   marking,
@@ -11,6 +12,7 @@ import {
   setup,
   step,
 } from '../state.ts';
+import { begunStroke, extendedStroke, painted } from './brush.ts';
 import { type Grip, gripAt, movedMark } from './grips.ts';
 import { panned, type Size, toPhoto, toScreen, type View, zoomed } from './viewTransform.ts';
 
@@ -28,7 +30,7 @@ interface Finger {
 
 /** What one finger is doing, decided when it comes down. */
 type Holding =
-  | { readonly what: 'photo' | 'rectangle' | 'probe' }
+  | { readonly what: 'photo' | 'rectangle' | 'probe' | 'paint' }
   | { readonly what: 'mark'; readonly grip: Grip };
 
 export interface Gestures {
@@ -57,15 +59,17 @@ interface Frame {
 function holdable({ references, pins, region, ...rest }: Setup): Setup {
   const kind = marking.value;
   if (kind === 'region') return region ? { ...rest, region } : rest;
+  if (kind === 'out' || kind === 'in') return rest;
   if (kind === 'bare' || kind === 'order') return pins ? { ...rest, pins } : rest;
   return references ? { ...rest, references } : rest;
 }
 
-/** One finger pans, marks, pulls a mark or the probe; two fingers zoom. */
+/** One finger pans, marks, paints, pulls a mark or the probe; two fingers pan and zoom. */
 export function useGestures({ view, setView, photo, size, place, onTap, onProbe }: Frame): Gestures {
   const fingers = useRef(new Map<number, Finger>());
   const holding = useRef<Holding>({ what: 'photo' });
   const moved = useRef(false);
+  const stroke = useRef<Stroke | null>(null);
   const [rectangle, setRectangle] = useState<Rectangle | null>(null);
   const [loupeAt, setLoupeAt] = useState<Point | null>(null);
   const [probeDraft, setProbeDraft] = useState<Point | null>(null);
@@ -80,6 +84,7 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
       const grip = gripAt(view, holdable(setup.value), selected.value, x, y);
       if (grip) return { what: 'mark', grip };
       const kind = marking.value;
+      if (kind === 'out' || kind === 'in') return { what: 'paint' };
       const draws = kind === 'clean' || kind === 'white' || kind === 'dark';
       // A second patch of a kind would replace the first: there a drag moves the photo, a tap the patch.
       return { what: draws && !setup.value.references?.[kind] ? 'rectangle' : 'photo' };
@@ -97,6 +102,7 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
     setLoupeAt(null);
     setProbeDraft(null);
     draftSetup.value = null;
+    stroke.current = null;
   };
 
   const down = (event: PointerEvent) => {
@@ -110,6 +116,12 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
     }
     moved.current = false;
     holding.current = take(x, y);
+    if (holding.current.what === 'paint') {
+      const paint = marking.value === 'in' ? 'in' : 'out';
+      stroke.current = begunStroke(paint, inPhoto(x, y), brush.value, view.scale);
+      draftSetup.value = painted(setup.value, stroke.current);
+      return;
+    }
     if (holding.current.what === 'mark') selected.value = holding.current.grip.mark;
     if (step.value === 'mark' || holding.current.what === 'probe') setLoupeAt(inPhoto(x, y));
   };
@@ -126,6 +138,12 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
     if (held.what === 'photo') {
       setLoupeAt(null);
       return setView(panned(view, x - finger.x, y - finger.y, photo, size));
+    }
+    if (held.what === 'paint') {
+      if (!stroke.current) return;
+      stroke.current = extendedStroke(stroke.current, inPhoto(x, y), view.scale);
+      draftSetup.value = painted(setup.value, stroke.current);
+      return;
     }
     if (held.what === 'probe') setProbeDraft(inPhoto(x, y));
     else if (held.what === 'mark') {
@@ -153,7 +171,8 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
     if (other) pinch(finger, other, x, y);
     else {
       if (Math.hypot(x - finger.startX, y - finger.startY) > TAP_SLACK) moved.current = true;
-      if (moved.current) drag(finger, x, y);
+      // A tap may shake; a brush paints from the first pixel on.
+      if (moved.current || holding.current.what === 'paint') drag(finger, x, y);
     }
     fingers.current.set(event.pointerId, { ...finger, x, y });
   };
@@ -166,6 +185,11 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
     letGo();
     if (!finger || event.type === 'pointercancel') return;
     const held = holding.current;
+    if (held.what === 'paint') {
+      // The first touch is a dot, so a stroke is there even where the finger did not move.
+      if (next) change(next);
+      return;
+    }
     if (!moved.current) {
       if (held.what !== 'mark') onTap(inPhoto(finger.x, finger.y));
       return;

@@ -10,6 +10,7 @@ import {
   setRegion,
   setup,
 } from '../state.ts';
+import { BrushPad } from './BrushPad.tsx';
 import { CardLevel } from './CardLevel.tsx';
 import { NudgePad } from './NudgePad.tsx';
 
@@ -18,6 +19,8 @@ const KINDS: readonly (readonly [MarkKind, string, string])[] = [
   ['white', 'Grey card', 'Tap a grey card in the same light. White cards are easily too bright.'],
   ['dark', 'Dark', 'Tap black film or deep shadow. It shows stray light.'],
   ['region', 'Region', 'Tap the corners of the part to look at, then close it.'],
+  ['out', 'Paint out', 'Glint, foam, hull, shadow. Two fingers move the photo.'],
+  ['in', 'Paint in', 'If you paint in first, only that is measured. Two fingers move the photo.'],
   ['bare', 'Pin: bare', 'Tap where you know that there is no film.'],
   ['order', 'Pin: order', 'Tap where you know the interference order.'],
 ];
@@ -27,18 +30,21 @@ const TITLES: Readonly<Record<MarkKind, string>> = {
   white: 'Mark a grey card',
   dark: 'Mark something dark',
   region: 'Mark the region',
+  out: 'Paint out what is no film',
+  in: 'Paint in what to measure',
   bare: 'Pin bare surface',
   order: 'Pin an order',
 };
 
-function isMarked(kind: MarkKind, { references, region, pins }: Setup): boolean {
+function isMarked(kind: MarkKind, { references, region, pins, strokes }: Setup): boolean {
   if (kind === 'region') return region !== undefined;
+  if (kind === 'out' || kind === 'in') return strokes?.some(({ paint }) => paint === kind) ?? false;
   if (kind === 'bare') return pins?.some((pin) => pin.is === 'bare') ?? false;
   if (kind === 'order') return pins?.some((pin) => pin.order !== undefined) ?? false;
   return references?.[kind] !== undefined;
 }
 
-/** References, region and pins. */
+/** References, region, brush and pins. */
 export function MarkStep({
   corners,
   onClear,
@@ -47,7 +53,7 @@ export function MarkStep({
   readonly onClear: () => void;
 }) {
   const kind = marking.value;
-  const { references: _r, pins: _p, region: _g, ...unmarked } = setup.value;
+  const { references: _r, pins: _p, region: _g, strokes: _s, ...unmarked } = setup.value;
   const hasMarks = KINDS.some(([id]) => isMarked(id, setup.value));
   return (
     <section aria-label="Mark">
@@ -60,6 +66,7 @@ export function MarkStep({
           </button>
         ))}
       </fieldset>
+      {kind === 'out' || kind === 'in' ? <BrushPad /> : null}
       {selected.value ? <NudgePad /> : <p class="quiet">{KINDS.find(([id]) => id === kind)?.[2]}</p>}
       <div class="row">
         {kind === 'region' && corners.length >= 3 ? (
