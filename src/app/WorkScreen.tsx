@@ -17,26 +17,34 @@ import {
   progress,
   redo,
   result,
-  STEPS,
   type Step,
+  setup,
   step,
+  stepsFor,
   undo,
 } from './state.ts';
 import { FilmStep } from './steps/FilmStep.tsx';
 import { LightStep } from './steps/LightStep.tsx';
 import { MapStep } from './steps/MapStep.tsx';
 import { MarkStep } from './steps/MarkStep.tsx';
+import { ViewStep } from './steps/ViewStep.tsx';
 import { useMapPicture } from './useMapPicture.ts';
 
-const STEP_NAMES: Readonly<Record<Step, string>> = { film: 'Film', light: 'Light', mark: 'Mark', map: 'Map' };
-const NEXT: Readonly<Record<Step, Step | null>> = { film: 'light', light: 'mark', mark: 'map', map: null };
+const STEP_NAMES: Readonly<Record<Step, string>> = {
+  film: 'Film',
+  light: 'Light',
+  mark: 'Mark',
+  view: 'View',
+  map: 'Map',
+};
 
 /** The photo above, one decision below; the map's scale is the edge between them. */
 export function WorkScreen() {
   const [corners, setCorners] = useState<readonly Point[]>([]);
   const measured = result.value;
   const picture = useMapPicture(measured, mapView.value);
-  const current = step.value;
+  const steps = stepsFor(setup.value.film);
+  const current = steps.includes(step.value) ? step.value : 'map';
   const busy = progress.value;
 
   const go = (next: Step) => {
@@ -46,7 +54,7 @@ export function WorkScreen() {
     if (next === 'mark') beginMarking();
     if (next === 'map' && !result.value) void measure();
   };
-  const next = NEXT[current];
+  const next = steps[steps.indexOf(current) + 1] ?? null;
   const showsMap = current === 'map' && picture !== null;
 
   return (
@@ -94,6 +102,7 @@ export function WorkScreen() {
               {current === 'film' ? <FilmStep /> : null}
               {current === 'light' ? <LightStep /> : null}
               {current === 'mark' ? <MarkStep corners={corners} onClear={() => setCorners([])} /> : null}
+              {current === 'view' ? <ViewStep /> : null}
               {current === 'map' ? <MapStep /> : null}
             </>
           )}
@@ -125,7 +134,7 @@ export function WorkScreen() {
           )}
         </div>
         <nav class="steps" aria-label="Steps">
-          {STEPS.map((id) => (
+          {steps.map((id) => (
             <button
               key={id}
               type="button"

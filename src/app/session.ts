@@ -1,6 +1,7 @@
 import { Cancelled, type Job } from '../engine/contract.ts';
 import type { Engine } from '../engine/engine.client.ts';
 import type { Setup } from '../engine/setup.ts';
+import { withWholeView } from '../engine/setupView.ts';
 import { keepPhoto } from './keep.ts';
 import {
   begin,
@@ -16,6 +17,7 @@ import {
   step,
   wipe,
 } from './state.ts';
+import { lensFacts } from './viewState.ts';
 
 /** What runs between the screens and the engine: open, measure, probe, cancel. */
 let engine: Engine | null = null;
@@ -107,7 +109,10 @@ export async function measure(): Promise<void> {
   const current = await theEngine();
   result.value = null;
   probe.value = null;
-  const done = await run((onProgress) => current.estimate(setup.value, onProgress), 'starting');
+  const done = await run(
+    (onProgress) => current.estimate(withWholeView(setup.value, lensFacts()), onProgress),
+    'starting',
+  );
   if (!done) return;
   result.value = done;
   if (probeAt.value) await readAt(probeAt.value);

@@ -4,8 +4,13 @@ import type { FilmPreset, Point, Rectangle, Setup } from '../engine/setup.ts';
 import { hasMark, type MarkId } from './stage/grips.ts';
 
 /** The steps of a reading, in the order a person takes them. */
-export const STEPS = ['film', 'light', 'mark', 'map'] as const;
+export const STEPS = ['film', 'light', 'mark', 'view', 'map'] as const;
 export type Step = (typeof STEPS)[number];
+
+/** The steps that suit a film: where the camera stood and how much there is are asked of films on water only. */
+export function stepsFor(film: Setup['film']): readonly Step[] {
+  return onWater(film) ? STEPS : STEPS.filter((id) => id !== 'view');
+}
 
 /** What marking adds: a reference patch, the corners of the region, a stroke of the brush, or a pin. */
 export type MarkKind = 'clean' | 'white' | 'dark' | 'region' | 'out' | 'in' | 'bare' | 'order';

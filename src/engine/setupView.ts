@@ -4,7 +4,7 @@ import { focalPxFrom35mm, type PinholeCamera, pinholeCamera } from '../view/pinh
 import { straightDownFromPixelSize } from '../view/straightDown.ts';
 import type { Tilt } from '../view/tilt.ts';
 import { type WaterView, waterView } from '../view/waterView.ts';
-import type { ViewSetup } from './setup.ts';
+import type { Setup, ViewSetup } from './setup.ts';
 
 const DEGREE = Math.PI / 180;
 
@@ -21,12 +21,19 @@ export type MissingView = 'height' | 'focal' | 'tilt';
 /** What is still needed before every pixel has its place on the water; empty where nothing is. */
 export function missingOfView(view: ViewSetup | undefined, photo: LensFacts): readonly MissingView[] {
   const { heightM, focal35mm, horizon, pitchDeg, pixelSizeM, knownLength } = view ?? {};
+  if (pixelSizeM !== undefined) return [];
   const missing: MissingView[] = [];
-  if (pixelSizeM !== undefined && !horizon) return missing;
   if (heightM === undefined && !knownLength?.sets) missing.push('height');
   if (focal35mm === undefined && photo.focalLength35mm === undefined) missing.push('focal');
   if (!horizon && pitchDeg === undefined) missing.push('tilt');
   return missing;
+}
+
+/** The set-up as the engine takes it: a view that is only half filled in is left out, so that nothing is made up. */
+export function withWholeView(setup: Setup, photo: LensFacts): Setup {
+  if (!setup.view || missingOfView(setup.view, photo).length === 0) return setup;
+  const { view: _, ...rest } = setup;
+  return rest;
 }
 
 /** The camera of a photo, or null without a focal length. @throws RangeError where the lens makes no sense */
@@ -37,18 +44,24 @@ export function setupCamera(view: ViewSetup | undefined, photo: LensFacts): Pinh
   return pinholeCamera(photo.width, photo.height, focalPx, view?.radial ?? 0);
 }
 
+/** A view to draw over the photo while it is still being told: angles are right as soon as the tilt is known. */
+export interface SketchedView {
+  readonly view: WaterView;
+  /** False while the height is open: then `view` has a height of 1 m and no distance is to be shown. */
+  readonly hasScale: boolean;
+}
+
 /**
- * The camera over the water that a set-up describes, for the measured pixels of a photo; null where it says too little
- * (`missingOfView` names what), or where only a pixel size is known and no focal length (`uniformFields` serves then).
- * A horizon wins over typed angles; a known length that `sets` wins over the height.
+ * The camera over the water as far as a set-up describes it; null without focal length or tilt.
+ * A pixel size means straight down; a horizon wins over typed angles; a known length that `sets` wins over the height.
  * @throws RangeError with a sentence where what is said contradicts itself
  */
-export function setupView(view: ViewSetup | undefined, photo: LensFacts): WaterView | null {
-  if (!view || missingOfView(view, photo).length > 0) return null;
+export function sketchView(view: ViewSetup | undefined, photo: LensFacts): SketchedView | null {
   const camera = setupCamera(view, photo);
-  if (!camera) return null;
-  if (view.pixelSizeM !== undefined && !view.horizon)
-    return straightDownFromPixelSize(camera, view.pixelSizeM);
+  if (!view || !camera) return null;
+  if (view.pixelSizeM !== undefined)
+    return { view: straightDownFromPixelSize(camera, view.pixelSizeM), hasScale: true };
+  if (!view.horizon && view.pitchDeg === undefined) return null;
   const length = view.knownLength?.sets ? view.knownLength : null;
   let heightM = length ? 1 : (view.heightM ?? 1);
   // The dip of the horizon follows from the height: three rounds settle it to a millimetre.
@@ -56,7 +69,10 @@ export function setupView(view: ViewSetup | undefined, photo: LensFacts): WaterV
     const trial = waterView({ camera, heightM, ...tiltOf(view, camera, heightM) });
     heightM = scaleFromLength(trial, length.ends[0], length.ends[1], length.lengthM).impliedHeightM;
   }
-  return waterView({ camera, heightM, ...tiltOf(view, camera, heightM) });
+  return {
+    view: waterView({ camera, heightM, ...tiltOf(view, camera, heightM) }),
+    hasScale: view.heightM !== undefined || length !== null,
+  };
 }
 
 function tiltOf({ horizon, pitchDeg, rollDeg }: ViewSetup, camera: PinholeCamera, heightM: number): Tilt {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { ViewSetup } from '../../src/engine/setup.ts';
-import { missingOfView, setupView } from '../../src/engine/setupView.ts';
+import { missingOfView, sketchView, withWholeView } from '../../src/engine/setupView.ts';
 import { demoHarbour } from '../../src/scene/demoScenes.ts';
 import { groundAt, groundDistanceM } from '../../src/view/waterView.ts';
 
@@ -10,13 +10,14 @@ describe('the view that a set-up describes', () => {
   it('names what is missing and gives no view until then', () => {
     expect(missingOfView(undefined, { width: 10, height: 10 })).toEqual(['height', 'focal', 'tilt']);
     expect(missingOfView({ heightM: 3 }, PHOTO)).toEqual(['tilt']);
-    expect(setupView({ heightM: 3 }, PHOTO)).toBeNull();
+    expect(sketchView({ heightM: 3 }, PHOTO)).toBeNull();
+    expect(withWholeView({ film: 'diesel', view: { heightM: 3 } }, PHOTO)).toEqual({ film: 'diesel' });
     expect(missingOfView({ pixelSizeM: 0.01 }, PHOTO)).toEqual([]);
   });
 
   it('sees the quay of field practice: from 2 m up, 35 degrees off the vertical falls 1.4 m away', () => {
     // Closed case of the pinhole over level water: 2 m x tan 35 degrees (issue 4, figures of the trade).
-    const view = setupView({ heightM: 2, pitchDeg: -55 }, PHOTO);
+    const view = sketchView({ heightM: 2, pitchDeg: -55 }, PHOTO)?.view;
     const at = view && groundAt(view, 600, 800);
     expect(at?.[1]).toBeCloseTo(2 * Math.tan((35 * Math.PI) / 180), 9);
   });
@@ -26,14 +27,18 @@ describe('the view that a set-up describes', () => {
     const [a, b] = scene.toldView.horizon;
     if (!a || !b) throw new Error('no horizon');
     const setup: ViewSetup = { heightM: scene.view.heightM, horizon: [a, b] };
-    const found = setupView(setup, { width: 300, height: 400, focalLength35mm: scene.toldView.focal35mm });
+    const found = sketchView(setup, {
+      width: 300,
+      height: 400,
+      focalLength35mm: scene.toldView.focal35mm,
+    })?.view;
     // Taps are whole pixels: half a pixel of 300 is 0.1 degrees; a harbour's far shore has no dip, 1.76' √h at most.
     expect(Math.abs((found?.pitchRad ?? 9) - scene.view.pitchRad)).toBeLessThan((0.25 * Math.PI) / 180);
     expect(Math.abs((found?.rollRad ?? 9) - scene.view.rollRad)).toBeLessThan((0.25 * Math.PI) / 180);
   });
 
   it('takes the height from a known length that sets it', () => {
-    const known = setupView(
+    const known = sketchView(
       {
         heightM: 4,
         horizon: [
@@ -48,8 +53,8 @@ describe('the view that a set-up describes', () => {
       [200, 1200],
       [900, 1000],
     ] as const;
-    const lengthM = groundDistanceM(known, ends[0], ends[1]);
-    const found = setupView(
+    const lengthM = groundDistanceM(known.view, ends[0], ends[1]);
+    const found = sketchView(
       {
         heightM: 99,
         horizon: [
@@ -60,6 +65,6 @@ describe('the view that a set-up describes', () => {
       },
       PHOTO,
     );
-    expect(found?.heightM).toBeCloseTo(4, 3);
+    expect(found?.view.heightM).toBeCloseTo(4, 3);
   });
 });

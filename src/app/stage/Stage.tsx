@@ -16,10 +16,12 @@ import {
   step,
   wipe,
 } from '../state.ts';
+import { tapView } from '../viewState.ts';
 import { begunStroke, painted } from './brush.ts';
 import { drawStage } from './drawStage.ts';
 import { movedMark, withoutMark } from './grips.ts';
 import { useGestures } from './useGestures.ts';
+import { viewDrawing } from './viewDrawing.ts';
 import { fitted, held, panned, recentred, type Size, toPhoto, type View, zoomed } from './viewTransform.ts';
 
 interface Props {
@@ -63,11 +65,13 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
   const whole = fitted(photo, size);
   const current = view ?? whole;
   const isMark = step.value === 'mark';
+  const isView = step.value === 'view';
   // Read while rendering, so that the stage is drawn anew when one of them changes.
   const shows = {
     wipe: wipe.value,
     setup: draftSetup.value ?? setup.value,
-    showMarks: step.value !== 'map',
+    showMarks: step.value !== 'map' && !isView,
+    viewDrawing: viewDrawing(),
     selected: isMark ? selected.value : null,
     handles: isMark ? marking.value : null,
   };
@@ -98,6 +102,7 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
 
   const tap = (at: Point) => {
     const inside: Point = [Math.floor(at[0]), Math.floor(at[1])];
+    if (isView) return tapView(inside);
     if (!isMark) return onProbe(inside);
     const kind = marking.value;
     if (kind === 'region') return onCorner(inside);
@@ -146,7 +151,7 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
 
   const key = (event: KeyboardEvent) => {
     const by = ARROWS[event.key];
-    const mark = isMark ? selected.value : null;
+    const mark = isMark || isView ? selected.value : null;
     if (by && mark) {
       const one = event.shiftKey ? 10 : 2;
       const grip = { mark, corner: null };
@@ -184,7 +189,7 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
         onKeyDown={key}
         onDblClick={(event) => {
           // In marking, two quick taps are two marks.
-          if (isMark) return;
+          if (isMark || isView) return;
           const isWhole = Math.abs(current.scale - whole.scale) < 1e-6;
           if (isWhole) zoomBy(3, ...place(event));
           else setView(held(whole, photo, size));

@@ -1,6 +1,7 @@
 import type { Point, Rectangle, Setup } from '../../engine/setup.ts';
 import type { MarkKind } from '../state.ts';
 import { drawLeftOut } from './drawLeftOut.ts';
+import { drawView, type ViewDrawing } from './drawView.ts';
 import { type MarkId, sameMark } from './grips.ts';
 import { toScreen, type View } from './viewTransform.ts';
 
@@ -21,6 +22,8 @@ export interface StagePicture {
   /** Rectangle or corner list being drawn. */
   readonly draft: { readonly rectangle?: Rectangle; readonly corners?: readonly Point[] } | null;
   readonly loupeAt: Point | null;
+  /** Horizon, distances and bands of the view step. */
+  readonly viewDrawing: ViewDrawing | null;
 }
 
 const COLOURS = { clean: '#7fd6ff', white: '#ffffff', dark: '#ffb4a8' } as const;
@@ -57,6 +60,7 @@ export function drawStage(
     drawLeftOut(context, view, picture, picture.setup, width, height);
     drawMarks(context, view, picture);
   }
+  if (picture.viewDrawing) drawView(context, view, picture, picture.viewDrawing);
   if (picture.probeAt) drawProbe(context, view, picture.probeAt);
   if (picture.loupeAt) drawLoupe(context, view, picture, picture.loupeAt, width);
 }

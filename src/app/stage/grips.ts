@@ -1,10 +1,12 @@
 import type { Point, Rectangle, Setup } from '../../engine/setup.ts';
+import { isViewMark, type ViewMark, viewEnds, withoutViewMark, withViewEnds } from './viewMarks.ts';
 import { type Size, toScreen, type View } from './viewTransform.ts';
 
 /** A mark on the photo that can be taken hold of. */
 export type MarkId =
   | { readonly kind: 'clean' | 'white' | 'dark' }
-  | { readonly kind: 'pin' | 'corner'; readonly index: number };
+  | { readonly kind: 'pin' | 'corner'; readonly index: number }
+  | ViewMark;
 
 /** Where a mark is held: its body, or one corner of a rectangle (-1 left or top, 1 right or bottom). */
 export interface Grip {
@@ -30,11 +32,12 @@ export function sameMark(a: MarkId | null, b: MarkId | null): boolean {
 }
 
 const isReference = (mark: MarkId): mark is { readonly kind: 'clean' | 'white' | 'dark' } =>
-  mark.kind !== 'pin' && mark.kind !== 'corner';
+  mark.kind !== 'pin' && mark.kind !== 'corner' && !isViewMark(mark);
 
 /** Whether the set-up still holds this mark: undo may have taken it away. */
 export function hasMark(setup: Setup, mark: MarkId): boolean {
   if (isReference(mark)) return setup.references?.[mark.kind] !== undefined;
+  if (isViewMark(mark)) return viewEnds(setup, mark.kind) !== undefined;
   return (mark.kind === 'pin' ? setup.pins : setup.region)?.[mark.index] !== undefined;
 }
 
@@ -72,6 +75,11 @@ export function gripAt(view: View, setup: Setup, selected: MarkId | null, x: num
   setup.region?.forEach((at, index) => {
     offer({ mark: { kind: 'corner', index }, corner: null }, toScreen(view, at[0], at[1]));
   });
+  for (const kind of ['horizon', 'length'] as const) {
+    viewEnds(setup, kind)?.forEach((at, index) => {
+      offer({ mark: { kind, index }, corner: null }, toScreen(view, at[0], at[1]));
+    });
+  }
   // Of a small rectangle the corners' reach would cover the body: its middle always moves it.
   for (const kind of REFERENCE_KINDS) {
     const r = setup.references?.[kind];
@@ -136,6 +144,12 @@ export function movedMark(setup: Setup, grip: Grip, dx: number, dy: number, phot
     };
   }
   const { index } = mark;
+  if (isViewMark(mark)) {
+    const ends = viewEnds(setup, mark.kind);
+    if (!ends) return setup;
+    const pulled = movedPoint(ends[index === 0 ? 0 : 1], dx, dy, photo);
+    return withViewEnds(setup, mark.kind, index === 0 ? [pulled, ends[1]] : [ends[0], pulled]);
+  }
   if (mark.kind === 'pin') {
     if (!setup.pins) return setup;
     return {
@@ -166,6 +180,7 @@ export function withoutMark(setup: Setup, mark: MarkId): Setup {
     const { whiteReflectance: _level, ...rest } = others;
     return { ...setup, references: rest };
   }
+  if (isViewMark(mark)) return withoutViewMark(setup, mark.kind);
   if (mark.kind === 'pin') return { ...setup, pins: (setup.pins ?? []).filter((_, i) => i !== mark.index) };
   const region = (setup.region ?? []).filter((_, i) => i !== mark.index);
   if (region.length >= 3) return { ...setup, region };

@@ -12,6 +12,7 @@ import {
   setup,
   step,
 } from '../state.ts';
+import { viewTarget } from '../viewState.ts';
 import { begunStroke, extendedStroke, painted } from './brush.ts';
 import { type Grip, gripAt, movedMark } from './grips.ts';
 import { panned, type Size, toPhoto, toScreen, type View, zoomed } from './viewTransform.ts';
@@ -57,11 +58,19 @@ interface Frame {
 
 /** Marks that can be held now: only those of the kind being marked, so that one never pulls at another. */
 function holdable({ references, pins, region, ...rest }: Setup): Setup {
+  if (step.value === 'view') return holdableInView(rest);
   const kind = marking.value;
   if (kind === 'region') return region ? { ...rest, region } : rest;
   if (kind === 'out' || kind === 'in') return rest;
   if (kind === 'bare' || kind === 'order') return pins ? { ...rest, pins } : rest;
   return references ? { ...rest, references } : rest;
+}
+
+/** In the view step only the line that taps place can be pulled. */
+function holdableInView({ view, ...rest }: Setup): Setup {
+  const { horizon, knownLength } = view ?? {};
+  if (viewTarget.value === 'horizon') return { ...rest, view: horizon ? { horizon } : {} };
+  return { ...rest, view: knownLength ? { knownLength } : {} };
 }
 
 /** One finger pans, marks, paints, pulls a mark or the probe; two fingers pan and zoom. */
@@ -88,6 +97,10 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
       const draws = kind === 'clean' || kind === 'white' || kind === 'dark';
       // A second patch of a kind would replace the first: there a drag moves the photo, a tap the patch.
       return { what: draws && !setup.value.references?.[kind] ? 'rectangle' : 'photo' };
+    }
+    if (step.value === 'view') {
+      const grip = gripAt(view, holdable(setup.value), selected.value, x, y);
+      return grip ? { what: 'mark', grip } : { what: 'photo' };
     }
     const at = probeAt.value;
     if (step.value === 'map' && result.value && at) {
@@ -123,7 +136,8 @@ export function useGestures({ view, setView, photo, size, place, onTap, onProbe 
       return;
     }
     if (holding.current.what === 'mark') selected.value = holding.current.grip.mark;
-    if (step.value === 'mark' || holding.current.what === 'probe') setLoupeAt(inPhoto(x, y));
+    if (step.value === 'mark' || step.value === 'view' || holding.current.what === 'probe')
+      setLoupeAt(inPhoto(x, y));
   };
 
   const pinch = (finger: Finger, other: Finger, x: number, y: number) => {

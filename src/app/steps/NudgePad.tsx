@@ -1,9 +1,12 @@
 import { Icon, type IconName } from '../parts/Icon.tsx';
 import { grownMark, movedMark, rectangleOf, withoutMark } from '../stage/grips.ts';
+import { isViewMark } from '../stage/viewMarks.ts';
 import { change, image, selected, setup } from '../state.ts';
 
 /** One nudge, as a share of the photo's shorter side. */
 const NUDGE = 0.005;
+/** The horizon decides the tilt: there a nudge is a pixel of a phone's screen. */
+const FINE_NUDGE = 0.001;
 const ARROWS: readonly (readonly [IconName, string, number, number])[] = [
   ['left', 'left', -1, 0],
   ['up', 'up', 0, -1],
@@ -16,7 +19,10 @@ export function NudgePad() {
   const mark = selected.value;
   const photo = image.value?.opened;
   if (!mark || !photo) return null;
-  const by = Math.max(1, Math.round(NUDGE * Math.min(photo.width, photo.height)));
+  const by = Math.max(
+    1,
+    Math.round((isViewMark(mark) ? FINE_NUDGE : NUDGE) * Math.min(photo.width, photo.height)),
+  );
   const series = JSON.stringify(mark);
   return (
     <div class="nudges" role="toolbar" aria-label="Move the mark">
