@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { rowProfile } from '../../src/record/rowProfile.ts';
 import { PIXEL_STATUS, type ThicknessMap } from '../../src/match/types.ts';
+import { rowProfile } from '../../src/record/rowProfile.ts';
 
 const NONE = Number.NaN;
 const MAP: ThicknessMap = {
