@@ -10,8 +10,9 @@ import { straightDownFromPixelSize } from '../view/straightDown.ts';
 import { dropExcluded, viewStatus } from '../view/viewLimits.ts';
 import { groundAreaField, incidenceField } from '../view/waterFields.ts';
 import { groundAt, placeOf, type WaterView } from '../view/waterView.ts';
+import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import type { PositionSetup, Setup } from './setup.ts';
-import { type LensFacts, setupView } from './setupView.ts';
+import { missingOfView } from './setupView.ts';
 
 /** Where the photo was taken and how it looked, as far as known. */
 export interface GroundFacts {
@@ -33,7 +34,7 @@ export interface Ground {
 
 /** The map laid on the water; null where the set-up does not say enough of the view. */
 export function groundOf({ map, setup, focalLength35mm, headingDeg }: GroundFacts): Ground | null {
-  const view = anyView(setup, { width: map.width, height: map.height, focalLength35mm });
+  const view = waterViewOf(setup, map, focalLength35mm);
   if (!view) return null;
   const areaM2 = groundAreaField(view);
   dropExcluded(areaM2, viewStatus(incidenceField(view)));
@@ -44,11 +45,17 @@ export function groundOf({ map, setup, focalLength35mm, headingDeg }: GroundFact
   return { areaM2, mapping: headingDeg === null ? own : turnedMapping(own, headingDeg) };
 }
 
-/** Seen straight down, a pixel's size is enough: the focal length changes angles, not places. */
-function anyView({ view }: Setup, lens: LensFacts): WaterView | null {
-  const known = setupView(view, lens);
-  if (known || view?.pixelSizeM === undefined) return known;
-  return straightDownFromPixelSize(pinholeCamera(lens.width, lens.height, lens.width), view.pixelSizeM);
+/** Null where the view is only half told. Seen straight down, a pixel's size is enough: the focal length changes angles, not places. */
+function waterViewOf(
+  setup: Setup,
+  { width, height }: ThicknessMap,
+  focalLength35mm: number | undefined,
+): WaterView | null {
+  if (!setup.view || missingOfView(setup.view, { width, height, focalLength35mm }).length > 0) return null;
+  const whole = withPhotoFocal(setup, focalLength35mm === undefined ? {} : { focalLength35mm });
+  const known = photoViewOf(whole, width, height);
+  if (!known || known.pixelSizeM === null) return known?.view ?? null;
+  return known.view ?? straightDownFromPixelSize(pinholeCamera(width, height, width), known.pixelSizeM);
 }
 
 /**
