@@ -4,12 +4,15 @@ export interface EstimateArguments {
   readonly photo: string;
   readonly setup: string;
   readonly out: string;
+  /** Leave the position out of everything that is written. */
+  readonly noPosition: boolean;
 }
 
-export const USAGE = `Usage: npm run --silent estimate -- PHOTO --setup SETUP.json --out DIR
+export const USAGE = `Usage: npm run --silent estimate -- PHOTO --setup SETUP.json --out DIR [--no-position]
 
 Reads film thickness from a photo. SETUP.json says what the film is, what lights it and what is marked on the photo;
 its form is in src/engine/setup.schema.json. DIR is made if it is not there; files in it are replaced.
+--no-position leaves the place out of all results (the photo itself is not changed, and its picture may tell the place).
 Exit codes: 0 done, 2 bad input (one line on stderr says what).`;
 
 /** A mistake in what was typed, in one line. */
@@ -39,13 +42,18 @@ export function parseEstimateArguments(argv: readonly string[]): EstimateArgumen
     throw new UsageError('Name the set-up with --setup SETUP.json; say --help for how to use it.');
   if (!values.out)
     throw new UsageError('Name a folder for the results with --out DIR; say --help for how to use it.');
-  return { photo, setup: values.setup, out: values.out };
+  return { photo, setup: values.setup, out: values.out, noPosition: values['no-position'] };
 }
 
 function parse(argv: readonly string[]) {
   return parseArgs({
     args: [...argv],
     allowPositionals: true,
-    options: { setup: { type: 'string' }, out: { type: 'string' }, help: { type: 'boolean', short: 'h' } },
+    options: {
+      setup: { type: 'string' },
+      out: { type: 'string' },
+      'no-position': { type: 'boolean', default: false },
+      help: { type: 'boolean', short: 'h' },
+    },
   });
 }

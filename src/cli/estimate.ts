@@ -1,15 +1,20 @@
 /** `npm run --silent estimate`: the whole job headless. */
-import { mkdir, readFile, writeFile } from 'node:fs/promises';
+import { mkdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { estimate } from '../engine/estimate.ts';
+import { leftOutOf } from '../engine/leftOut.ts';
 import { parseSetup } from '../engine/parseSetup.ts';
-import { withPhotoFocal } from '../engine/photoView.ts';
+import { photoViewOf, withPhotoFocal } from '../engine/photoView.ts';
 import { SetupError } from '../engine/prepareScene.ts';
 import type { Setup } from '../engine/setup.ts';
-import { PhotoError } from '../photo/types.ts';
+import { tallyPhoto } from '../engine/tally.ts';
+import { clippedShareOf } from '../engine/tallyFacts.ts';
+import { type DecodedPhoto, PhotoError } from '../photo/types.ts';
+import { placeless } from '../record/redact.ts';
 import { parseEstimateArguments, USAGE, UsageError } from './arguments.ts';
 import { decodePhotoFile } from './decodePhoto.ts';
 import { resultFiles } from './resultFiles.ts';
+import { GROUND_FILES, tallyFiles } from './tallyFiles.ts';
 
 const BAD_INPUT = 2;
 
@@ -38,17 +43,31 @@ async function main(): Promise<number> {
     return 0;
   }
   const started = performance.now();
-  const stated = await readSetup(options.setup);
-  const photo = await decodePhotoFile(options.photo);
-  const setup = withPhotoFocal(stated, photo.metadata);
+  const given = await readSetup(options.setup);
+  const opened = await decodePhotoFile(options.photo);
+  // From here on the place is not known, so nothing that is worked out can give it away.
+  const photo: DecodedPhoto = options.noPosition
+    ? { ...opened, metadata: placeless(opened.metadata) }
+    : opened;
+  const setup = withPhotoFocal(options.noPosition ? placeless(given) : given, photo.metadata);
   const decoded = performance.now();
-  const result = estimate(photo.pixels, setup, () => performance.now());
+  const { pixels, metadata } = photo;
+  const view = photoViewOf(setup, pixels.width, pixels.height);
+  const result = estimate(pixels, setup, () => performance.now());
+  const clippedShare = clippedShareOf(leftOutOf(pixels, setup));
+  const report = tallyPhoto(result.map, setup, view, {}, { metadata, clippedShare });
   try {
     await mkdir(options.out, { recursive: true });
+    // Files of an earlier run must not pass for this one's.
+    for (const name of GROUND_FILES) await rm(join(options.out, name), { force: true });
   } catch {
     throw new UsageError(`The folder ${options.out} cannot be made; name another with --out.`);
   }
-  for (const [name, bytes] of resultFiles(photo, setup, result, { decode: decoded - started })) {
+  const timingsMs = { decode: decoded - started };
+  for (const [name, bytes] of resultFiles(photo, setup, result, timingsMs)) {
+    await writeFile(join(options.out, name), bytes);
+  }
+  for (const [name, bytes] of tallyFiles(result.map, setup, metadata, report)) {
     await writeFile(join(options.out, name), bytes);
   }
   return 0;

@@ -88,7 +88,8 @@ export function withoutGeometry(geojson: string): string {
   return `${JSON.stringify({ ...collection, features })}\n`;
 }
 
-function placeless<T extends object>(holder: T): T {
+/** A set-up or metadata without position and altitude. */
+export function placeless<T extends object>(holder: T): T {
   const copy = { ...holder } as T & { position?: unknown; altitudeM?: unknown };
   delete copy.position;
   delete copy.altitudeM;

@@ -2,8 +2,8 @@ import { APPEARANCES } from '../tally/appearanceCode.ts';
 import { type CsvValue, writeCsv } from './csv.ts';
 import type { Observation, RecordedResult, Sourced } from './observation.ts';
 
-const HEADER = ['group', 'quantity', 'value', 'low', 'high', 'unit', 'source_or_method'];
-type Row = readonly [string, string, CsvValue, CsvValue, CsvValue, string, string];
+export const RESULT_HEADER = ['group', 'quantity', 'value', 'low', 'high', 'unit', 'source_or_method'];
+export type ResultRow = readonly [string, string, CsvValue, CsvValue, CsvValue, string, string];
 
 /**
  * The observation and its results as one table, a quantity a row, for spreadsheets and scripts. Values stand unrounded in
@@ -11,15 +11,15 @@ type Row = readonly [string, string, CsvValue, CsvValue, CsvValue, string, strin
  * no row of its own but is listed at the end.
  */
 export function resultsCsv(observation: Observation): string {
-  return writeCsv(HEADER, [
+  return writeCsv(RESULT_HEADER, [
     ...recordRows(observation),
     ...viewRows(observation),
     ...(observation.result ? resultRows(observation.result) : []),
-    ...observation.notKnown.map((text): Row => ['not_known', '', text, null, null, '', '']),
+    ...observation.notKnown.map((text): ResultRow => ['not_known', '', text, null, null, '', '']),
   ]);
 }
 
-const text = (group: string, quantity: string, value: string | undefined | null, source = ''): Row[] =>
+const text = (group: string, quantity: string, value: string | undefined | null, source = ''): ResultRow[] =>
   value ? [[group, quantity, value, null, null, '', source]] : [];
 const figure = (
   group: string,
@@ -27,11 +27,15 @@ const figure = (
   value: number | undefined | null,
   unit: string,
   source = '',
-): Row[] => (value == null ? [] : [[group, quantity, value, null, null, unit, source]]);
-const sourced = (group: string, quantity: string, of: Sourced<number> | undefined, unit: string): Row[] =>
-  figure(group, quantity, of?.value, unit, of?.source);
+): ResultRow[] => (value == null ? [] : [[group, quantity, value, null, null, unit, source]]);
+const sourced = (
+  group: string,
+  quantity: string,
+  of: Sourced<number> | undefined,
+  unit: string,
+): ResultRow[] => figure(group, quantity, of?.value, unit, of?.source);
 
-function recordRows({ time, position, ...o }: Observation): Row[] {
+function recordRows({ time, position, ...o }: Observation): ResultRow[] {
   return [
     ...text('record', 'title', o.title),
     ...text('record', 'id', o.id),
@@ -55,7 +59,7 @@ function recordRows({ time, position, ...o }: Observation): Row[] {
   ];
 }
 
-function viewRows({ viewpoint, conditions }: Observation): Row[] {
+function viewRows({ viewpoint, conditions }: Observation): ResultRow[] {
   const sun = conditions.sun;
   return [
     ...text('view', 'viewpoint', viewpoint.from),
@@ -79,8 +83,9 @@ function viewRows({ viewpoint, conditions }: Observation): Row[] {
   ];
 }
 
-function resultRows({ summary, area, byThickness, byCode, drainage }: RecordedResult): Row[] {
-  const rows: Row[] = [];
+/** What was worked out, a quantity a row; nothing for what was not. */
+export function resultRows({ summary, area, byThickness, byCode, drainage }: RecordedResult): ResultRow[] {
+  const rows: ResultRow[] = [];
   if (summary) {
     const { quantilesNm: q, resolvableNm, counts } = summary;
     if (q)
