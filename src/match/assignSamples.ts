@@ -27,6 +27,7 @@ export function assignSamples(
   const { chart, weight, sum, cost, tangent, reach } = work;
   const { samples } = input;
   const labels = weight.length;
+  const perAngle = work.basis.rowsPerAngle ?? labels;
   const perCode = 1 / (sd * sd);
   const outlier = Math.exp(-(OUTLIER_DISTANCE ** 2) / 2);
   weight.fill(0);
@@ -73,6 +74,7 @@ export function assignSamples(
       sampleNm[i] = Number.NaN;
       continue;
     }
+    const first = from - (from % perAngle);
     let evidence = 0;
     let moment = 0;
     let distance = 0;
@@ -81,7 +83,7 @@ export function assignSamples(
       if (excess > NEGLIGIBLE) continue;
       const w = Math.exp(-excess / 2);
       evidence += w;
-      moment += w * (j + slideOf(work, j, r, g, b));
+      moment += w * (j - first + slideOf(work, j, r, g, b));
       distance += w * cost[j]!;
     }
     const likelihood = Math.exp(-least / 2);

@@ -29,6 +29,8 @@ export const ROW = 3 * COMPONENTS;
 export interface FilmBasis {
   readonly stepNm: number;
   readonly count: number;
+  /** Rows of one angle, where the bases of several angles are stacked (`stackBases`); `count` where left out. */
+  readonly rowsPerAngle?: number;
   readonly table: Float64Array;
   readonly perIndex: Float64Array;
   /** Per mired (10^6 / K) of the light's correlated colour temperature; zero for a lamp. */

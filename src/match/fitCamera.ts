@@ -44,6 +44,7 @@ export function fitCamera(input: FitInput): CameraFit {
   const labels = input.model.basis.count;
   const count = input.samples.length / 3;
   const work: Workspace = {
+    basis: input.model.basis,
     evaluator: modelEvaluator(input.model),
     chart: new Float64Array(3 * labels),
     tangent: new Float64Array(3 * labels),

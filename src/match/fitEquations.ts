@@ -101,8 +101,8 @@ function addReference(work: Workspace, reference: ReferenceEvidence): number {
   let tangent: [number, number, number] = [0, 0, 0];
   let share = 0;
   if (reference.kind === 'clean') {
-    evaluator.codesAt(0, model, 0);
-    evaluator.jacobianAt(0, work.jacobian);
+    evaluator.codesAt(reference.row ?? 0, model, 0);
+    evaluator.jacobianAt(reference.row ?? 0, work.jacobian);
   } else {
     let level = reference.kind === 'dark' ? 0 : (reference.reflectance ?? work.cardLevel);
     if (reference.kind === 'card' && reference.reflectance === null) {

@@ -1,4 +1,5 @@
 import type { CameraModel, ModelEvaluator } from './cameraModel.ts';
+import type { FilmBasis } from './filmBasis.ts';
 import type { Prior } from './parameters.ts';
 
 /** A colour marked on the photo whose film is known: bare surface, a card, black. Codes of 255. */
@@ -9,6 +10,8 @@ export interface ReferenceEvidence {
   readonly sd: number;
   /** Of a card: its reflectance, or null where only its colour counts. */
   readonly reflectance: number | null;
+  /** Row of the basis that a clean surface shows: thickness 0 at the angle it is seen at; 0 where left out. */
+  readonly row?: number;
 }
 
 export interface FitInput {
@@ -30,6 +33,7 @@ export interface FitInput {
 
 /** Working arrays of one fit. */
 export interface Workspace {
+  readonly basis: FilmBasis;
   readonly evaluator: ModelEvaluator;
   readonly chart: Float64Array;
   /** Change of the codes a label, and half its length: the stretch a label stands for. */
@@ -50,14 +54,17 @@ export interface Workspace {
 export function drawChart(work: Workspace, parameters: Float64Array): void {
   const { chart, tangent, reach, evaluator } = work;
   const labels = reach.length;
+  const { basis } = work;
+  const perAngle = basis.rowsPerAngle ?? basis.count;
   evaluator.moveTo(parameters, false);
   for (let j = 0; j < labels; j++) evaluator.codesAt(j, chart, 3 * j);
   for (let j = 0; j < labels; j++) {
-    const before = Math.max(0, j - 1);
-    const after = Math.min(labels - 1, j + 1);
+    const first = j - (j % perAngle);
+    const before = Math.max(first, j - 1);
+    const after = Math.min(labels - 1, first + perAngle - 1, j + 1);
     let square = 0;
     for (let c = 0; c < 3; c++) {
-      const t = (chart[3 * after + c]! - chart[3 * before + c]!) / (after - before);
+      const t = (chart[3 * after + c]! - chart[3 * before + c]!) / Math.max(1, after - before);
       tangent[3 * j + c] = t;
       square += t * t;
     }
