@@ -48,7 +48,9 @@ export function bandTask(
       channels,
       maxCode,
     },
+    firstRow: from,
     charts: calibration.charts,
+    angles: calibration.angles,
     rules: calibration.rules,
     leftOut: leftOut.slice(from * width, band.toRow * width),
     settled: {

@@ -5,26 +5,41 @@ import type { ActivityMap } from '../match/activity.ts';
 import { buildCodeChart } from '../match/buildCodeChart.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
-import { type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
+import { type FilmBasis, type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
 import { type CameraFit, type FitInput, fitCamera } from '../match/fitCamera.ts';
 import type { ReadingRules } from '../match/mapPixels.ts';
 import { observerBasis } from '../match/observerBasis.ts';
 import { AT, FIXED_CAMERA, type Prior, statedPrior } from '../match/parameters.ts';
 import { type FilmSample, SAMPLE_VARIANCE_SHARE, sampleFilm } from '../match/sampleFilm.ts';
 import type { PhotoPixels } from '../photo/types.ts';
+import { planAngles } from './anglePlan.ts';
 import type { FitReport, Notice } from './contract.ts';
 import { describeFit } from './describeFit.ts';
+import { photoViewOf } from './photoView.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
 import { type References, readReferences } from './references.ts';
 import { resolvableRange } from './resolvable.ts';
+import {
+  angleCharts,
+  cleanAngle,
+  makeReader,
+  nearestOf,
+  type SeenAngles,
+  usableFor,
+  withBareRow,
+} from './seenAngles.ts';
 import { settledRanges } from './settledRanges.ts';
 import type { Setup } from './setup.ts';
+import { slantedOptics } from './slantedOptics.ts';
 import { startGains } from './startGains.ts';
+import { viewNoticesOf } from './viewSeen.ts';
 
 /** All that is worked out once a photo before its pixels are read. Data only: it can go to a worker. */
 export interface Calibration {
   /** One chart for each class of how lively a pixel's surroundings are, calmest first. */
   readonly charts: readonly CodeChart[];
+  /** The charts at all angles of a photo with a view, and where its pixels look; `charts` is then that of their middle. */
+  readonly angles: SeenAngles | null;
   readonly rules: ReadingRules;
   readonly orderBoundariesNm: readonly number[];
   readonly resolvableNm: { readonly fromNm: number; readonly toNm: number };
@@ -79,24 +94,48 @@ export function calibrate(
   activity: ActivityMap,
   onStep: OnStep = () => {},
 ): Calibration {
-  const { scene, light } = prepareScene(setup);
-  const references = readReferences(pixels, setup);
-  const notices: Notice[] = [...references.notices];
+  const prepared = prepareScene(setup);
+  const { light } = prepared;
+  const photoView = photoViewOf(setup, pixels.width, pixels.height);
+  const plan = photoView?.view ? planAngles(photoView.view, prepared.scene.stack, leftOut) : null;
+  const scene = plan ? { ...prepared.scene, incidenceRad: plan.referenceRad } : prepared.scene;
+  const marked = readReferences(pixels, setup);
+  const notices: Notice[] = [...marked.notices, ...viewNoticesOf(photoView, leftOut)];
   const maxNm = setup.maxThicknessNm ?? USUAL_MAX_NM;
   const asObserver = setup.camera === 'cie1931';
   const fits = !asObserver && !(typeof setup.camera === 'object' && !setup.camera.fit);
   onStep(0, 'computing the chart');
   const matrices = matrixMaker(light, pixels.encoding, FILM_WAVELENGTHS_NM);
-  const modelAt = (stepNm: number, count: number): CameraModel => ({
-    basis: asObserver
-      ? observerBasis(scene, light, pixels.encoding, stepNm, count, FILM_WAVELENGTHS_NM)
-      : filmBasis(scene, light, stepNm, count, FILM_WAVELENGTHS_NM),
+  const makeBasis = (at: FilmScene, stepNm: number, count: number, wavelengthNm: Float64Array) =>
+    asObserver
+      ? observerBasis(at, light, pixels.encoding, stepNm, count, wavelengthNm)
+      : filmBasis(at, light, stepNm, count, wavelengthNm);
+  const modelOf = (basis: FilmBasis): CameraModel => ({
+    basis,
     encoding: pixels.encoding,
     matrixFor: asObserver ? () => Float64Array.of(1, 0, 0, 0, 1, 0, 0, 0, 1) : matrices.matrixFor,
   });
-  const coarse = modelAt(FIT_STEP_NM, Math.ceil(Math.min(maxNm, FIT_MAX_NM) / FIT_STEP_NM) + 1);
-  const usable = leftOut ? leftOut.map((v) => (v === 0 ? 1 : 0)) : null;
-  const sample = sampleFilm(pixels, usable, SAMPLES);
+  const modelAt = (stepNm: number, count: number) =>
+    modelOf(makeBasis(scene, stepNm, count, FILM_WAVELENGTHS_NM));
+  const slanted = plan
+    ? slantedOptics(
+        plan,
+        photoView?.poses ?? null,
+        scene,
+        makeBasis,
+        maxNm,
+        FIT_MAX_NM,
+        cleanAngle(plan, setup),
+        setup.windMS ?? null,
+      )
+    : null;
+  const coarse = slanted
+    ? modelOf(slanted.fitBasis)
+    : modelAt(FIT_STEP_NM, Math.ceil(Math.min(maxNm, FIT_MAX_NM) / FIT_STEP_NM) + 1);
+  const references = slanted ? withBareRow(marked, slanted.bareRow) : marked;
+  const taken = sampleFilm(pixels, usableFor(leftOut, plan, pixels.width), SAMPLES);
+  const placed = slanted ? slanted.place(taken, pixels.encoding) : null;
+  const sample = placed?.sample ?? taken;
   const start = startGains(coarse, sample, references, pixels);
   const spread = {
     ...start.spread,
@@ -105,18 +144,36 @@ export function calibrate(
   };
   const prior = statedPrior(asObserver ? { ...spread, ...FIXED_CAMERA } : spread, start.priorMean);
   onStep(0.1, 'fitting the camera');
-  const outcome = fitWithFallback(coarse, prior, start.starts, sample, references, fits);
+  const outcome = fitWithFallback(
+    coarse,
+    prior,
+    start.starts,
+    sample,
+    references,
+    fits,
+    placed?.allowed ?? null,
+  );
   const noise = sample.count > 0 ? sample.pixelNoise : Float64Array.of(2, 2, 2);
   const orders = orderBoundaries(scene.stack, scene.incidenceRad, maxNm);
-  const chartsFor = (model: CameraModel, fit: CameraFit) => drawCharts(model, fit, scene, noise, orders);
+  const chartsFor = (model: CameraModel, fit: CameraFit) =>
+    drawCharts(model, fit, scene, noise, orders, OUTSIDE_FAMILY);
+  const slantedCharts = (fit: CameraFit, every: number): SeenAngles | null =>
+    slanted && {
+      view: slanted.plan.view,
+      charts: angleCharts(slanted, every, maxNm, (basis, at, relativeSd, own) =>
+        drawCharts(modelOf(basis), fit, at, noise, own, Math.hypot(OUTSIDE_FAMILY, relativeSd)),
+      ),
+    };
   if (outcome.determined !== 'no') {
     onStep(0.4, 'settling orders for the camera');
-    const rough = chartsFor(coarse, outcome.fit);
+    const angles = slantedCharts(outcome.fit, 2);
+    const rough = angles ? angles.charts.charts[0]! : chartsFor(coarse, outcome.fit);
     const allowed = settledRanges(
       pixels,
-      activity,
       sample,
-      rough,
+      placed,
+      makeReader(pixels, activity, { charts: rough, angles }),
+      rough[0]!,
       rulesFor(setup, scene, Number.POSITIVE_INFINITY),
       leftOut,
     );
@@ -134,7 +191,10 @@ export function calibrate(
     const covariance = outcome.fit.covariance.map((v) => v * COVARIANCE_FACTOR);
     outcome.fit = { ...outcome.fit, covariance };
   }
-  const charts = chartsFor(modelAt(1, Math.ceil(maxNm) + 1), outcome.fit);
+  const angles = slantedCharts(outcome.fit, 1);
+  const charts = angles
+    ? angles.charts.charts[nearestOf(angles.charts.incidenceRad, scene.incidenceRad)]!
+    : chartsFor(modelAt(1, Math.ceil(maxNm) + 1), outcome.fit);
   const factor = pathRatio(scene, outcome.fit.parameters[AT.index]!);
   const boundaries = orders.map((d) => d * factor);
   const chart = charts[0]!;
@@ -149,6 +209,7 @@ export function calibrate(
   }
   return {
     charts,
+    angles,
     rules: rulesFor(setup, scene, reachesEnd ? Number.POSITIVE_INFINITY : resolvable.toNm),
     orderBoundariesNm: boundaries,
     resolvableNm: resolvable,
@@ -174,6 +235,7 @@ function drawCharts(
   scene: FilmScene,
   noise: Float64Array,
   nominalOrdersNm: readonly number[],
+  relativeSd: number,
 ): CodeChart[] {
   const shift = fit.parameters[AT.index]!;
   const factor = pathRatio(scene, shift);
@@ -184,7 +246,7 @@ function drawCharts(
       model,
       fit,
       { codes: [noise[0]!, noise[1]!, noise[2]!], ...error },
-      { factor, perIndex, relativeSd: OUTSIDE_FAMILY },
+      { factor, perIndex, relativeSd },
       (d) => orderOf(d, boundaries),
     ),
   );
@@ -220,8 +282,9 @@ function fitWithFallback(
   sample: FilmSample,
   references: References,
   fits: boolean,
+  allowed: Uint32Array | null,
 ): Outcome {
-  const base = fitInput(model, prior, sample, references);
+  const base = { ...fitInput(model, prior, sample, references), allowed };
   const alone = () => fitCamera({ ...base, start: starts[0]!, samples: new Float64Array(0) });
   if (!fits || sample.count < 60) return { fit: alone(), determined: 'no', spanNm: [0, 0] };
   const few = sample.codes.subarray(0, 3 * Math.min(sample.count, FIRST_SAMPLES));

@@ -1,24 +1,19 @@
 import { activityMap } from '../match/activity.ts';
 import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
-import {
-  fillCandidates,
-  finishRows,
-  type MapRows,
-  makeMapRows,
-  mapRows,
-  type SettledField,
-} from '../match/mapPixels.ts';
+import { finishAngleRows, finishRows } from '../match/finishRows.ts';
+import { fillCandidates, type MapRows, makeMapRows, mapRows, type SettledField } from '../match/mapPixels.ts';
 import { mendSpeckles } from '../match/mendSpeckles.ts';
-import { makePixelReader } from '../match/pixelReader.ts';
 import { resolveOrders } from '../match/resolveOrders.ts';
 import { smoothRows } from '../match/smoothRows.ts';
 import type { ThicknessMap } from '../match/types.ts';
 import type { PhotoPixels } from '../photo/types.ts';
+import { cosineReader } from '../view/waterFields.ts';
 import { type Calibration, calibrate, type OnStep } from './calibrate.ts';
 import type { EstimateResult } from './contract.ts';
 import type { BandTask } from './jobs.ts';
 import { leftOutOf } from './leftOut.ts';
 import { heedPins } from './pins.ts';
+import { makeReader } from './seenAngles.ts';
 import type { Setup } from './setup.ts';
 import { summarise } from './summarise.ts';
 
@@ -61,13 +56,17 @@ export function smoothingReach(width: number, height: number): 1 | 2 {
 /** Reads a band of the full map, mends, smooths and finishes it. A reader that has met the photo's colours is quicker. */
 export function readBand(
   task: BandTask,
-  reader = makePixelReader(task.pixels, activityMap(task.pixels), task.charts),
+  reader = makeReader(task.pixels, activityMap(task.pixels), task, task.firstRow),
 ): MapRows {
-  const { pixels, charts, rules } = task;
+  const { pixels, charts, angles, rules } = task;
   const rows = makeMapRows(pixels.width, 0, pixels.height);
   mapRows(pixels, reader, rules, task.leftOut, task.settled, rows);
   mendSpeckles(rows, pixels.width);
-  finishRows(rows, charts[0]!, rules, smoothRows(rows, pixels.width, task.reach, rules.bareNm));
+  const ownShare = smoothRows(rows, pixels.width, task.reach, rules.bareNm);
+  if (angles) {
+    const cosineAt = cosineReader(angles.view, task.firstRow);
+    finishAngleRows(rows, pixels.width, angles.charts, cosineAt, rules, ownShare);
+  } else finishRows(rows, charts[0]!, rules, ownShare);
   return rows;
 }
 
@@ -89,7 +88,7 @@ export function estimate(
   const activity = activityMap(pixels);
   const calibration = calibrate(pixels, setup, leftOut, activity, (share, step) => onStep(share * 0.4, step));
   const fitted = clock();
-  const reader = makePixelReader(pixels, activity, calibration.charts);
+  const reader = makeReader(pixels, activity, calibration);
   const field = emptyField(pixels);
   onStep(0.4, 'matching colours');
   fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
@@ -97,9 +96,9 @@ export function estimate(
   const settled = settle(field, setup, calibration, (share) => onStep(0.5 + 0.2 * share, 'settling orders'));
   const ordered = clock();
   onStep(0.7, 'reading every pixel');
-  const { charts, rules } = calibration;
+  const { charts, angles, rules } = calibration;
   const reach = smoothingReach(pixels.width, pixels.height);
-  const rows = readBand({ pixels, charts, rules, leftOut, settled, reach }, reader);
+  const rows = readBand({ pixels, firstRow: 0, charts, angles, rules, leftOut, settled, reach }, reader);
   const map = joinBands(pixels.width, pixels.height, [rows]);
   const mapped = clock();
   const timingsMs = {

@@ -3,6 +3,7 @@ import type { CodeChart } from '../match/codeChart.ts';
 import type { MapRows, ReadingRules, SettledField } from '../match/mapPixels.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import type { ChartView, EstimateResult, OpenedPhoto, Probe } from './contract.ts';
+import type { SeenAngles } from './seenAngles.ts';
 import type { Setup } from './setup.ts';
 import type { TallyReport, TallyRequest } from './tallyContract.ts';
 
@@ -12,7 +13,10 @@ export type RowPixels = Omit<PhotoPixels, 'encoding'>;
 /** A band of the photo with all that reading it needs, self-contained: row 0 is the band's first row. */
 export interface BandTask {
   readonly pixels: RowPixels;
+  /** The photo's row of the band's first row: each row looks at angles of its own. */
+  readonly firstRow: number;
   readonly charts: readonly CodeChart[];
+  readonly angles: SeenAngles | null;
   readonly rules: ReadingRules;
   readonly leftOut: Uint8Array;
   readonly settled: SettledField;

@@ -2,7 +2,7 @@
 
 import { type ActivityMap, activityMap } from '../match/activity.ts';
 import { fillCandidates, type MapRows, type SettledField } from '../match/mapPixels.ts';
-import { makePixelReader, type PixelReader } from '../match/pixelReader.ts';
+import type { PixelReader } from '../match/pixelReader.ts';
 import type { ThicknessMap } from '../match/types.ts';
 import { decodePhoto } from '../photo/decode.browser.ts';
 import type { DecodedPhoto } from '../photo/types.ts';
@@ -14,6 +14,7 @@ import type { BandTask, LeadJobs } from './jobs.ts';
 import { leftOutOf } from './leftOut.ts';
 import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import { probePixel } from './probe.ts';
+import { makeReader } from './seenAngles.ts';
 import { buffersIn, serve } from './serve.worker.ts';
 import type { Setup } from './setup.ts';
 import { summarise } from './summarise.ts';
@@ -78,7 +79,7 @@ serve<LeadJobs>(
       );
       const calibrated = performance.now();
       onProgress(0.45, 'matching colours');
-      const reader = makePixelReader(pixels, activity, calibration.charts);
+      const reader = makeReader(pixels, activity, calibration);
       const field = emptyField(pixels);
       fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
       const matched = performance.now();
@@ -108,7 +109,13 @@ serve<LeadJobs>(
         timingsMs,
       };
       // Charts are needed here too; the rest of a task is a copy already.
-      return { others: tasks.slice(1).map((task) => ({ ...task, charts: structuredClone(task.charts) })) };
+      return {
+        others: tasks.slice(1).map((task) => ({
+          ...task,
+          charts: structuredClone(task.charts),
+          angles: structuredClone(task.angles),
+        })),
+      };
     },
     readOwn: (_, onProgress) => {
       if (!measured) throw new Error('Prepare the map first.');

@@ -1,10 +1,12 @@
 import { pixelsOf } from '../photo/rectangle.ts';
 import type { PhotoPixels } from '../photo/types.ts';
+import { LEFT_OUT } from './leftOutMarks.ts';
+import { photoViewOf } from './photoView.ts';
 import type { Setup } from './setup.ts';
 import { fillCapsule, fillPolygon } from './spans.ts';
+import { leaveOutSlanted } from './viewSeen.ts';
 
-/** Marks of pixels that are not read. */
-export const LEFT_OUT = { no: 0, outsideRegion: 1, noColour: 2 } as const;
+export { LEFT_OUT };
 
 /**
  * What a person says takes part: the region's polygon, else the whole photo, then each stroke of the brush over it in
@@ -29,13 +31,15 @@ export function paintedOutside(
 }
 
 /**
- * Pixels that take no part: outside the region or painted out, a card, or clipped. Painting in brings no colour back:
+ * Pixels that take no part: outside the region or painted out, seen too flat or above the horizon, a card, or clipped. Painting in brings no colour back:
  * clipped pixels and the card stay out.
  * @returns one byte a pixel of `LEFT_OUT`
  */
 export function leftOutOf(pixels: PhotoPixels, setup: Setup): Uint8Array {
   const { width, height, codes, channels, maxCode } = pixels;
   const out = paintedOutside(width, height, setup);
+  const view = photoViewOf(setup, width, height)?.view;
+  if (view) leaveOutSlanted(out, view);
   const clipped = (maxCode * 254) / 255;
   for (let i = 0, at = 0; i < out.length; i++, at += channels) {
     if (out[i]) continue;

@@ -1,11 +1,11 @@
-import type { ActivityMap } from '../match/activity.ts';
 import { MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import { fillCandidates, type ReadingRules } from '../match/mapPixels.ts';
-import { makePixelReader } from '../match/pixelReader.ts';
+import type { PixelReader } from '../match/pixelReader.ts';
 import { resolveOrders } from '../match/resolveOrders.ts';
 import type { FilmSample } from '../match/sampleFilm.ts';
 import type { PhotoPixels } from '../photo/types.ts';
+import type { PlacedSample } from './slantedOptics.ts';
 
 /** Places of the rough order step: enough to follow the bands, few enough to take a moment. */
 const PLACES = 60_000;
@@ -14,13 +14,14 @@ const FREEDOM_NM = 70;
 
 /**
  * Settles orders roughly with a first camera and says which labels each film sample may take in the next fit, as
- * [from, to) pairs. Without this the fit and the orders can agree on a wrong reading of the weak high orders.
+ * [from, to) pairs. `reader` and `chart` are of that camera; `placed` says in which strip of a slanted photo samples lie. Without this the fit and the orders can agree on a wrong reading of the weak high orders.
  */
 export function settledRanges(
   pixels: PhotoPixels,
-  activity: ActivityMap,
   sample: FilmSample,
-  charts: readonly CodeChart[],
+  placed: PlacedSample | null,
+  reader: PixelReader,
+  chart: CodeChart,
   rules: ReadingRules,
   leftOut: Uint8Array | null,
 ): Uint32Array {
@@ -30,10 +31,10 @@ export function settledRanges(
     Math.ceil(pixels.height / spacing),
     spacing,
   );
-  fillCandidates(pixels, makePixelReader(pixels, activity, charts), rules, leftOut, field, 0, field.height);
+  fillCandidates(pixels, reader, rules, leftOut, field, 0, field.height);
   const { choice } = resolveOrders(field);
-  const labels = charts[0]!.count;
-  const stepNm = charts[0]!.thicknessNm[1]!;
+  const labels = placed?.rows ?? chart.count;
+  const stepNm = chart.thicknessNm[1]!;
   const reach = Math.ceil(FREEDOM_NM / stepNm);
   const ranges = new Uint32Array(2 * sample.count);
   for (let i = 0; i < sample.count; i++) {
@@ -41,11 +42,14 @@ export function settledRanges(
     const row = Math.min(field.height - 1, Math.floor(sample.at[2 * i + 1]! / spacing));
     const place = row * field.width + column;
     const chosen = choice[place]!;
-    ranges[2 * i + 1] = labels;
+    const first = placed ? placed.allowed[2 * i]! : 0;
+    ranges[2 * i] = first;
+    ranges[2 * i + 1] = first + labels;
     if (chosen === 255) continue;
-    const label = Math.round(field.thicknessNm[place * MOST_CANDIDATES + chosen]! / stepNm);
-    ranges[2 * i] = Math.max(0, label - reach);
-    ranges[2 * i + 1] = Math.min(labels, label + reach + 1);
+    const seenNm = field.thicknessNm[place * MOST_CANDIDATES + chosen]! * (placed ? placed.scale[i]! : 1);
+    const label = Math.min(labels - 1, Math.round(seenNm / stepNm));
+    ranges[2 * i] = first + Math.max(0, label - reach);
+    ranges[2 * i + 1] = first + Math.min(labels, label + reach + 1);
   }
   return ranges;
 }

@@ -30,7 +30,8 @@ export function startGains(
   pixels: PhotoPixels,
 ): Start {
   const start = new Float64Array(PARAMETERS);
-  const chart = nominalChart(model);
+  const bareRow = references.evidence.find(({ kind }) => kind === 'clean')?.row ?? 0;
+  const chart = nominalChart(model, bareRow);
   const brightest = brightestOf(sample, pixels);
   const { clean, white, whiteReflectance } = references;
   const balance = white ? balanceOf(white.linear) : [0, 0, 0];
@@ -79,7 +80,7 @@ function balanceOf(linear: readonly number[]): number[] {
 }
 
 /** Linear RGB of the nominal camera at bare surface, and the brightest mean of channels over the chart. */
-function nominalChart(model: CameraModel): { bare: Float64Array; brightest: number } {
+function nominalChart(model: CameraModel, bareRow: number): { bare: Float64Array; brightest: number } {
   const evaluator = modelEvaluator(model);
   evaluator.moveTo(new Float64Array(PARAMETERS), false);
   const codes = new Float64Array(3);
@@ -91,7 +92,7 @@ function nominalChart(model: CameraModel): { bare: Float64Array; brightest: numb
     for (let c = 0; c < 3; c++) {
       const linear = model.encoding.decode(codes[c]! / 255);
       mean += linear / 3;
-      if (j === 0) bare[c] = linear;
+      if (j === bareRow) bare[c] = linear;
     }
     brightest = Math.max(brightest, mean);
   }

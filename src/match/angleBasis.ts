@@ -40,7 +40,12 @@ export function angleBasis(
         (t * (t - 1) * (t - 2)) / 6,
       ];
       const four = nodes.slice(start, start + 4);
-      const mixed = FIELDS.map((field) => mix(four.map((node) => node[field]), weights));
+      const mixed = FIELDS.map((field) =>
+        mix(
+          four.map((node) => node[field]),
+          weights,
+        ),
+      );
       return { ...four[0]!, table: mixed[0]!, perIndex: mixed[1]!, perMired: mixed[2]! };
     },
   };

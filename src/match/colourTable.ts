@@ -17,18 +17,20 @@ export interface ColourTable {
 /**
  * @param levels codes a channel, 256 or 1024
  * @param read posterior of a colour on the 0..255 scale
+ * @param room slots at first, a power of two; twice the colours expected
  */
 export function makeColourTable(
   levels: number,
   read: (r: number, g: number, b: number, out: Modes) => void,
+  room = 1 << 16,
 ): ColourTable {
   const bits = Math.ceil(Math.log2(levels));
   const scale = 255 / (levels - 1);
-  let capacity = 1 << 16;
+  let capacity = room;
   let keys = new Int32Array(capacity).fill(-1);
   let places = new Int32Array(capacity);
   let used = 0;
-  let records = new Float32Array(1 << 18);
+  let records = new Float32Array(4 * room);
   let end = 0;
   const modes = makeModes();
 

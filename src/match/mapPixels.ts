@@ -1,6 +1,5 @@
 import type { PhotoPixels } from '../photo/types.ts';
 import { type CandidateField, MOST_CANDIDATES } from './candidates.ts';
-import type { CodeChart } from './codeChart.ts';
 import type { PixelReader } from './pixelReader.ts';
 import { MODE_FIELDS } from './posterior.ts';
 import { STATED_SMOOTHNESS } from './resolveOrders.ts';
@@ -47,7 +46,7 @@ export function fillCandidates(
       field.count[place] = 0;
       if (leftOut?.[pixel]) continue;
       const offset = reader.lookUp(x, y);
-      const records = reader.records;
+      const { records, scale } = reader;
       if (records[offset + 1]! > rules.outlierDistance) continue;
       const count = Math.min(records[offset]!, MOST_CANDIDATES);
       field.count[place] = count;
@@ -55,8 +54,8 @@ export function fillCandidates(
       for (let k = 0; k < count; k++) {
         const mode = offset + 2 + k * MODE_FIELDS;
         const out = place * MOST_CANDIDATES + k;
-        field.thicknessNm[out] = records[mode]!;
-        field.sdNm[out] = (records[mode + 2]! - records[mode + 1]!) / (2 * COVER_90);
+        field.thicknessNm[out] = records[mode]! * scale;
+        field.sdNm[out] = ((records[mode + 2]! - records[mode + 1]!) * scale) / (2 * COVER_90);
         field.cost[out] = Math.min(MOST_COST, (records[mode + 3]! - best) / 2);
       }
     }
@@ -114,11 +113,11 @@ export function mapRows(
       const pixel = y * width + x;
       const out = (y - rows.fromRow) * width + x;
       if (leftOut?.[pixel]) {
-        noAnswer(rows, out, leftOut[pixel]! === 1 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour);
+        noAnswer(rows, out, leftOut[pixel]! !== 2 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour);
         continue;
       }
       const offset = reader.lookUp(x, y);
-      const records = reader.records;
+      const { records, scale } = reader;
       if (records[offset + 1]! > rules.outlierDistance || records[offset] === 0) {
         noAnswer(rows, out, PIXEL_STATUS.noFilmColour);
         continue;
@@ -128,15 +127,16 @@ export function mapRows(
       let margin = Number.POSITIVE_INFINITY;
       if (count > 1 && settled) {
         const neighbours = settledAround(settled, x, y, nearby);
-        chosen = choose(records, offset, count, nearby, neighbours.count);
+        chosen = choose(records, offset, count, scale, nearby, neighbours.count);
         margin = neighbours.margin;
       } else if (count > 1) {
         margin = (records[offset + 2 + MODE_FIELDS + 3]! - records[offset + 2 + 3]!) / 2;
       }
       const mode = offset + 2 + chosen * MODE_FIELDS;
-      rows.thicknessNm[out] = records[mode]!;
-      rows.lowNm[out] = records[mode + 1]!;
-      rows.highNm[out] = records[mode + 2]!;
+      rows.thicknessNm[out] = records[mode]! * scale;
+      rows.lowNm[out] = records[mode + 1]! * scale;
+      rows.highNm[out] = records[mode + 2]! * scale;
+      if (reader.share > 0) blend(reader, rules, rows, out);
       rows.status[out] =
         count > 1 && margin < rules.ambiguityMargin ? PIXEL_STATUS.ambiguous : PIXEL_STATUS.measured;
     }
@@ -182,10 +182,39 @@ function settledAround(
 
 const NEIGHBOURS = { count: 0, margin: 0 };
 
+/**
+ * Mixes in what the second angle makes of the same reading, for its share. It is the mode nearest in thickness; where
+ * none is near (at the end of the chart, or no film at that angle) the first stands alone.
+ */
+function blend(reader: PixelReader, rules: ReadingRules, rows: MapRows, out: number): void {
+  const offset = reader.lookUpBeside();
+  const { besideRecords: records, besideScale: scale, share } = reader;
+  if (records[offset + 1]! > rules.outlierDistance) return;
+  const own = rows.thicknessNm[out]!;
+  let nearest = -1;
+  let least = SAME_MODE_NM;
+  for (let k = 0; k < records[offset]!; k++) {
+    const mode = offset + 2 + k * MODE_FIELDS;
+    const gap = Math.abs(records[mode]! * scale - own);
+    if (gap < least) {
+      least = gap;
+      nearest = mode;
+    }
+  }
+  if (nearest < 0) return;
+  rows.thicknessNm[out]! += share * (records[nearest]! * scale - own);
+  rows.lowNm[out]! += share * (records[nearest + 1]! * scale - rows.lowNm[out]!);
+  rows.highNm[out]! += share * (records[nearest + 2]! * scale - rows.highNm[out]!);
+}
+
+/** Readings of a colour at two neighbouring angles that lie closer than this are the same mode: well under half an order. */
+const SAME_MODE_NM = 40;
+
 function choose(
   records: Float32Array,
   offset: number,
   count: number,
+  scale: number,
   nearby: Float64Array,
   neighbours: number,
 ): number {
@@ -197,7 +226,7 @@ function choose(
     const mode = offset + 2 + k * MODE_FIELDS;
     let cost = Math.min(MOST_COST, (records[mode + 3]! - best) / 2);
     for (let n = 0; n < neighbours; n++) {
-      const gap = Math.abs(records[mode]! - nearby[n]!);
+      const gap = Math.abs(records[mode]! * scale - nearby[n]!);
       cost += Math.min(perNm * gap, edge + perNmBeyond * gap);
     }
     if (cost < least) {
@@ -206,40 +235,4 @@ function choose(
     }
   }
   return chosen;
-}
-
-/** Orders, bare surface, lower bounds and the shared part of the intervals; `ownShare` is noise variance left after smoothing. */
-export function finishRows(
-  rows: MapRows,
-  chart: CodeChart,
-  rules: ReadingRules,
-  ownShare: Float32Array | null,
-): void {
-  const step = chart.thicknessNm[1]!;
-  for (let i = 0; i < rows.status.length; i++) {
-    const status = rows.status[i]!;
-    if (status !== PIXEL_STATUS.measured && status !== PIXEL_STATUS.ambiguous) continue;
-    const thickness = rows.thicknessNm[i]!;
-    const label = Math.max(0, Math.min(chart.count - 1, Math.round(thickness / step)));
-    const own = chart.noiseShare[label]! * (ownShare ? ownShare[i]! : 1);
-    const shared = (COVER_90 * chart.sharedSdNm[label]!) ** 2;
-    const low = thickness - Math.sqrt((thickness - rows.lowNm[i]!) ** 2 * own + shared);
-    const high = thickness + Math.sqrt((rows.highNm[i]! - thickness) ** 2 * own + shared);
-    rows.lowNm[i] = Math.max(0, low);
-    rows.highNm[i] = high;
-    if (thickness < rules.bareNm) {
-      rows.status[i] = PIXEL_STATUS.bare;
-      rows.thicknessNm[i] = 0;
-      rows.lowNm[i] = 0;
-      rows.order[i] = 0;
-    } else if (thickness > rules.resolvableNm) {
-      rows.status[i] = PIXEL_STATUS.atLeast;
-      rows.lowNm[i] = Math.min(low, rules.resolvableNm);
-      rows.thicknessNm[i] = Number.NaN;
-      rows.highNm[i] = Number.NaN;
-      rows.order[i] = 255;
-    } else {
-      rows.order[i] = chart.order[label]!;
-    }
-  }
 }

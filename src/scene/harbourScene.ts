@@ -81,8 +81,13 @@ export function harbourScene(request: HarbourRequest): HarbourScene {
     light: { daylightK: drawn.toldDaylightK },
     camera: 'phone',
     references: { clean },
-    incidenceDeg: Math.round(cleanIncidenceDeg),
     region,
+    view: {
+      heightM: toldView.heightM,
+      focal35mm: toldView.focal35mm,
+      pitchDeg: toldView.pitchDeg,
+      rollDeg: toldView.rollDeg,
+    },
   };
   return {
     name: 'oil-harbour',

@@ -68,6 +68,28 @@ export function groundAreaField(view: WaterView, rows: Rows = allRows(view)): Fl
   return field;
 }
 
+/**
+ * Cosine of the incidence at the middle of a pixel, one at a time: the same angle as `incidenceField` without its arc
+ * cosine. At most 0 from the horizon up. @param firstRow the view's row of row 0, for a part of a photo
+ */
+export function cosineReader(view: WaterView, firstRow = 0): (x: number, y: number) => number {
+  const { widthPx, heightPx, focalPx } = view.camera;
+  const straighten = straightener(view.camera);
+  const alongU = -view.axes.right[2];
+  const alongV = view.axes.up[2];
+  const alongAxis = -focalPx * view.axes.ahead[2];
+  const focal2 = focalPx * focalPx;
+  const left = 0.5 - widthPx / 2;
+  const top = firstRow + 0.5 - heightPx / 2;
+  return (x, y) => {
+    const u = x + left;
+    const v = y + top;
+    const off2 = u * u + v * v;
+    const factor = straighten ? straighten(off2) : 1;
+    return (factor * (u * alongU + v * alongV) + alongAxis) / Math.sqrt(factor * factor * off2 + focal2);
+  };
+}
+
 /** Water area of one pixel about the picture place (x, y), square metres; NaN at and above the horizon. */
 export function groundAreaAtM2(view: WaterView, x: number, y: number): number {
   const { camera, axes, heightM } = view;

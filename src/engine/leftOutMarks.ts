@@ -1,0 +1,2 @@
+/** Marks of pixels that are not read, and why. */
+export const LEFT_OUT = { no: 0, outsideRegion: 1, noColour: 2, tooSlanted: 3, aboveHorizon: 4 } as const;
