@@ -1,9 +1,9 @@
-import { useState } from 'preact/hooks';
+import { useEffect, useState } from 'preact/hooks';
 import type { Point } from '../engine/setup.ts';
 import { Icon, type IconName } from './parts/Icon.tsx';
 import { ThemeButton } from './parts/ThemeButton.tsx';
 import { OrderScale, Scale } from './reading/Scale.tsx';
-import { cancel, closePhoto, measure, readAt } from './session.ts';
+import { cancel, closePhoto, followMarks, measure, readAt } from './session.ts';
 import { Stage } from './stage/Stage.tsx';
 import { WipeHandle } from './stage/WipeHandle.tsx';
 import {
@@ -13,6 +13,8 @@ import {
   failure,
   handing,
   mapView,
+  marking,
+  preview,
   probe,
   progress,
   redo,
@@ -42,9 +44,13 @@ const STEP_NAMES: Readonly<Record<Step, string>> = {
 export function WorkScreen() {
   const [corners, setCorners] = useState<readonly Point[]>([]);
   const measured = result.value;
-  const picture = useMapPicture(measured, mapView.value);
   const steps = stepsFor(setup.value.film);
   const current = steps.includes(step.value) ? step.value : 'map';
+  // Pins are set on the map itself, those of an order on the map of orders.
+  const pins = current === 'mark' && (marking.value === 'bare' || marking.value === 'order');
+  const mapShown = pins && marking.value === 'order' ? 'order' : mapView.value;
+  const picture = useMapPicture(measured?.map ?? preview.value, mapShown);
+  useEffect(followMarks, []);
   const busy = progress.value;
 
   const go = (next: Step) => {
@@ -55,7 +61,7 @@ export function WorkScreen() {
     if (next === 'map' && !result.value) void measure();
   };
   const next = steps[steps.indexOf(current) + 1] ?? null;
-  const showsMap = current === 'map' && picture !== null;
+  const showsMap = (current === 'map' || pins) && picture !== null;
 
   return (
     <main class="work">
@@ -79,7 +85,7 @@ export function WorkScreen() {
       </Stage>
       <div class="sheet">
         {showsMap ? (
-          mapView.value === 'order' ? (
+          mapShown === 'order' ? (
             <OrderScale ramp={picture.ramp} orders={picture.orders} />
           ) : (
             <Scale ramp={picture.ramp} topNm={picture.topNm} probe={probe.value} />

@@ -1,3 +1,4 @@
+import { effect } from '@preact/signals';
 import { Cancelled, type Job } from '../engine/contract.ts';
 import type { Engine } from '../engine/engine.client.ts';
 import type { Setup } from '../engine/setup.ts';
@@ -6,9 +7,12 @@ import { keepPhoto } from './keep.ts';
 import {
   begin,
   DEFAULT_SETUP,
+  dropResult,
   failure,
   image,
+  keepResult,
   mapView,
+  preview,
   probe,
   probeAt,
   progress,
@@ -107,15 +111,48 @@ async function previewOf(blob: Blob): Promise<ImageBitmap> {
 export async function measure(): Promise<void> {
   if (!image.value) return;
   const current = await theEngine();
-  result.value = null;
+  dropResult();
   probe.value = null;
+  const wanted = setup.value;
   const done = await run(
-    (onProgress) => current.estimate(withWholeView(setup.value, lensFacts()), onProgress),
+    (onProgress) => current.estimate(withWholeView(wanted, lensFacts()), onProgress),
     'starting',
   );
   if (!done) return;
-  result.value = done;
+  keepResult(done, wanted);
+  if (preview.value) void askPreview();
   if (probeAt.value) await readAt(probeAt.value);
+}
+
+let isAsking = false;
+
+/**
+ * Fetches a coarse map for the marks as they are, and again where they changed meanwhile. On the map's own step the full
+ * map follows by itself.
+ */
+async function askPreview(): Promise<void> {
+  if (isAsking) return;
+  isAsking = true;
+  try {
+    for (let asked: Setup | null = null; asked !== setup.value && preview.value; ) {
+      asked = setup.value;
+      const map = await (await theEngine()).preview(withWholeView(asked, lensFacts()));
+      if (asked === setup.value && preview.value) preview.value = map;
+    }
+  } catch {
+    // The worker was ended by a cancel: there is nothing to look at until the next measurement.
+    preview.value = null;
+  } finally {
+    isAsking = false;
+  }
+  if (step.value === 'map' && image.value && !result.value && !running) void measure();
+}
+
+/** While this runs, every change of pins, trend or brush after a measurement is seen on a coarse map at once. */
+export function followMarks(): () => void {
+  return effect(() => {
+    if (setup.value && preview.peek() && !result.peek()) void askPreview();
+  });
 }
 
 /** Reads one place of a measured photo. */
@@ -131,7 +168,8 @@ export function closePhoto(): void {
   cancel();
   image.value?.bitmap.close();
   image.value = null;
-  result.value = null;
+  dropResult();
+  preview.value = null;
   probe.value = null;
   probeAt.value = null;
   failure.value = null;

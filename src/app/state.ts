@@ -1,6 +1,8 @@
-import { computed, signal } from '@preact/signals';
+import { batch, computed, signal } from '@preact/signals';
 import type { EstimateResult, OpenedPhoto, Probe } from '../engine/contract.ts';
 import type { FilmPreset, Point, Rectangle, Setup } from '../engine/setup.ts';
+import { changeBetween } from '../engine/setupChanges.ts';
+import type { ThicknessMap } from '../match/types.ts';
 import { hasMark, type MarkId } from './stage/grips.ts';
 
 /** The steps of a reading, in the order a person takes them. */
@@ -42,6 +44,8 @@ export const selected = signal<MarkId | null>(null);
 /** A change under the finger: shown, not yet made. */
 export const draftSetup = signal<Setup | null>(null);
 export const result = signal<EstimateResult | null>(null);
+/** A map to look at while there is no result: the last one, or a coarse one with the marks as they are now. */
+export const preview = signal<ThicknessMap | null>(null);
 export const probe = signal<Probe | null>(null);
 export const probeAt = signal<Point | null>(null);
 /** Share of the stage's width from which the map is shown, 0 = all map, 1 = all photo. */
@@ -59,7 +63,7 @@ const MOST_UNDO = 100;
 let lastSeries: string | null = null;
 
 /**
- * Changes the set-up; the reading made with the old one is put aside.
+ * Changes the set-up; a reading made with the old one is put aside, and comes back with an undo.
  * @param series changes in a row with the same name are undone together
  */
 export function change(next: Setup, series: string | null = null): void {
@@ -72,12 +76,39 @@ export function change(next: Setup, series: string | null = null): void {
 
 function replace(next: Setup): void {
   lastSeries = null;
-  setup.value = next;
+  batch(() => {
+    setup.value = next;
+    judgeResult();
+    handing.value = false;
+    probe.value = null;
+    draftSetup.value = null;
+    if (selected.value && !hasMark(next, selected.value)) selected.value = null;
+  });
+}
+
+/** The last reading and what it was made with. */
+let measured: { readonly setup: Setup; readonly result: EstimateResult } | null = null;
+
+/** Takes the last reading as the result where it is true of the present set-up, else at most as a preview. */
+function judgeResult(): void {
+  const change = measured ? changeBetween(measured.setup, setup.value) : 'all';
+  result.value = measured && change === 'none' ? measured.result : null;
+  preview.value =
+    change === 'orders' || change === 'mask' ? (preview.value ?? measured?.result.map ?? null) : null;
+}
+
+/** Keeps a reading; it becomes the result unless the set-up has changed since. */
+export function keepResult(done: EstimateResult, madeWith: Setup): void {
+  measured = { setup: madeWith, result: done };
+  preview.value = null;
+  judgeResult();
+}
+
+/** Lets go of the last reading, so that two of them never take up memory at once; a coarse preview stays. */
+export function dropResult(): void {
+  if (preview.value === measured?.result.map) preview.value = null;
+  measured = null;
   result.value = null;
-  handing.value = false;
-  probe.value = null;
-  draftSetup.value = null;
-  if (selected.value && !hasMark(next, selected.value)) selected.value = null;
 }
 
 export function undo(): void {
@@ -102,6 +133,7 @@ export function redo(): void {
 export function begin(next: Setup): void {
   past.value = [];
   future.value = [];
+  dropResult();
   replace(next);
 }
 

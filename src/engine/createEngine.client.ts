@@ -87,6 +87,7 @@ export function createEngine(): Engine {
         onProgress?.(1, 'done');
         return last;
       }, stop),
+    preview: async (setup) => (lead && isOpen ? lead.call('preview', { setup }) : null),
     probe: async (x, y) => {
       const at = { x: Math.floor(x), y: Math.floor(y) };
       const probe = lead ? await lead.call('probe', at) : null;

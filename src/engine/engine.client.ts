@@ -1,3 +1,4 @@
+import type { ThicknessMap } from '../match/types.ts';
 import type { ChartView, EstimateResult, Job, OnProgress, OpenedPhoto, Probe } from './contract.ts';
 import type { Setup } from './setup.ts';
 import type { TallyReport, TallyRequest } from './tallyContract.ts';
@@ -6,6 +7,11 @@ import type { TallyReport, TallyRequest } from './tallyContract.ts';
 export interface Engine {
   openPhoto(file: Blob, fileName: string, onProgress?: OnProgress): Job<OpenedPhoto>;
   estimate(setup: Setup, onProgress?: OnProgress): Job<EstimateResult>;
+  /**
+   * After `estimate`, within a second: a coarse map with other pins, trend, region or strokes, the camera fit kept. Its
+   * pixels lie evenly over the photo. Resolves null where the fit does not serve that set-up: measure anew.
+   */
+  preview(setup: Setup): Promise<ThicknessMap | null>;
   /** After `estimate`; x, y in pixels of the opened photo. Resolves null outside the photo. */
   probe(x: number, y: number): Promise<Probe | null>;
   /**

@@ -1,6 +1,7 @@
 /** The methods of the two kinds of worker, as types: what goes in, what comes out. */
 import type { CodeChart } from '../match/codeChart.ts';
 import type { MapRows, ReadingRules, SettledField } from '../match/mapPixels.ts';
+import type { ThicknessMap } from '../match/types.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import type { ChartView, EstimateResult, OpenedPhoto, Probe } from './contract.ts';
 import type { SeenAngles } from './seenAngles.ts';
@@ -34,6 +35,8 @@ export interface LeadJobs {
   };
   /** Calibrates and settles orders; answers with the bands that other workers are to read. */
   prepare: { readonly in: { readonly setup: Setup; readonly bands: number }; readonly out: PreparedMap };
+  /** The map at the places of the order step, with the fit of the last `prepare`; null where that fit does not serve. */
+  preview: { readonly in: { readonly setup: Setup }; readonly out: ThicknessMap | null };
   /** Reads the band that the lead keeps for itself. */
   readOwn: { readonly in: null; readonly out: null };
   finish: { readonly in: { readonly bands: readonly MapRows[] }; readonly out: EstimateResult };

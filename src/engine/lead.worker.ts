@@ -1,22 +1,24 @@
 /** Holds the open photo; calibrates, settles orders, answers probes. */
 
-import { type ActivityMap, activityMap } from '../match/activity.ts';
+import type { ActivityMap } from '../match/activity.ts';
 import { fillCandidates, type MapRows, type SettledField } from '../match/mapPixels.ts';
 import type { PixelReader } from '../match/pixelReader.ts';
 import type { ThicknessMap } from '../match/types.ts';
 import { decodePhoto } from '../photo/decode.browser.ts';
 import type { DecodedPhoto } from '../photo/types.ts';
 import { type Band, bandsOf, bandTask } from './bands.ts';
-import { type Calibration, calibrate } from './calibrate.ts';
+import type { Calibration } from './calibrate.ts';
 import { chartFor } from './chartFor.ts';
-import { emptyField, joinBands, readBand, settle } from './estimate.ts';
+import { joinBands, readBand, settle } from './estimate.ts';
 import type { BandTask, LeadJobs } from './jobs.ts';
+import { type KeptFit, keepFit } from './keptFit.ts';
 import { leftOutOf } from './leftOut.ts';
 import { photoViewOf, withPhotoFocal } from './photoView.ts';
+import { previewMap } from './previewMap.ts';
 import { probePixel } from './probe.ts';
-import { makeReader } from './seenAngles.ts';
 import { buffersIn, serve } from './serve.worker.ts';
 import type { Setup } from './setup.ts';
+import { changeBetween } from './setupChanges.ts';
 import { summarise } from './summarise.ts';
 import { tallyPhoto } from './tally.ts';
 import { clippedShareOf } from './tallyFacts.ts';
@@ -39,6 +41,8 @@ interface Measured {
 
 let photo: DecodedPhoto | null = null;
 let measured: Measured | null = null;
+/** Stands until another photo is opened: pins, trend and brush cost no second fit. */
+let kept: KeptFit | null = null;
 
 function openPixels(): DecodedPhoto['pixels'] {
   if (!photo) throw new Error('Open a photo first.');
@@ -64,6 +68,7 @@ serve<LeadJobs>(
   {
     openPhoto: async ({ file, fileName }, onProgress) => {
       measured = null;
+      kept = null;
       photo = await decodePhoto(file as Blob, fileName, { onProgress });
       const { pixels, metadata, scale, notices } = photo;
       return { width: pixels.width, height: pixels.height, scale, metadata, notices };
@@ -72,15 +77,10 @@ serve<LeadJobs>(
       const pixels = openPixels();
       const setup = photo ? withPhotoFocal(stated, photo.metadata) : stated;
       const startedAt = performance.now();
-      const leftOut = leftOutOf(pixels, setup);
-      const activity = activityMap(pixels);
-      const calibration = calibrate(pixels, setup, leftOut, activity, (share, step) =>
-        onProgress(share * 0.45, step),
-      );
+      kept = keepFit(pixels, setup, kept, (share, step) => onProgress(share * 0.45, step));
+      const { leftOut, activity, calibration, reader, field } = kept;
       const calibrated = performance.now();
       onProgress(0.45, 'matching colours');
-      const reader = makeReader(pixels, activity, calibration);
-      const field = emptyField(pixels);
       fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
       const matched = performance.now();
       const settled = settle(field, setup, calibration, (share) =>
@@ -116,6 +116,17 @@ serve<LeadJobs>(
           angles: structuredClone(task.angles),
         })),
       };
+    },
+    preview: ({ setup: stated }) => {
+      if (!photo || !kept) return null;
+      const { pixels, metadata } = photo;
+      const setup = withPhotoFocal(stated, metadata);
+      const change = changeBetween(kept.setup, setup);
+      if (change === 'all') return null;
+      const { reader, calibration, field } = kept;
+      const leftOut = change === 'mask' ? leftOutOf(pixels, setup) : kept.leftOut;
+      fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
+      return previewMap(field, setup, calibration, leftOut, pixels.width, pixels.height);
     },
     readOwn: (_, onProgress) => {
       if (!measured) throw new Error('Prepare the map first.');

@@ -23,6 +23,7 @@ const never = (): never => {
 const engine: Engine = {
   openPhoto: never,
   estimate: never,
+  preview: never,
   probe: never,
   tally: never,
   dispose: never,

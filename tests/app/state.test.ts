@@ -7,9 +7,12 @@ import {
   canUndo,
   change,
   DEFAULT_SETUP,
+  keepResult,
   marking,
   onWater,
+  preview,
   redo,
+  result,
   selected,
   setReference,
   setRegion,
@@ -17,6 +20,8 @@ import {
   undo,
 } from '../../src/app/state.ts';
 import { ownFilmFault } from '../../src/app/steps/OwnFilm.tsx';
+import type { EstimateResult } from '../../src/engine/contract.ts';
+import type { ThicknessMap } from '../../src/match/types.ts';
 
 beforeEach(() => begin(DEFAULT_SETUP));
 
@@ -72,6 +77,49 @@ describe('changes of the set-up', () => {
       undone++;
     }
     expect(undone).toBe(100);
+  });
+});
+
+describe('a reading', () => {
+  const map: ThicknessMap = {
+    width: 1,
+    height: 1,
+    thicknessNm: new Float32Array(1),
+    lowNm: new Float32Array(1),
+    highNm: new Float32Array(1),
+    order: new Uint8Array(1),
+    status: new Uint8Array(1),
+  };
+  const reading = { map, summary: {} } as EstimateResult;
+
+  it('is put aside by a pin, is seen meanwhile, and comes back with an undo', () => {
+    keepResult(reading, setup.value);
+    expect(result.value).toBe(reading);
+    addPin([5, 6], { is: 'bare' });
+    expect(result.value).toBeNull();
+    expect(preview.value).toBe(map);
+    undo();
+    expect(result.value).toBe(reading);
+    expect(preview.value).toBeNull();
+    redo();
+    expect([result.value, preview.value]).toEqual([null, map]);
+  });
+
+  it('of another film or light is not even seen, yet an undo brings it back', () => {
+    keepResult(reading, setup.value);
+    change({ ...setup.value, film: 'diesel' });
+    expect([result.value, preview.value]).toEqual([null, null]);
+    undo();
+    expect(result.value).toBe(reading);
+  });
+
+  it('that came too late for its marks is no result', () => {
+    const asked = setup.value;
+    addPin([5, 6], { is: 'bare' });
+    keepResult(reading, asked);
+    expect([result.value, preview.value]).toEqual([null, map]);
+    begin(DEFAULT_SETUP);
+    expect([result.value, preview.value]).toEqual([null, null]);
   });
 });
 

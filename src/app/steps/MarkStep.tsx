@@ -107,6 +107,19 @@ export function MarkStep({
           </select>
         </label>
       ) : null}
+      {kind === 'bare' || kind === 'order' ? (
+        <label class="check">
+          <input
+            type="checkbox"
+            checked={setup.value.trend === 'thickerDown'}
+            onChange={(e) => {
+              const { trend: _, ...rest } = setup.value;
+              change(e.currentTarget.checked ? { ...rest, trend: 'thickerDown' } : rest);
+            }}
+          />
+          Draining film: thicker downwards
+        </label>
+      ) : null}
       {hasMarks ? (
         <button type="button" class="plain" onClick={() => change(unmarked)}>
           Clear all marks
