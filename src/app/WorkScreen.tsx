@@ -25,7 +25,9 @@ import {
   stepsFor,
   undo,
 } from './state.ts';
+import { AmountStep } from './steps/AmountStep.tsx';
 import { FilmStep } from './steps/FilmStep.tsx';
+import { HandOver } from './steps/HandOver.tsx';
 import { LightStep } from './steps/LightStep.tsx';
 import { MapStep } from './steps/MapStep.tsx';
 import { MarkStep } from './steps/MarkStep.tsx';
@@ -38,6 +40,7 @@ const STEP_NAMES: Readonly<Record<Step, string>> = {
   mark: 'Mark',
   view: 'View',
   map: 'Map',
+  amount: 'Amount',
 };
 
 /** The photo above, one decision below; the map's scale is the edge between them. */
@@ -58,10 +61,11 @@ export function WorkScreen() {
     setCorners([]);
     handing.value = false;
     if (next === 'mark') beginMarking();
-    if (next === 'map' && !result.value) void measure();
+    if ((next === 'map' || next === 'amount') && !result.value) void measure();
   };
   const next = steps[steps.indexOf(current) + 1] ?? null;
-  const showsMap = (current === 'map' || pins) && picture !== null;
+  const needsMap = (current === 'map' || current === 'amount') && !measured;
+  const showsMap = (current === 'map' || current === 'amount' || pins) && picture !== null;
 
   return (
     <main class="work">
@@ -110,6 +114,7 @@ export function WorkScreen() {
               {current === 'mark' ? <MarkStep corners={corners} onClear={() => setCorners([])} /> : null}
               {current === 'view' ? <ViewStep /> : null}
               {current === 'map' ? <MapStep /> : null}
+              {current === 'amount' ? handing.value ? <HandOver /> : <AmountStep /> : null}
             </>
           )}
         </div>
@@ -124,18 +129,18 @@ export function WorkScreen() {
             <button type="button" class="primary" onClick={cancel}>
               Stop
             </button>
+          ) : needsMap ? (
+            <button type="button" class="primary" onClick={() => void measure()}>
+              Measure
+            </button>
           ) : next ? (
             <button type="button" class="primary" onClick={() => go(next)}>
               {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
             </button>
-          ) : measured ? (
+          ) : (
             <button type="button" class="primary" onClick={() => (handing.value = true)}>
               <Icon name="save" />
               Hand over
-            </button>
-          ) : (
-            <button type="button" class="primary" onClick={() => void measure()}>
-              Measure
             </button>
           )}
         </div>

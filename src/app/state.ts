@@ -6,12 +6,12 @@ import type { ThicknessMap } from '../match/types.ts';
 import { hasMark, type MarkId } from './stage/grips.ts';
 
 /** The steps of a reading, in the order a person takes them. */
-export const STEPS = ['film', 'light', 'mark', 'view', 'map'] as const;
+export const STEPS = ['film', 'light', 'mark', 'view', 'map', 'amount'] as const;
 export type Step = (typeof STEPS)[number];
 
 /** The steps that suit a film: where the camera stood and how much there is are asked of films on water only. */
 export function stepsFor(film: Setup['film']): readonly Step[] {
-  return onWater(film) ? STEPS : STEPS.filter((id) => id !== 'view');
+  return onWater(film) ? STEPS : STEPS.filter((id) => id !== 'view' && id !== 'amount');
 }
 
 /** What marking adds: a reference patch, the corners of the region, a stroke of the brush, or a pin. */

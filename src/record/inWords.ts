@@ -119,12 +119,18 @@ export interface FiguresInUnit {
   readonly unit: Unit;
 }
 
-export function volumeFigures({ least, best, most }: Spread): FiguresInUnit {
-  return figures(least, best, most, readableVolumeUnit(best));
+export function volumeFigures(
+  { least, best, most }: Spread,
+  unit: Unit = readableVolumeUnit(best),
+): FiguresInUnit {
+  return figures(least, best, most, unit);
 }
 
-export function areaFigures({ least, best, most }: Spread): FiguresInUnit {
-  return figures(least, best, most, readableAreaUnit(best));
+export function areaFigures(
+  { least, best, most }: Spread,
+  unit: Unit = readableAreaUnit(best),
+): FiguresInUnit {
+  return figures(least, best, most, unit);
 }
 
 function figures(least: number, best: number, most: number, unit: Unit): FiguresInUnit {
@@ -136,8 +142,11 @@ function figures(least: number, best: number, most: number, unit: Unit): Figures
  * Least and most by the appearance code, to two digits: its classes span factors of 4 to 17, and an interval's rounding
  * would take the lower end down to nothing.
  */
-export function codeVolumeFigures(minM3: number, maxM3: number): Omit<FiguresInUnit, 'best'> {
-  const unit = readableVolumeUnit(Math.sqrt(minM3 * maxM3));
+export function codeVolumeFigures(
+  minM3: number,
+  maxM3: number,
+  unit: Unit = readableVolumeUnit(Math.sqrt(minM3 * maxM3)),
+): Omit<FiguresInUnit, 'best'> {
   return { least: twoDigits(inUnit(minM3, unit)), most: twoDigits(inUnit(maxM3, unit)), unit };
 }
 

@@ -70,7 +70,7 @@ export function Stage({ map, onProbe, corners, onCorner, children }: Props) {
   const shows = {
     wipe: wipe.value,
     setup: draftSetup.value ?? setup.value,
-    showMarks: step.value !== 'map' && !isView,
+    showMarks: step.value !== 'map' && step.value !== 'amount' && !isView,
     viewDrawing: viewDrawing(),
     selected: isMark ? selected.value : null,
     handles: isMark ? marking.value : null,

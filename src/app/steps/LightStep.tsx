@@ -1,6 +1,8 @@
 import type { IlluminantId } from '../../colour/types.ts';
 import { change, onWater, setup } from '../state.ts';
+import { missingView } from '../viewState.ts';
 import { incidenceWords, skyWords } from '../words/names.ts';
+import { SkyGuess } from './SkyGuess.tsx';
 
 const LAMPS: readonly (readonly [IlluminantId, string])[] = [
   ['LED-B1', 'LED, warm white (B1)'],
@@ -18,6 +20,7 @@ const FIRST_SKY_K = 6500;
 export function LightStep() {
   const light = setup.value.light ?? { daylightK: FIRST_SKY_K };
   const incidence = setup.value.incidenceDeg ?? 0;
+  const tilted = onWater(setup.value.film) && missingView.value.length === 0;
   const isSky = 'daylightK' in light;
   return (
     <section aria-label="Light">
@@ -38,6 +41,7 @@ export function LightStep() {
           A lamp
         </button>
       </fieldset>
+      {isSky && onWater(setup.value.film) ? <SkyGuess /> : null}
       {isSky ? (
         <label class="field">
           <span class="split">
@@ -75,24 +79,28 @@ export function LightStep() {
           </select>
         </label>
       )}
-      <label class="field">
-        <span class="split">
-          <span>{incidenceWords(incidence, onWater(setup.value.film))}</span>
-          <span class="quiet">{incidence}°</span>
-        </span>
-        <input
-          type="range"
-          min="0"
-          max="75"
-          step="1"
-          value={incidence}
-          aria-label={onWater(setup.value.film) ? 'Angle from straight down' : 'Angle from straight on'}
-          aria-valuetext={`${incidence} degrees`}
-          onInput={(e) =>
-            change({ ...setup.value, incidenceDeg: Number(e.currentTarget.value) }, 'incidence')
-          }
-        />
-      </label>
+      {tilted ? (
+        <p class="note small quiet">The view step gives each place its own angle.</p>
+      ) : (
+        <label class="field">
+          <span class="split">
+            <span>{incidenceWords(incidence, onWater(setup.value.film))}</span>
+            <span class="quiet">{incidence}°</span>
+          </span>
+          <input
+            type="range"
+            min="0"
+            max="75"
+            step="1"
+            value={incidence}
+            aria-label={onWater(setup.value.film) ? 'Angle from straight down' : 'Angle from straight on'}
+            aria-valuetext={`${incidence} degrees`}
+            onInput={(e) =>
+              change({ ...setup.value, incidenceDeg: Number(e.currentTarget.value) }, 'incidence')
+            }
+          />
+        </label>
+      )}
       <p class="small quiet">
         The mirrored part of the sky or the lamp counts, not the sun. The photo itself corrects a rough guess.
       </p>

@@ -1,9 +1,10 @@
+import { headingOf, sunOf } from '../../engine/tallyNotices.ts';
 import { glintReport } from '../../view/glint.ts';
 import { slopeVariance } from '../../view/seaSlope.ts';
 import { sunNotices } from '../../view/sun.ts';
 import { image, setup } from '../state.ts';
 import { sketch } from '../viewState.ts';
-import { sunOfPhoto, sunWords } from '../words/sunWords.ts';
+import { sunWords } from '../words/sunWords.ts';
 
 /** Wind taken for glitter where nobody said: a light breeze. */
 const USUAL_WIND_MS = 3;
@@ -11,8 +12,8 @@ const USUAL_WIND_MS = 3;
 /** Where the sun stood, and whether its glitter lies on the water in the photo. */
 export function SunNote() {
   const metadata = image.value?.opened.metadata;
-  const sun = metadata ? sunOfPhoto(metadata, setup.value.position) : null;
-  if (!metadata || !sun) {
+  const sun = sunOf(setup.value, metadata);
+  if (!sun) {
     return (
       <p class="small quiet">
         Where the sun stood is not known: the photo has no{' '}
@@ -20,10 +21,10 @@ export function SunNote() {
       </p>
     );
   }
-  const headingDeg = setup.value.headingDeg ?? metadata.headingDeg;
+  const headingDeg = headingOf(setup.value, metadata);
   const { seen } = sketch.value;
   const glint =
-    seen && headingDeg !== undefined
+    seen && headingDeg !== null
       ? glintReport(
           seen.view,
           sun,

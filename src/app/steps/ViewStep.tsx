@@ -27,7 +27,7 @@ const MODES: readonly (readonly [ViewMode, string])[] = [
   ['down', 'From above'],
 ];
 
-const MISSING_WORDS = {
+export const MISSING_WORDS = {
   height: 'the height of the lens',
   focal: 'the focal length',
   tilt: 'the horizon or the tilt',

@@ -36,3 +36,22 @@ export function shareText(part: number, whole: number): string {
   if (percent > 0 && percent < 1) return 'under 1\u00a0%';
   return `${Math.round(percent)}\u00a0%`;
 }
+
+/** "12,345.6": thousands parted in a figure printed in plain decimal notation. */
+export function grouped(figure: string): string {
+  const [whole = '', part] = figure.split('.');
+  const parted = whole.replace(/\B(?=(\d{3})+$)/g, ',');
+  return part === undefined ? parted : `${parted}.${part}`;
+}
+
+/** Shares as whole percentages that still add to 100 (largest remainders). */
+export function wholePercents(shares: readonly number[]): number[] {
+  const parts = shares.map((share, index) => {
+    const whole = Math.floor(100 * share + 1e-9);
+    return { index, whole, rest: 100 * share - whole };
+  });
+  let left = 100 - parts.reduce((sum, { whole }) => sum + whole, 0);
+  const byRest = [...parts].sort((a, b) => b.rest - a.rest);
+  const raised = new Set(byRest.filter(() => left-- > 0).map(({ index }) => index));
+  return parts.map(({ index, whole }) => whole + (raised.has(index) ? 1 : 0));
+}

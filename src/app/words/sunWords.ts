@@ -1,6 +1,4 @@
-import type { PhotoMetadata } from '../../photo/types.ts';
 import type { SunPosition } from '../../view/sun.ts';
-import { sunPosition } from '../../view/sun.ts';
 
 const AROUND = [
   'ahead',
@@ -17,25 +15,14 @@ const COMPASS = ['north', 'north-east', 'east', 'south-east', 'south', 'south-we
 const eighth = (degrees: number) => Math.round((((degrees % 360) + 360) % 360) / 45) % 8;
 
 /** "ahead, to the left", for a camera whose axis bears `headingDeg`; "in the south-east" where that is not known. */
-export function sunSideWords(sun: SunPosition, headingDeg: number | undefined): string {
-  return headingDeg === undefined
+export function sunSideWords(sun: SunPosition, headingDeg: number | null): string {
+  return headingDeg === null
     ? `in the ${COMPASS[eighth(sun.azimuthDeg)]}`
     : (AROUND[eighth(sun.azimuthDeg - headingDeg)] ?? '');
 }
 
 /** "Sun 23° high, ahead, to the left", or null at night. */
-export function sunWords(sun: SunPosition, headingDeg: number | undefined): string | null {
+export function sunWords(sun: SunPosition, headingDeg: number | null): string | null {
   if (sun.elevationDeg <= 0) return null;
   return `Sun ${Math.round(sun.elevationDeg)}° high, ${sunSideWords(sun, headingDeg)}`;
-}
-
-/** Where the sun stood when the photo was taken; null where its clock has no offset or nobody knows the place. */
-export function sunOfPhoto(
-  metadata: PhotoMetadata,
-  typed?: { readonly latitudeDeg: number; readonly longitudeDeg: number },
-): SunPosition | null {
-  const place = typed ?? metadata.position;
-  if (!place || !metadata.takenAt || !metadata.takenAtHasOffset) return null;
-  const timeMs = Date.parse(metadata.takenAt);
-  return Number.isFinite(timeMs) ? sunPosition(timeMs, place.latitudeDeg, place.longitudeDeg) : null;
 }
