@@ -64,11 +64,16 @@ async function main(): Promise<number> {
     throw new UsageError(`The folder ${options.out} cannot be made; name another with --out.`);
   }
   const timingsMs = { decode: decoded - started };
-  for (const [name, bytes] of resultFiles(photo, setup, result, timingsMs)) {
+  for (const [name, bytes] of resultFiles(photo, setup, result, timingsMs, new Date().toISOString())) {
     await writeFile(join(options.out, name), bytes);
   }
   for (const [name, bytes] of tallyFiles(result.map, setup, metadata, report)) {
     await writeFile(join(options.out, name), bytes);
+  }
+  if (result.camera) {
+    console.log(
+      `camera.json keeps this camera (fitted ${result.camera.determined}): give it as camera.kept for the next photo of the same phone.`,
+    );
   }
   return 0;
 }

@@ -1,5 +1,6 @@
 import packageJson from '../../package.json' with { type: 'json' };
 import type { EstimateResult } from '../engine/contract.ts';
+import { cameraNameFrom, nameCamera } from '../engine/keptCamera.ts';
 import type { Setup } from '../engine/setup.ts';
 import type { DecodedPhoto } from '../photo/types.ts';
 import { encodeByteTiff, encodeFloatTiff } from '../record/floatTiff.ts';
@@ -10,8 +11,9 @@ import { paintMap } from '../record/thicknessColours.ts';
 export function* resultFiles(
   photo: DecodedPhoto,
   setup: Setup,
-  { map, summary }: EstimateResult,
+  { map, summary, camera }: EstimateResult,
   moreTimingsMs: Readonly<Record<string, number>>,
+  madeAt: string,
 ): Generator<readonly [string, Uint8Array | string]> {
   const { width, height } = map;
   yield ['thickness_nm.tif', encodeFloatTiff({ width, height, values: map.thicknessNm })];
@@ -29,5 +31,10 @@ export function* resultFiles(
     timingsMs: { ...moreTimingsMs, ...summary.timingsMs },
     indicative: 'Indicative only: the responsible authority decides.',
   };
+  if (camera) {
+    const { cameraMake: make, cameraModel: model } = photo.metadata;
+    const kept = nameCamera(camera, cameraNameFrom(make, model) || 'camera', madeAt, { make, model });
+    yield ['camera.json', `${JSON.stringify(kept)}\n`];
+  }
   yield ['summary.json', `${JSON.stringify(report, null, 2)}\n`];
 }

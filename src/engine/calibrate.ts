@@ -3,6 +3,7 @@ import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import type { ActivityMap } from '../match/activity.ts';
 import { buildCodeChart } from '../match/buildCodeChart.ts';
+import { withCamera } from '../match/cameraKnowledge.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import { type FilmBasis, type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
@@ -15,6 +16,15 @@ import type { PhotoPixels } from '../photo/types.ts';
 import { planAngles } from './anglePlan.ts';
 import type { FitReport, Notice } from './contract.ts';
 import { describeFit } from './describeFit.ts';
+import {
+  fitWithFallback,
+  LEAST_SPAN_KNOWN_NM,
+  LEAST_SPAN_NM,
+  type Outcome,
+  spanOf,
+} from './fitWithFallback.ts';
+import { type FittedCamera, fittedCamera } from './keptCamera.ts';
+import { isOtherCamera, knownCamera } from './knownCamera.ts';
 import { photoViewOf } from './photoView.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
 import { type References, readReferences } from './references.ts';
@@ -31,7 +41,7 @@ import {
 import { settledRanges } from './settledRanges.ts';
 import type { Setup } from './setup.ts';
 import { slantedOptics } from './slantedOptics.ts';
-import { startGains } from './startGains.ts';
+import { type Start, startGains } from './startGains.ts';
 import { viewNoticesOf } from './viewSeen.ts';
 
 /** All that is worked out once a photo before its pixels are read. Data only: it can go to a worker. */
@@ -45,6 +55,8 @@ export interface Calibration {
   readonly resolvableNm: { readonly fromNm: number; readonly toNm: number };
   readonly calibrated: boolean;
   readonly fit: FitReport | null;
+  /** What the next photo of the same phone may start from; null where the film told nothing of the camera. */
+  readonly camera: FittedCamera | null;
   readonly notices: readonly Notice[];
 }
 
@@ -54,8 +66,6 @@ const USUAL_MAX_NM = 1500;
 const FIT_MAX_NM = 1500;
 const FIT_STEP_NM = 2;
 const SAMPLES = 3000;
-/** Samples of the first, annealed fit, which only has to find its way. */
-const FIRST_SAMPLES = 1000;
 /** What a chart colour may be off in calm, changing and lively surroundings, codes of 255: luma, chroma. */
 const CHART_ERRORS = [
   { luma: 1.2, chroma: 1.2 },
@@ -78,7 +88,6 @@ const OUTLIER_DISTANCE = 100;
 /** Oil thinner than this cannot be told from bare water by eye or camera (the codes start at 40 nm). */
 const BARE_NM = 8;
 const AMBIGUITY_MARGIN = 0.7;
-
 export type OnStep = (share: number, step: string) => void;
 
 /**
@@ -136,23 +145,14 @@ export function calibrate(
   const taken = sampleFilm(pixels, usableFor(leftOut, plan, pixels.width), SAMPLES);
   const placed = slanted ? slanted.place(taken, pixels.encoding) : null;
   const sample = placed?.sample ?? taken;
-  const start = startGains(coarse, sample, references, pixels);
+  const known = knownCamera(setup, coarse, notices);
+  const start = startGains(coarse, sample, references, pixels, known);
   const spread = {
-    ...start.spread,
     index: scene.stack.film.indexSpread,
     mired: 'daylightK' in light ? 25 : 0,
   };
-  const prior = statedPrior(asObserver ? { ...spread, ...FIXED_CAMERA } : spread, start.priorMean);
-  onStep(0.1, 'fitting the camera');
-  const outcome = fitWithFallback(
-    coarse,
-    prior,
-    start.starts,
-    sample,
-    references,
-    fits,
-    placed?.allowed ?? null,
-  );
+  const anyCamera = (at: Start) =>
+    statedPrior({ ...spread, ...at.spread, ...(asObserver ? FIXED_CAMERA : {}) }, at.priorMean);
   const noise = sample.count > 0 ? sample.pixelNoise : Float64Array.of(2, 2, 2);
   const orders = orderBoundaries(scene.stack, scene.incidenceRad, maxNm);
   const chartsFor = (model: CameraModel, fit: CameraFit) =>
@@ -164,7 +164,12 @@ export function calibrate(
         drawCharts(modelOf(basis), fit, at, noise, own, Math.hypot(OUTSIDE_FAMILY, relativeSd)),
       ),
     };
-  if (outcome.determined !== 'no') {
+  /** Fits from the starts, settles orders roughly with that camera, and fits once more. */
+  const fitTwice = (prior: Prior, starts: readonly Float64Array[], leastSpanNm: number): Outcome => {
+    onStep(0.1, 'fitting the camera');
+    const input = { ...fitInput(coarse, prior, sample, references), allowed: placed?.allowed ?? null };
+    const outcome = fitWithFallback(input, starts, fits, leastSpanNm);
+    if (outcome.determined === 'no') return outcome;
     onStep(0.4, 'settling orders for the camera');
     const angles = slantedCharts(outcome.fit, 2);
     const rough = angles ? angles.charts.charts[0]! : chartsFor(coarse, outcome.fit);
@@ -178,13 +183,16 @@ export function calibrate(
       leftOut,
     );
     onStep(0.5, 'fitting the camera once more');
-    outcome.fit = fitCamera({
-      ...fitInput(coarse, prior, sample, references),
-      start: outcome.fit.parameters,
-      near: true,
-      allowed,
-    });
+    outcome.fit = fitCamera({ ...input, start: outcome.fit.parameters, near: true, allowed });
     outcome.spanNm = spanOf(outcome.fit.sampleNm);
+    return outcome;
+  };
+  let prior = known ? withCamera(anyCamera(start), known) : anyCamera(start);
+  let outcome = fitTwice(prior, start.starts, known ? LEAST_SPAN_KNOWN_NM : LEAST_SPAN_NM);
+  if (known && isOtherCamera(setup, known, outcome.fit, notices)) {
+    const afresh = startGains(coarse, sample, references, pixels);
+    prior = anyCamera(afresh);
+    outcome = fitTwice(prior, afresh.starts, LEAST_SPAN_NM);
   }
   onStep(0.8, 'drawing the chart for this photo');
   if (outcome.determined !== 'no') {
@@ -215,6 +223,10 @@ export function calibrate(
     resolvableNm: resolvable,
     calibrated,
     fit: asObserver ? null : describeFit(outcome.fit, outcome.determined, prior, outcome.spanNm, setup),
+    camera:
+      outcome.determined === 'no'
+        ? null
+        : fittedCamera(outcome.fit, pixels.encoding, 'film', outcome.determined),
     notices,
   };
 }
@@ -252,12 +264,6 @@ function drawCharts(
   );
 }
 
-interface Outcome {
-  fit: CameraFit;
-  readonly determined: FitReport['determined'];
-  spanNm: readonly [number, number];
-}
-
 function fitInput(
   model: CameraModel,
   prior: Prior,
@@ -274,39 +280,7 @@ function fitInput(
   };
 }
 
-/** Fits from each start, keeps the likeliest; falls back to the references alone where the film says too little. */
-function fitWithFallback(
-  model: CameraModel,
-  prior: Prior,
-  starts: readonly Float64Array[],
-  sample: FilmSample,
-  references: References,
-  fits: boolean,
-  allowed: Uint32Array | null,
-): Outcome {
-  const base = { ...fitInput(model, prior, sample, references), allowed };
-  const alone = () => fitCamera({ ...base, start: starts[0]!, samples: new Float64Array(0) });
-  if (!fits || sample.count < 60) return { fit: alone(), determined: 'no', spanNm: [0, 0] };
-  const few = sample.codes.subarray(0, 3 * Math.min(sample.count, FIRST_SAMPLES));
-  let fit: CameraFit | null = null;
-  for (const start of starts) {
-    const tried = fitCamera({ ...base, start, samples: few });
-    if (!fit || tried.objective < fit.objective) fit = tried;
-  }
-  if (!fit) return { fit: alone(), determined: 'no', spanNm: [0, 0] };
-  const spanNm = spanOf(fit.sampleNm);
-  const width = spanNm[1] - spanNm[0];
-  if (fit.filmShare < 0.3 || width < 120) return { fit: alone(), determined: 'no', spanNm };
-  return { fit, determined: width > 400 && fit.filmShare > 0.7 ? 'well' : 'partly', spanNm };
-}
-
 function sampleSd(sample: FilmSample): number {
   const noise = Math.hypot(...sample.pixelNoise) / Math.sqrt(3);
   return Math.hypot(noise * Math.sqrt(SAMPLE_VARIANCE_SHARE), SAMPLE_ERROR);
-}
-
-function spanOf(sampleNm: Float64Array): readonly [number, number] {
-  const film = sampleNm.filter((d) => !Number.isNaN(d)).sort();
-  if (film.length === 0) return [0, 0];
-  return [film[Math.floor(0.02 * film.length)]!, film[Math.floor(0.98 * (film.length - 1))]!];
 }

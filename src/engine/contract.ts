@@ -1,6 +1,7 @@
 /** What the page asks of its workers, and what comes back. Data only: no functions cross the boundary. */
 import type { Reading, ThicknessMap } from '../match/types.ts';
 import type { PhotoMetadata } from '../photo/types.ts';
+import type { FittedCamera } from './keptCamera.ts';
 
 /** A running request. Exactly one of result or failure settles `promise`; after `cancel` it rejects with `Cancelled`. */
 export interface Job<T> {
@@ -74,6 +75,8 @@ export interface EstimateSummary {
 export interface EstimateResult {
   readonly map: ThicknessMap;
   readonly summary: EstimateSummary;
+  /** The camera that the film's colours told, ready to be kept by name; null where they told too little. */
+  readonly camera: FittedCamera | null;
 }
 
 /** Everything the probe shows at one place. */

@@ -108,7 +108,7 @@ export function estimate(
     map: mapped - ordered,
     total: mapped - started,
   };
-  return { map, summary: summarise(map, calibration, timingsMs) };
+  return { map, summary: summarise(map, calibration, timingsMs), camera: calibration.camera };
 }
 
 /** Puts bands, top to bottom, together into one map. A single band's arrays are used as they are. */

@@ -153,6 +153,7 @@ serve<LeadJobs>(
       return {
         map,
         summary: summarise(map, calibration, { ...timingsMs, total: performance.now() - startedAt }),
+        camera: calibration.camera,
       };
     },
     tally: ({ setup: changed, ...options }) => {

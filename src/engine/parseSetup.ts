@@ -1,5 +1,6 @@
 import * as v from 'valibot';
 import { ILLUMINANT_IDS } from '../colour/light.ts';
+import { keptCameraSchema } from './keptCameraSchema.ts';
 import { SetupError } from './prepareScene.ts';
 import { FILM_PRESETS, type Setup } from './setup.ts';
 
@@ -86,7 +87,13 @@ const schema = v.strictObject({
     ]),
   ),
   camera: v.optional(
-    v.union([v.picklist(['cie1931', 'phone'] as const), v.strictObject({ fit: v.boolean() })]),
+    v.union([
+      v.picklist(['cie1931', 'phone'] as const),
+      v.pipe(
+        v.strictObject({ fit: v.boolean(), kept: v.optional(keptCameraSchema) }),
+        v.check((camera) => camera.fit || !camera.kept, 'a kept camera needs "fit": true'),
+      ),
+    ]),
   ),
   references: v.optional(
     v.strictObject({

@@ -1,5 +1,6 @@
 /** What a person says about a photo before it is measured: the typed form of SETUP.json. */
 import type { IlluminantId } from '../colour/types.ts';
+import type { KeptCamera } from './keptCamera.ts';
 
 export const FILM_PRESETS = [
   'soap',
@@ -89,7 +90,8 @@ export interface Setup {
   readonly film: FilmPreset | StackSetup;
   readonly water?: { readonly temperatureC: number; readonly salinity: number };
   readonly light?: { readonly daylightK: number } | { readonly illuminant: IlluminantId };
-  readonly camera?: 'cie1931' | 'phone' | { readonly fit: boolean };
+  /** `kept`: this phone's camera as an earlier photo fitted it, the prior of this fit. */
+  readonly camera?: 'cie1931' | 'phone' | { readonly fit: boolean; readonly kept?: KeptCamera };
   readonly references?: {
     readonly clean?: Rectangle;
     readonly white?: Rectangle;

@@ -1,6 +1,9 @@
+import type { RgbEncoding } from '../colour/types.ts';
+import { type CameraKnowledge, KEPT_PLACES } from '../match/cameraKnowledge.ts';
 import { type CameraModel, modelEvaluator } from '../match/cameraModel.ts';
 import { AT, PARAMETERS, type PriorSpread } from '../match/parameters.ts';
 import type { FilmSample } from '../match/sampleFilm.ts';
+import { toneOf } from '../match/toneCurve.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import type { References } from './references.ts';
 
@@ -22,18 +25,26 @@ const SHARE_OF_BRIGHTEST = 0.98;
 /**
  * First guess of gains and veils: from a card of stated reflectance, else from bare surface, else from the brightest
  * film seen against the brightest film there is; a card's colour sets the balance in any case.
+ * @param known what is known of this camera: its tone curve is undone, and the start is at its mean
  */
 export function startGains(
   model: CameraModel,
   sample: FilmSample,
   references: References,
   pixels: PhotoPixels,
+  known: CameraKnowledge | null = null,
 ): Start {
   const start = new Float64Array(PARAMETERS);
+  KEPT_PLACES.forEach((p, i) => {
+    start[p] = known?.mean[i] ?? 0;
+  });
+  const straight = (linear: number) => withoutTone(linear, model.encoding, start);
   const bareRow = references.evidence.find(({ kind }) => kind === 'clean')?.row ?? 0;
-  const chart = nominalChart(model, bareRow);
-  const brightest = brightestOf(sample, pixels);
-  const { clean, white, whiteReflectance } = references;
+  const chart = nominalChart(model, start, bareRow);
+  const brightest = straight(brightestOf(sample, pixels));
+  const { whiteReflectance } = references;
+  const clean = references.clean && { linear: references.clean.linear.map(straight) };
+  const white = references.white && { linear: references.white.linear.map(straight) };
   const balance = white ? balanceOf(white.linear) : [0, 0, 0];
   let commonGain = 0.3;
   let channelGain = white ? 0.1 : 0.15;
@@ -79,10 +90,29 @@ function balanceOf(linear: readonly number[]): number[] {
   return logs.map((v) => v - mean);
 }
 
-/** Linear RGB of the nominal camera at bare surface, and the brightest mean of channels over the chart. */
-function nominalChart(model: CameraModel, bareRow: number): { bare: Float64Array; brightest: number } {
+/** Linear light that the camera saw before its tone curve, by bisection: tone curves rise. */
+function withoutTone(linear: number, encoding: RgbEncoding, parameters: Float64Array): number {
+  const code = encoding.encode(linear);
+  let low = 0;
+  let high = 1;
+  for (let k = 0; k < 30; k++) {
+    const middle = (low + high) / 2;
+    if (toneOf(middle, parameters, AT.tone) < code) low = middle;
+    else high = middle;
+  }
+  return encoding.decode((low + high) / 2);
+}
+
+/** Linear RGB of the camera at gain 1 at bare surface, and the brightest mean of channels over the chart. */
+function nominalChart(
+  model: CameraModel,
+  start: Float64Array,
+  bareRow: number,
+): { bare: Float64Array; brightest: number } {
   const evaluator = modelEvaluator(model);
-  evaluator.moveTo(new Float64Array(PARAMETERS), false);
+  const plain = start.slice();
+  plain.fill(0, AT.tone, AT.tone + 3);
+  evaluator.moveTo(plain, false);
   const codes = new Float64Array(3);
   const bare = new Float64Array(3);
   let brightest = 0;

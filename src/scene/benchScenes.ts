@@ -1,24 +1,18 @@
 import type { FilmPreset, Point, Rectangle, Setup } from '../engine/setup.ts';
 import { filmStackFor } from '../optics/filmPresets.ts';
-import {
-  type ConditionOptions,
-  cameraOf,
-  drawConditions,
-  filmColours,
-  filmTableOf,
-  meter,
-} from './conditions.ts';
+import { type ConditionOptions, filmColours, filmTableOf, meter } from './conditions.ts';
 import { developPhoto } from './develop.ts';
 import { drawOilLens, oilLensField } from './fields/oilLens.ts';
 import { drawOilSheen, oilSheenField } from './fields/oilSheen.ts';
 import { drawSoapFilm, soapFilmField } from './fields/soapFilm.ts';
 import type { ThicknessField } from './fields/thicknessField.ts';
 import { type Box, renderFlatWater, renderFrame } from './framePicture.ts';
+import { drawPhone, type PhoneRequest, squeezed } from './phone.ts';
 import { seededRandom } from './random.ts';
 import type { Scene } from './types.ts';
 
 /** Size in pixels, seed and conditions of a scene; the same request gives the same bytes. */
-export interface SceneRequest {
+export interface SceneRequest extends PhoneRequest {
   readonly width: number;
   readonly height: number;
   readonly seed: number | string;
@@ -68,14 +62,7 @@ export function soapScene(request: SceneRequest, black: boolean): Scene {
   const incidenceDeg = Math.round(draw.uniform(0, 20));
   const cardReflectance = Math.round(draw.uniform(0.04, 0.1) * 1000) / 1000;
   const cardStated = draw.next() < 2 / 3;
-  const drawn = drawConditions(
-    random.fork('conditions'),
-    stack,
-    incidenceDeg,
-    request.conditions,
-    request.seed,
-  );
-  const camera = cameraOf(drawn, random);
+  const { drawn, camera } = drawPhone(random, stack, incidenceDeg, request);
   const table = filmTableOf(stack, drawn, camera, {
     maxNm: SOAP_MAX_NM,
     stepNm: 0.5,
@@ -84,10 +71,11 @@ export function soapScene(request: SceneRequest, black: boolean): Scene {
   });
   const film = filmColours(table, incidenceDeg, SOAP_MAX_NM);
   const metered = meter(drawn, camera, [...film, Array(3).fill(cardReflectance)], film);
-  const field = soapFilmField(
+  const whole = soapFilmField(
     drawSoapFilm(random.fork('film'), black, (FRAME[2] * width) / (FRAME[3] * height)),
     random.fork('film shape'),
   );
+  const field = squeezed(whole, SOAP_MAX_NM, request.spanNm);
   const picture = renderFrame({
     width,
     height,
@@ -135,14 +123,7 @@ export function oilScene(request: SceneRequest, shape: 'sheen' | 'lens'): Scene 
   const preset = OILS[Math.floor(OILS.length * draw.next())]!;
   const incidenceDeg = Math.round(draw.uniform(0, 40));
   const stack = filmStackFor(preset);
-  const drawn = drawConditions(
-    random.fork('conditions'),
-    stack,
-    incidenceDeg,
-    request.conditions,
-    request.seed,
-  );
-  const camera = cameraOf(drawn, random);
+  const { drawn, camera } = drawPhone(random, stack, incidenceDeg, request);
   const table = filmTableOf(stack, drawn, camera, {
     maxNm: OIL_MAX_NM,
     stepNm: 0.5,
@@ -152,10 +133,11 @@ export function oilScene(request: SceneRequest, shape: 'sheen' | 'lens'): Scene 
   const film = filmColours(table, incidenceDeg, OIL_MAX_NM);
   const metered = meter(drawn, camera, film, film);
   const shaped = random.fork('film');
-  const field: ThicknessField =
+  const whole: ThicknessField =
     shape === 'sheen'
       ? oilSheenField(drawOilSheen(shaped), random.fork('film shape'))
       : oilLensField(drawOilLens(shaped), random.fork('film shape'));
+  const field = squeezed(whole, OIL_MAX_NM, request.spanNm);
   const picture = renderFlatWater(field, table, (incidenceDeg * Math.PI) / 180, width, height);
   const clean: Box = shape === 'sheen' ? [0.03, 0.8, 0.14, 0.16] : [0.02, 0.02, 0.16, 0.16];
   const setup: Setup = {

@@ -33,6 +33,7 @@ function constantMap(width: number, height: number, nm: number, low: number, hig
       notices: [],
       timingsMs: {},
     },
+    camera: null,
   };
 }
 
