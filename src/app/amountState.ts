@@ -1,4 +1,6 @@
-import { effect, signal } from '@preact/signals';
+import { computed, effect, signal } from '@preact/signals';
+import type { EstimateResult } from '../engine/contract.ts';
+import type { Setup } from '../engine/setup.ts';
 import { withWholeView } from '../engine/setupView.ts';
 import type { TallyOptions, TallyReport } from '../engine/tallyContract.ts';
 import type { AppearanceCode, AppearanceShares } from '../tally/appearanceCode.ts';
@@ -11,8 +13,19 @@ export type GivenShares = Readonly<Partial<Record<AppearanceCode, number>>>;
 export type Viewpoint = NonNullable<TallyOptions['viewpoint']>;
 export type Polariser = NonNullable<TallyOptions['polariser']>;
 
-/** How much there is, as last worked out; null until it is. */
-export const tally = signal<TallyReport | null>(null);
+/** The amount last worked out, and what it was worked out from. */
+const last = signal<{
+  readonly report: TallyReport | null;
+  readonly result: EstimateResult;
+  readonly setup: Setup;
+} | null>(null);
+
+/** How much there is; null while that has not been worked out from the present map and set-up. */
+export const tally = computed<TallyReport | null>(() =>
+  last.value && last.value.result === result.value && last.value.setup === setup.value
+    ? last.value.report
+    : null,
+);
 export const tallyFault = signal<string | null>(null);
 /** Shares that the observer gave; the map's fill what is left. */
 export const givenShares = signal<GivenShares>({});
@@ -31,18 +44,21 @@ export function ownShares(ofMap: AppearanceShares | null, given: GivenShares): A
   }
 }
 
+let photoSpokenOf: unknown = null;
+
 /** Only the last question's answer counts. */
 let asked = 0;
 
 /** Works the amount out anew, from the last map and what the observer says. */
 export async function workOutAmount(): Promise<void> {
-  if (!result.value) return;
+  const [ofResult, ofSetup] = [result.value, setup.value];
+  if (!ofResult) return;
   const mine = ++asked;
-  const engine = await theEngine();
   const shares = ownShares(tally.value?.shares.ofMap ?? null, givenShares.value);
   try {
+    const engine = await theEngine();
     const report = await engine.tally({
-      setup: withWholeView(setup.value, lensFacts()),
+      setup: withWholeView(ofSetup, lensFacts()),
       atLeastCode: atLeastCode.value,
       viewpoint: viewpoint.value,
       polariser: polariser.value,
@@ -50,27 +66,22 @@ export async function workOutAmount(): Promise<void> {
     }).promise;
     if (mine !== asked) return;
     tallyFault.value = null;
-    tally.value = report;
+    last.value = { report, result: ofResult, setup: ofSetup };
+    // The map's own shares were needed first to fill up what the observer gave.
+    if (report?.shares.from === 'map' && ownShares(report.shares.ofMap, givenShares.value))
+      await workOutAmount();
   } catch (error) {
     if (mine === asked) tallyFault.value = error instanceof Error ? error.message : String(error);
   }
 }
 
-let photoOfShares: unknown = null;
-
-/** A new map makes the old amount void; a new photo also what was said of the old one. */
-export function keepAmountTrue(): () => void {
-  return effect(() => {
-    if (image.value !== photoOfShares) {
-      photoOfShares = image.value;
-      givenShares.value = {};
-      atLeastCode.value = 2;
-      polariser.value = 'unknown';
-    }
-    if (!result.value) {
-      asked++;
-      tally.value = null;
-      tallyFault.value = null;
-    }
-  });
-}
+/** What was said of one photo is not said of the next. */
+effect(() => {
+  if (image.value === photoSpokenOf) return;
+  photoSpokenOf = image.value;
+  givenShares.value = {};
+  atLeastCode.value = 2;
+  polariser.value = 'unknown';
+  tallyFault.value = null;
+  last.value = null;
+});

@@ -2,15 +2,7 @@ import { useEffect } from 'preact/hooks';
 import type { TallyInMetres, TallyReport } from '../../engine/tallyContract.ts';
 import { areaFigures } from '../../record/inWords.ts';
 import { type VolumeByCode, volumeByCode } from '../../tally/appearanceCode.ts';
-import {
-  atLeastCode,
-  givenShares,
-  keepAmountTrue,
-  ownShares,
-  tally,
-  tallyFault,
-  workOutAmount,
-} from '../amountState.ts';
+import { atLeastCode, givenShares, ownShares, tally, tallyFault, workOutAmount } from '../amountState.ts';
 import { areaUnitOf } from '../amountUnits.ts';
 import { chooseMarking, result, setup, step } from '../state.ts';
 import { missingView } from '../viewState.ts';
@@ -25,12 +17,12 @@ const percent = (share: number) => `${(100 * share).toFixed(share > 0 && share <
 
 /** How much: area, coverage, and the volume by two methods side by side. */
 export function AmountStep() {
-  useEffect(keepAmountTrue, []);
   const measured = result.value;
+  const said = setup.value;
   const report = tally.value;
   useEffect(() => {
     if (measured) void workOutAmount();
-  }, [measured]);
+  }, [measured, said]);
   if (!measured) {
     return (
       <section aria-label="Amount">
