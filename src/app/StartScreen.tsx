@@ -115,12 +115,16 @@ export function StartScreen() {
             Go on with {kept.name}
           </button>
         ) : null}
-        <div class="row tight">
+        <div class="row stacked">
           <label class="button">
             <Icon name="open" />
-            Open a photo
+            Open photo
             <input class="hidden-input" type="file" accept="image/*,.heic,.heif,.avif" onChange={pick} />
           </label>
+          <a class="button" href="#/records">
+            <Icon name="records" />
+            Records
+          </a>
           <a class="button" href="#/chart">
             <Icon name="chart" />
             Colour chart

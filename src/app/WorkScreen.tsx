@@ -11,7 +11,6 @@ import {
   canRedo,
   canUndo,
   failure,
-  handing,
   mapView,
   marking,
   preview,
@@ -27,7 +26,6 @@ import {
 } from './state.ts';
 import { AmountStep } from './steps/AmountStep.tsx';
 import { FilmStep } from './steps/FilmStep.tsx';
-import { HandOver } from './steps/HandOver.tsx';
 import { LightStep } from './steps/LightStep.tsx';
 import { MapStep } from './steps/MapStep.tsx';
 import { MarkStep } from './steps/MarkStep.tsx';
@@ -42,6 +40,9 @@ const STEP_NAMES: Readonly<Record<Step, string>> = {
   map: 'Map',
   amount: 'Amount',
 };
+
+/** Keeps the reading as a record and shows it; the records come lazily. */
+const save = () => void import('./records/saveRecord.ts').then(({ saveRecord }) => saveRecord());
 
 /** The photo above, one decision below; the map's scale is the edge between them. */
 export function WorkScreen() {
@@ -59,7 +60,6 @@ export function WorkScreen() {
   const go = (next: Step) => {
     step.value = next;
     setCorners([]);
-    handing.value = false;
     if (next === 'mark') beginMarking();
     if ((next === 'map' || next === 'amount') && !result.value) void measure();
   };
@@ -73,7 +73,6 @@ export function WorkScreen() {
         map={showsMap ? picture.bitmap : null}
         onProbe={(at) => {
           step.value = 'map';
-          handing.value = false;
           void readAt(at);
         }}
         corners={corners}
@@ -96,7 +95,7 @@ export function WorkScreen() {
           )
         ) : null}
         {/* A new element for each step, so that each begins at its top. */}
-        <div class="content" key={handing.value ? 'files' : current}>
+        <div class="content" key={current}>
           {busy ? (
             <section aria-label="Working" aria-live="polite" class="busy">
               <h1>{busy.step}</h1>
@@ -114,7 +113,7 @@ export function WorkScreen() {
               {current === 'mark' ? <MarkStep corners={corners} onClear={() => setCorners([])} /> : null}
               {current === 'view' ? <ViewStep /> : null}
               {current === 'map' ? <MapStep /> : null}
-              {current === 'amount' ? handing.value ? <HandOver /> : <AmountStep /> : null}
+              {current === 'amount' ? <AmountStep /> : null}
             </>
           )}
         </div>
@@ -138,9 +137,9 @@ export function WorkScreen() {
               {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
             </button>
           ) : (
-            <button type="button" class="primary" onClick={() => (handing.value = true)}>
+            <button type="button" class="primary" onClick={save}>
               <Icon name="save" />
-              Hand over
+              Save record
             </button>
           )}
         </div>

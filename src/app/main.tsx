@@ -12,6 +12,7 @@ type Screen = ComponentType;
 const LAZY: Readonly<Record<string, () => Promise<Screen>>> = {
   '#/about': async () => (await import('./AboutScreen.tsx')).AboutScreen,
   '#/chart': async () => (await import('./ChartRoute.tsx')).ChartRoute,
+  '#/records': async () => (await import('./records/RecordsRoute.tsx')).RecordsRoute,
   work: async () => (await import('./WorkScreen.tsx')).WorkScreen,
 };
 
@@ -27,7 +28,9 @@ function useHash(): string {
 
 function App() {
   const hash = useHash();
-  const key = LAZY[hash] ? hash : image.value ? 'work' : 'start';
+  // The records have screens of their own behind their first part: "#/records/ID".
+  const part = hash.split('/').slice(0, 2).join('/');
+  const key = LAZY[part] ? part : image.value ? 'work' : 'start';
   const [loaded, setLoaded] = useState<{ key: string; Screen: Screen } | null>(null);
   useEffect(() => {
     const load = LAZY[key];

@@ -51,8 +51,6 @@ export const probeAt = signal<Point | null>(null);
 /** Share of the stage's width from which the map is shown, 0 = all map, 1 = all photo. */
 export const wipe = signal(0);
 export const mapView = signal<'thickness' | 'order'>('thickness');
-/** Whether the files to take along are offered. */
-export const handing = signal(false);
 export const progress = signal<{ readonly share: number; readonly step: string } | null>(null);
 export const failure = signal<string | null>(null);
 export const theme = signal<'dark' | 'sunlight'>('dark');
@@ -79,7 +77,6 @@ function replace(next: Setup): void {
   batch(() => {
     setup.value = next;
     judgeResult();
-    handing.value = false;
     probe.value = null;
     draftSetup.value = null;
     if (selected.value && !hasMark(next, selected.value)) selected.value = null;

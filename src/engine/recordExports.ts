@@ -11,7 +11,7 @@ const NO_VIEW =
   'The photo has no scale: give the height of the camera and the horizon in the View step, measure, and save the record again.';
 
 /** File name for an export: letters, digits and dashes of the title. */
-export function fileStem({ title }: Observation): string {
+export function fileStem({ title }: Pick<Observation, 'title'>): string {
   const plain = title
     .normalize('NFD')
     .replace(/\p{M}/gu, '')

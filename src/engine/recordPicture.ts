@@ -1,4 +1,4 @@
-import type { ThicknessMap } from '../match/types.ts';
+import { PIXEL_STATUS, type ThicknessMap } from '../match/types.ts';
 import { encodeRgbPng, pngTexts } from '../record/png.ts';
 import { niceTop, paintMap } from '../record/thicknessColours.ts';
 
@@ -22,20 +22,56 @@ export function topOf(png: Uint8Array): number | null {
   return topNm > 0 ? topNm : null;
 }
 
-/** Every n-th pixel of every n-th row. */
+interface Box {
+  readonly left: number;
+  readonly top: number;
+  readonly width: number;
+  readonly height: number;
+}
+
+/** Space kept around what was looked at, as a share of its size. */
+const MARGIN = 0.04;
+
+/** The part of the map that was looked at, with a margin; all of it where nothing was. */
+function lookedAt({ width, height, status }: ThicknessMap): Box {
+  let [left, top, right, bottom] = [width, height, -1, -1];
+  for (let y = 0; y < height; y++) {
+    for (let x = 0; x < width; x++) {
+      if (status[y * width + x] === PIXEL_STATUS.outside) continue;
+      left = Math.min(left, x);
+      right = Math.max(right, x);
+      top = Math.min(top, y);
+      bottom = Math.max(bottom, y);
+    }
+  }
+  if (right < 0) return { left: 0, top: 0, width, height };
+  const margin = Math.ceil(MARGIN * Math.max(right - left, bottom - top));
+  left = Math.max(0, left - margin);
+  top = Math.max(0, top - margin);
+  return {
+    left,
+    top,
+    width: Math.min(width, right + 1 + margin) - left,
+    height: Math.min(height, bottom + 1 + margin) - top,
+  };
+}
+
+/** Every n-th pixel of every n-th row of the part that was looked at. */
 function thinned(map: ThicknessMap): ThicknessMap {
-  const stride = Math.ceil(Math.sqrt((map.width * map.height) / MOST_PIXELS));
-  if (stride <= 1) return map;
-  const width = Math.ceil(map.width / stride);
-  const height = Math.ceil(map.height / stride);
-  const floats = (from: Float32Array) => pick(from, new Float32Array(width * height));
-  const bytes = (from: Uint8Array) => pick(from, new Uint8Array(width * height));
+  const box = lookedAt(map);
+  const stride = Math.max(1, Math.ceil(Math.sqrt((box.width * box.height) / MOST_PIXELS)));
+  const width = Math.ceil(box.width / stride);
+  const height = Math.ceil(box.height / stride);
   const pick = <T extends Float32Array | Uint8Array>(from: T, to: T): T => {
     for (let i = 0; i < to.length; i++) {
-      to[i] = from[Math.floor(i / width) * stride * map.width + (i % width) * stride]!;
+      const x = box.left + (i % width) * stride;
+      const y = box.top + Math.floor(i / width) * stride;
+      to[i] = from[y * map.width + x]!;
     }
     return to;
   };
+  const floats = (from: Float32Array) => pick(from, new Float32Array(width * height));
+  const bytes = (from: Uint8Array) => pick(from, new Uint8Array(width * height));
   return {
     width,
     height,

@@ -11,8 +11,14 @@ const QUESTIONS: readonly Unknown[] = [
   ({ position, leftOut }) => !position && !leftOut.includes('position') && 'The position.',
   (o) =>
     isOnWater(o) && o.viewpoint.from === 'unknown' && 'Where the observer stood: aircraft, vessel or shore.',
-  (o) => isOnWater(o) && !o.viewpoint.heightM && 'The height of the camera above the water.',
-  (o) => isOnWater(o) && !o.viewpoint.headingDeg && 'The direction in which the camera looked.',
+  (o) =>
+    isOnWater(o) &&
+    !o.viewpoint.heightM &&
+    `The height of the ${o.photo ? 'camera' : 'observer'} above the water.`,
+  (o) =>
+    isOnWater(o) &&
+    !o.viewpoint.headingDeg &&
+    `The direction in which the ${o.photo ? 'camera' : 'observer'} looked.`,
   (o) =>
     isOnWater(o) &&
     o.viewpoint.headingDeg &&
@@ -23,12 +29,14 @@ const QUESTIONS: readonly Unknown[] = [
   (o) => isOnWater(o) && o.conditions.seaState === undefined && 'The state of the sea.',
   ({ conditions }) => !conditions.sky && 'The sky.',
   (o) => isOnWater(o) && !o.conditions.sun && !o.leftOut.includes('position') && 'Where the sun stood.',
-  ({ conditions }) =>
-    !conditions.polariser && 'Whether a polariser, or polarised glass, was in front of the lens.',
+  ({ conditions, photo }) =>
+    photo && !conditions.polariser && 'Whether a polariser, or polarised glass, was in front of the lens.',
   (o) =>
     isOnWater(o) &&
     !o.substance &&
-    'What the film is: the thickness stands for the film chosen in the set-up.',
+    (o.setup
+      ? 'What the film is: the thickness stands for the film chosen in the set-up.'
+      : 'What the film is.'),
   (o) =>
     isOnWater(o) &&
     !o.lookAlikes &&
@@ -41,7 +49,7 @@ const QUESTIONS: readonly Unknown[] = [
   ({ photo }) => photo && !photo.metadata.cameraModel && 'Which camera took the photo.',
   ({ photo, leftOut }) =>
     photo && leftOut.includes('original') && 'The original photo: it was left out on purpose.',
-  (o) => isOnWater(o) && o.result && !o.result.area && 'The oiled area: the photo gives no scale.',
+  (o) => isOnWater(o) && o.photo && o.result && !o.result.area && 'The oiled area: the photo gives no scale.',
   ({ leftOut }) => leftOut.includes('position') && 'The position: it was left out on purpose.',
   (o) => isOnWater(o) && o.toldTo.length === 0 && 'Who has been told.',
 ];

@@ -180,23 +180,23 @@ describe('the whole job in a real browser, offline', () => {
     }
   });
 
-  it('hands over files', async () => {
-    await page.getByText('Hand over', { exact: true }).click();
-    const [download] = await Promise.all([
-      page.waitForEvent('download'),
-      page.getByRole('button', { name: 'Summary' }).click(),
-    ]);
-    const summary = JSON.parse(readFileSync(await download.path(), 'utf8')) as {
-      counts: { measured: number };
-      photo: { sha256: string };
-    };
-    expect(summary.counts.measured).toBeGreaterThan(100_000);
-    expect(summary.photo.sha256).toMatch(/^[0-9a-f]{64}$/);
+  it('saves a record in one tap and hands over its map', async () => {
+    await page.getByRole('button', { name: 'Save record' }).click();
+    await page.getByText('Saved on this device').waitFor();
+    expect(await violations()).toEqual([]);
+    await page.getByRole('link', { name: 'Hand over' }).click();
     const [map] = await Promise.all([
       page.waitForEvent('download'),
       page.getByRole('button', { name: 'Map PNG' }).click(),
     ]);
     expect([...readFileSync(await map.path()).subarray(0, 4)]).toEqual([0x89, 0x50, 0x4e, 0x47]);
+    const [rows] = await Promise.all([
+      page.waitForEvent('download'),
+      page.getByRole('button', { name: 'Rows CSV' }).click(),
+    ]);
+    expect(readFileSync(await rows.path(), 'utf8').split('\r\n').length).toBeGreaterThan(500);
+    await page.getByRole('link', { name: 'Back to the record' }).click();
+    await page.getByRole('link', { name: 'Photo' }).click();
   });
 
   it('undoes and redoes a mark', async () => {

@@ -22,6 +22,7 @@ const PATHS = {
   tick: 'M5 13l4 4 10-11',
   wipe: 'M9 7l-5 5 5 5 M15 7l5 5-5 5',
   save: 'M12 4v11 M7 11l5 5 5-5 M5 20h14',
+  records: 'M5 3h14v18H5z M9 8h6 M9 12h6 M9 16h3',
   chart: 'M8 3h8v18H8z M8 8h4 M8 13h4 M8 18h4',
   info: 'M12 3a9 9 0 1 0 0 18 9 9 0 0 0 0-18z M12 11v5 M12 8v.01',
 } as const;

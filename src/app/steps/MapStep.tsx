@@ -1,8 +1,7 @@
 import { ProbeSheet } from '../reading/ProbeSheet.tsx';
-import { handing, image, mapView, probe, result, setup, wipe } from '../state.ts';
+import { image, mapView, probe, result, setup, wipe } from '../state.ts';
 import { shareText } from '../words/numbers.ts';
 import { summaryWords } from '../words/reading.ts';
-import { HandOver } from './HandOver.tsx';
 
 /** Wipe positions that a tap reaches, for those who do not drag. */
 const WIPES = [
@@ -28,7 +27,6 @@ export function MapStep() {
       </section>
     );
   }
-  if (handing.value) return <HandOver />;
   const { summary } = done;
   const { counts } = summary;
   const key = [
