@@ -55,23 +55,25 @@ export function AmountShares({ report }: { readonly report: TallyReport }) {
                   <small>{openEnded ? `over ${minUm} µm` : `${minUm} to ${maxUm} µm`}</small>
                 </span>
               </span>
-              <button
-                type="button"
-                aria-label={`${name}: less`}
-                disabled={percent === 0}
-                onClick={() => set(code, Math.max(0, Math.ceil(percent / STEP) * STEP - STEP))}
-              >
-                <Icon name="minus" />
-              </button>
-              <output aria-label={`Share of ${name}`}>{percent} %</output>
-              <button
-                type="button"
-                aria-label={`${name}: more`}
-                disabled={percent === 100}
-                onClick={() => set(code, Math.min(100, Math.floor(percent / STEP) * STEP + STEP))}
-              >
-                <Icon name="plus" />
-              </button>
+              <div class="stepper">
+                <button
+                  type="button"
+                  aria-label={`${name}: less`}
+                  disabled={percent === 0}
+                  onClick={() => set(code, Math.max(0, Math.ceil(percent / STEP) * STEP - STEP))}
+                >
+                  <Icon name="minus" />
+                </button>
+                <output aria-label={`Share of ${name}`}>{percent} %</output>
+                <button
+                  type="button"
+                  aria-label={`${name}: more`}
+                  disabled={percent === 100}
+                  onClick={() => set(code, Math.min(100, Math.floor(percent / STEP) * STEP + STEP))}
+                >
+                  <Icon name="plus" />
+                </button>
+              </div>
             </li>
           );
         })}

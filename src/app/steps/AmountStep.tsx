@@ -171,7 +171,7 @@ function PastColour({ share }: { readonly share: number }) {
   return (
     <fieldset class="field">
       <legend class="small quiet">{percent(share)} is too thick for colour. It looked like:</legend>
-      <div class="segments">
+      <div class="segments words">
         <button type="button" aria-pressed={atLeastCode.value === 2} onClick={() => choose(2)}>
           Rainbow
         </button>

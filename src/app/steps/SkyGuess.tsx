@@ -18,7 +18,7 @@ export function SkyGuess() {
   return (
     <fieldset class="field">
       <legend class="small quiet">{sunWords(sun, headingOf(setup.value, metadata))}. How was the sky?</legend>
-      <div class="segments">
+      <div class="segments words">
         {SKIES.map(([cloud, name]) => {
           const { kelvin } = suggestSkyColour(sun.elevationDeg, cloud);
           const isSet = light !== undefined && 'daylightK' in light && light.daylightK === kelvin;

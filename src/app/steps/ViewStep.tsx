@@ -46,7 +46,7 @@ export function ViewStep() {
   return (
     <section aria-label="View">
       <h1>{title()}</h1>
-      <fieldset class="segments" aria-label="How the tilt of the camera is told">
+      <fieldset class="segments words" aria-label="How the tilt of the camera is told">
         {MODES.map(([id, name]) => (
           <button key={id} type="button" aria-pressed={mode === id} onClick={() => chooseViewMode(id)}>
             {name}
