@@ -25,4 +25,10 @@ export const DATA_SOURCES: readonly {
       'Derived from rawtoaces-data, Academy Software Foundation; after Jiang, Liu, Gu and Süsstrunk 2013, WACV',
     licence: 'Apache-2.0',
   },
+  {
+    title: 'Reflectance of the 24 patches of a colour target, 10 nm',
+    source:
+      'N. Ohta 1997, The Basis of Color Reproduction Engineering; figures as printed in colour-science/colour',
+    licence: 'BSD-3-Clause, Copyright 2013 Colour Developers',
+  },
 ];

@@ -1,6 +1,7 @@
 import { orderBoundaries, orderOf } from '../chart/orders.ts';
 import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
+import type { RgbEncoding } from '../colour/types.ts';
 import type { ActivityMap } from '../match/activity.ts';
 import { buildCodeChart } from '../match/buildCodeChart.ts';
 import { withCamera } from '../match/cameraKnowledge.ts';
@@ -23,7 +24,7 @@ import {
   type Outcome,
   spanOf,
 } from './fitWithFallback.ts';
-import { type FittedCamera, fittedCamera } from './keptCamera.ts';
+import { type FittedCamera, fittedCamera, withLessEvidence } from './keptCamera.ts';
 import { isOtherCamera, knownCamera } from './knownCamera.ts';
 import { photoViewOf } from './photoView.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
@@ -195,6 +196,7 @@ export function calibrate(
     outcome = fitTwice(prior, afresh.starts, LEAST_SPAN_NM);
   }
   onStep(0.8, 'drawing the chart for this photo');
+  const camera = keepable(outcome, prior, pixels.encoding);
   if (outcome.determined !== 'no') {
     const covariance = outcome.fit.covariance.map((v) => v * COVARIANCE_FACTOR);
     outcome.fit = { ...outcome.fit, covariance };
@@ -223,12 +225,16 @@ export function calibrate(
     resolvableNm: resolvable,
     calibrated,
     fit: asObserver ? null : describeFit(outcome.fit, outcome.determined, prior, outcome.spanNm, setup),
-    camera:
-      outcome.determined === 'no'
-        ? null
-        : fittedCamera(outcome.fit, pixels.encoding, 'film', outcome.determined),
+    camera,
     notices,
   };
+}
+
+/** What of a fit may be kept, its evidence weighed down as the charts weigh it down. */
+function keepable({ fit, determined }: Outcome, prior: Prior, encoding: RgbEncoding): FittedCamera | null {
+  if (determined === 'no') return null;
+  const covariance = withLessEvidence(fit.covariance, prior.precision, COVARIANCE_FACTOR);
+  return fittedCamera({ parameters: fit.parameters, covariance }, encoding, 'film', determined);
 }
 
 function rulesFor(setup: Setup, scene: FilmScene, resolvableNm: number): ReadingRules {

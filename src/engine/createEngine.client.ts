@@ -103,6 +103,11 @@ export function createEngine(): Engine {
       };
     },
     tally: (request = {}) => jobOf(async () => (lead ? lead.call('tally', request) : null), stop),
+    target: (corners, light) =>
+      jobOf(async () => {
+        await reopen();
+        return theLead().call('target', { corners, light });
+      }, stop),
     chart: (setup, maxThicknessNm) => jobOf(() => theLead().call('chart', { setup, maxThicknessNm }), stop),
     dispose: stop,
   };

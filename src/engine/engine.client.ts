@@ -1,5 +1,8 @@
+import type { Light } from '../colour/types.ts';
 import type { ThicknessMap } from '../match/types.ts';
+import type { FourCorners } from '../photo/targetColours.ts';
 import type { ChartView, EstimateResult, Job, OnProgress, OpenedPhoto, Probe } from './contract.ts';
+import type { TargetReading } from './measureTarget.ts';
 import type { Setup } from './setup.ts';
 import type { TallyReport, TallyRequest } from './tallyContract.ts';
 
@@ -19,6 +22,8 @@ export interface Engine {
    * Resolves null where there is no map (none measured, or the last measurement was cancelled).
    */
   tally(request?: TallyRequest): Job<TallyReport | null>;
+  /** Fits the camera to a colour target on the open photo; see `measureTarget`. */
+  target(corners: FourCorners, light: Light | undefined): Job<TargetReading>;
   chart(setup: Setup, maxThicknessNm: number): Job<ChartView>;
   dispose(): void;
 }

@@ -1,9 +1,12 @@
 /** The methods of the two kinds of worker, as types: what goes in, what comes out. */
+import type { Light } from '../colour/types.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import type { MapRows, ReadingRules, SettledField } from '../match/mapPixels.ts';
 import type { ThicknessMap } from '../match/types.ts';
+import type { FourCorners } from '../photo/targetColours.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import type { ChartView, EstimateResult, OpenedPhoto, Probe } from './contract.ts';
+import type { TargetReading } from './measureTarget.ts';
 import type { SeenAngles } from './seenAngles.ts';
 import type { Setup } from './setup.ts';
 import type { TallyReport, TallyRequest } from './tallyContract.ts';
@@ -43,6 +46,11 @@ export interface LeadJobs {
   /** How much there is on the last finished map; null before there is one. */
   tally: { readonly in: TallyRequest; readonly out: TallyReport | null };
   probe: { readonly in: { readonly x: number; readonly y: number }; readonly out: Probe | null };
+  /** Fits the camera to the open photo of a colour target. */
+  target: {
+    readonly in: { readonly corners: FourCorners; readonly light: Light | undefined };
+    readonly out: TargetReading;
+  };
   chart: { readonly in: { readonly setup: Setup; readonly maxThicknessNm: number }; readonly out: ChartView };
 }
 

@@ -2,7 +2,8 @@
 import type { RgbEncoding } from '../colour/types.ts';
 import { type CameraKnowledge, cameraKnowledge, KEPT } from '../match/cameraKnowledge.ts';
 import type { CameraFit } from '../match/fitCamera.ts';
-import { choleskyInPlace } from '../match/symmetric.ts';
+import { PARAMETERS } from '../match/parameters.ts';
+import { choleskyInPlace, inverseOf } from '../match/symmetric.ts';
 
 /** What a fit or a colour target tells of a camera, before it gets a name. */
 export interface FittedCamera {
@@ -51,6 +52,22 @@ export function fittedCamera(
     mean: Array.from(mean, (value) => Number(value.toPrecision(DIGITS))),
     covariance: lower,
   };
+}
+
+/**
+ * The covariance of a fit whose evidence counts `factor` times less, the prior counting as before: (P + (C^-1 - P) /
+ * factor)^-1. Never wider than the prior.
+ */
+export function withLessEvidence(
+  covariance: Float64Array,
+  prior: Float64Array,
+  factor: number,
+): Float64Array {
+  const precision = inverseOf(covariance, PARAMETERS);
+  return inverseOf(
+    precision.map((v, k) => prior[k]! + (v - prior[k]!) / factor),
+    PARAMETERS,
+  );
 }
 
 /** Gives a fitted camera its name. */

@@ -5,8 +5,11 @@ import type { Notice } from './contract.ts';
 import { knowledgeOf } from './keptCamera.ts';
 import type { Setup } from './setup.ts';
 
-/** A kept camera that would agree with this photo less often than this, were it the same phone, is put aside. */
-const LEAST_PROBABILITY = 1e-3;
+/**
+ * A kept camera that would agree with this photo less often than this, were it the same phone, is put aside. Covariances
+ * are wide on purpose, so the same phone is refused more rarely than that.
+ */
+const LEAST_PROBABILITY = 0.01;
 
 /** What the set-up's kept camera says of this photo's camera; null where there is none, or none that fits the file. */
 export function knownCamera(

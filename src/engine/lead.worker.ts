@@ -13,6 +13,7 @@ import { joinBands, readBand, settle } from './estimate.ts';
 import type { BandTask, LeadJobs } from './jobs.ts';
 import { type KeptFit, keepFit } from './keptFit.ts';
 import { leftOutOf } from './leftOut.ts';
+import { measureTarget } from './measureTarget.ts';
 import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import { previewMap } from './previewMap.ts';
 import { probePixel } from './probe.ts';
@@ -178,6 +179,7 @@ serve<LeadJobs>(
         }
       );
     },
+    target: ({ corners, light }) => measureTarget(openPixels(), corners, light),
     chart: ({ setup, maxThicknessNm }) => chartFor(setup, maxThicknessNm),
   },
   buffersIn,

@@ -115,7 +115,7 @@ export function filmBasis(
 }
 
 /** Temperatures a few mired to either side of a daylight, within the locus; null for a lamp. */
-function miredNeighbours(light: Light): readonly [number, number] | null {
+export function miredNeighbours(light: Light): readonly [number, number] | null {
   if (!('daylightK' in light)) return null;
   const mired = 1e6 / light.daylightK;
   const coolest = Math.max(1e6 / DAYLIGHT_RANGE_K[1], mired - MIRED_STEP);
@@ -123,7 +123,8 @@ function miredNeighbours(light: Light): readonly [number, number] | null {
   return [1e6 / coolest, 1e6 / warmest];
 }
 
-function sumRows(rows: Float64Array): Float64Array {
+/** Sums of a basis' rows over wavelength: what a perfect white gives. */
+export function sumRows(rows: Float64Array): Float64Array {
   const n = rows.length / ROW;
   return Float64Array.from({ length: ROW }, (_, row) => {
     let sum = 0;
