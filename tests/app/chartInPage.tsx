@@ -26,6 +26,7 @@ const engine: Engine = {
   preview: never,
   probe: never,
   tally: never,
+  target: never,
   dispose: never,
   chart: (setup, maxThicknessNm): Job<ChartView> => {
     chartTests.asked.push({ setup, maxThicknessNm });
