@@ -11,6 +11,7 @@ import { type VolumeInputs, volumeByThickness } from '../tally/volumeByThickness
 import { type AreaCells, areaCells } from '../view/areaCells.ts';
 import type { SunPosition } from '../view/sun.ts';
 import { dropExcluded, viewShares, viewStatus } from '../view/viewLimits.ts';
+import { LEFT_OUT, paintedOutside } from './leftOut.ts';
 import { groundAreaOf, incidenceOf, type PhotoView } from './photoView.ts';
 import { prepareScene } from './prepareScene.ts';
 import type { PositionSetup, Setup } from './setup.ts';
@@ -75,10 +76,14 @@ function inMetres(
   const incidenceRad = incidenceOf(view);
   const areaM2 = groundAreaOf(view);
   const byView = viewStatus(incidenceRad);
-  const region = Uint8Array.from(status, (code) => (code === PIXEL_STATUS.outside ? 0 : 1));
+  // The estimate calls pixels outside that look too flat: what was marked tells them from what was left out by hand.
+  const region = paintedOutside(width, height, setup).map((mark) => (mark === LEFT_OUT.no ? 1 : 0));
   dropExcluded(areaM2, byView);
+  for (let i = 0; i < status.length; i++) if (status[i] === PIXEL_STATUS.outside) areaM2[i] = Number.NaN;
   const film: FilmRegion = { map, areaM2 };
-  const area = oiledArea(film);
+  const counted = countIn(region, areaM2);
+  const regionPixels = region.reduce((sum, value) => sum + value, 0);
+  const area: OiledArea = { ...oiledArea(film), excludedPixels: regionPixels - counted };
   const mapped = sharesFromMap(film, options.atLeastCode);
   const cells = areaCells(width, height);
   const byThickness = volumeByThickness(
@@ -91,7 +96,6 @@ function inMetres(
   const shares = sharesOf(mapped, area, options.shares);
   const byCode =
     shares.used && volumeByCode(shares.from === 'map' ? mapped.codedM2 : area.oiledM2, shares.used);
-  const counted = countIn(region, areaM2);
   const seen = viewShares(byView, region);
   return {
     scale: 'metres',
@@ -101,7 +105,7 @@ function inMetres(
     byCode,
     comparison: byCode && compareMethods(byThickness, byCode, mapped),
     viewShares: seen,
-    excludedShare: seen.tooSlanted + seen.aboveHorizon,
+    excludedShare: regionPixels > 0 ? area.excludedPixels / regionPixels : 0,
     incidenceDeg: incidenceRange(incidenceRad, region, areaM2),
     lengthCheck: view.lengthCheck,
     ...sharesByArea(area, counted),
