@@ -90,7 +90,7 @@ export function buildCodeChart(
  * How thickness read at label j moves with each parameter: a colour error J dtheta is read as a slide of
  * -(t' W J dtheta)/(t' W t) along the chart. Fills `slide`; returns the variance of a reading, nm^2, all causes.
  */
-function slideOf(
+export function slideOf(
   j: number,
   codes: Float64Array,
   jacobian: Float64Array,

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { buildCodeChart } from '../../src/match/buildCodeChart.ts';
 import { modelEvaluator } from '../../src/match/cameraModel.ts';
 import { invertCovariance, searchable } from '../../src/match/codeChart.ts';
+import { commonError, commonSdOfMean } from '../../src/match/commonError.ts';
 import { pathRatio } from '../../src/match/filmBasis.ts';
 import { AT, PARAMETERS } from '../../src/match/parameters.ts';
 import { makeModes, posteriorReader } from '../../src/match/posterior.ts';
@@ -93,6 +94,41 @@ describe('chart of one photo against a Monte Carlo draw of 4000 cameras', () => 
       expect(spread / chart.sharedSdNm[j]!, `label ${j}`).toBeGreaterThan(0.9);
       expect(spread / chart.sharedSdNm[j]!, `label ${j}`).toBeLessThan(1.1);
     });
+  });
+
+  it('tells how far off the mean of several thicknesses is, in which errors of opposite sign cancel', () => {
+    const read = posteriorReader(searchable(chart));
+    const modes = makeModes();
+    const common = commonError(model, fitAt(mean, covariance), chart, scale);
+    const areaAt = new Float64Array(chart.count);
+    for (const j of LABELS) areaAt[j] = 1;
+    let sum = 0;
+    let square = 0;
+    for (const { codes, ratio } of cameras) {
+      let error = 0;
+      LABELS.forEach((j, k) => {
+        read(codes[3 * k]!, codes[3 * k + 1]!, codes[3 * k + 2]!, modes);
+        error += (modes.values[0]! - chart.thicknessNm[j]! * ratio) / LABELS.length;
+      });
+      sum += error;
+      square += error * error;
+    }
+    const spread = Math.sqrt(square / DRAWS - (sum / DRAWS) ** 2);
+    const stated = commonSdOfMean(common, areaAt);
+    expect(spread / stated).toBeGreaterThan(0.9);
+    expect(spread / stated).toBeLessThan(1.1);
+    // Were all errors of one sign, the mean's would be the mean of the labels' own.
+    const ofOneSign = LABELS.reduce((total, j) => total + chart.sharedSdNm[j]!, 0) / LABELS.length;
+    expect(stated).toBeLessThan(ofOneSign);
+    // One label alone: the chart's own figure.
+    for (const j of LABELS) {
+      expect(
+        commonSdOfMean(
+          common,
+          areaAt.map((_, i) => (i === j ? 3 : 0)),
+        ),
+      ).toBeCloseTo(chart.sharedSdNm[j]!, 4);
+    }
   });
 
   it('has even steps scaled by the index, orders by thickness, and shares between 0 and 1', () => {
