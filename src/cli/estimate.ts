@@ -2,13 +2,11 @@
 import { mkdir, readFile, rm, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { estimate } from '../engine/estimate.ts';
-import { leftOutOf } from '../engine/leftOut.ts';
 import { parseSetup } from '../engine/parseSetup.ts';
 import { photoViewOf, withPhotoFocal } from '../engine/photoView.ts';
 import { SetupError } from '../engine/prepareScene.ts';
 import type { Setup } from '../engine/setup.ts';
 import { tallyPhoto } from '../engine/tally.ts';
-import { clippedShareOf } from '../engine/tallyFacts.ts';
 import { type DecodedPhoto, PhotoError } from '../photo/types.ts';
 import { placeless } from '../record/redact.ts';
 import { parseEstimateArguments, USAGE, UsageError } from './arguments.ts';
@@ -54,8 +52,7 @@ async function main(): Promise<number> {
   const { pixels, metadata } = photo;
   const view = photoViewOf(setup, pixels.width, pixels.height);
   const result = estimate(pixels, setup, () => performance.now());
-  const clippedShare = clippedShareOf(leftOutOf(pixels, setup));
-  const report = tallyPhoto(result.map, setup, view, {}, { metadata, clippedShare });
+  const report = tallyPhoto(result.map, setup, view, {}, { ...result.tallyFacts, metadata });
   try {
     await mkdir(options.out, { recursive: true });
     // Files of an earlier run must not pass for this one's.

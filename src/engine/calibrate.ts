@@ -3,10 +3,11 @@ import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import type { RgbEncoding } from '../colour/types.ts';
 import type { ActivityMap } from '../match/activity.ts';
-import { buildCodeChart } from '../match/buildCodeChart.ts';
+import { buildCodeChart, type ThicknessScale } from '../match/buildCodeChart.ts';
 import { withCamera } from '../match/cameraKnowledge.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
+import { type CommonError, commonError } from '../match/commonError.ts';
 import { type FilmBasis, type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
 import { type CameraFit, type FitInput, fitCamera } from '../match/fitCamera.ts';
 import type { ReadingRules } from '../match/mapPixels.ts';
@@ -52,6 +53,8 @@ export interface Calibration {
   /** The charts at all angles of a photo with a view, and where its pixels look; `charts` is then that of their middle. */
   readonly angles: SeenAngles | null;
   readonly rules: ReadingRules;
+  /** What all thicknesses have in common, at the angle of `charts`; the view's own doubts are not in it. */
+  readonly common: CommonError;
   readonly orderBoundariesNm: readonly number[];
   readonly resolvableNm: { readonly fromNm: number; readonly toNm: number };
   readonly calibrated: boolean;
@@ -202,9 +205,12 @@ export function calibrate(
     outcome.fit = { ...outcome.fit, covariance };
   }
   const angles = slantedCharts(outcome.fit, 1);
-  const charts = angles
-    ? angles.charts.charts[nearestOf(angles.charts.incidenceRad, scene.incidenceRad)]!
-    : chartsFor(modelAt(1, Math.ceil(maxNm) + 1), outcome.fit);
+  const middle = angles ? nearestOf(angles.charts.incidenceRad, scene.incidenceRad) : 0;
+  const model =
+    slanted && angles
+      ? modelOf(slanted.basisAt(angles.charts.incidenceRad[middle]!))
+      : modelAt(1, Math.ceil(maxNm) + 1);
+  const charts = angles?.charts.charts[middle] ?? chartsFor(model, outcome.fit);
   const factor = pathRatio(scene, outcome.fit.parameters[AT.index]!);
   const boundaries = orders.map((d) => d * factor);
   const chart = charts[0]!;
@@ -221,6 +227,7 @@ export function calibrate(
     charts,
     angles,
     rules: rulesFor(setup, scene, reachesEnd ? Number.POSITIVE_INFINITY : resolvable.toNm),
+    common: commonError(model, outcome.fit, chart, scaleOf(scene, outcome.fit, OUTSIDE_FAMILY)),
     orderBoundariesNm: boundaries,
     resolvableNm: resolvable,
     calibrated,
@@ -255,19 +262,19 @@ function drawCharts(
   nominalOrdersNm: readonly number[],
   relativeSd: number,
 ): CodeChart[] {
-  const shift = fit.parameters[AT.index]!;
-  const factor = pathRatio(scene, shift);
-  const boundaries = nominalOrdersNm.map((d) => d * factor);
-  const perIndex = -1 / (scene.stack.film.refractiveIndex(550) + shift);
+  const scale = scaleOf(scene, fit, relativeSd);
+  const boundaries = nominalOrdersNm.map((d) => d * scale.factor);
   return CHART_ERRORS.map((error) =>
-    buildCodeChart(
-      model,
-      fit,
-      { codes: [noise[0]!, noise[1]!, noise[2]!], ...error },
-      { factor, perIndex, relativeSd },
-      (d) => orderOf(d, boundaries),
+    buildCodeChart(model, fit, { codes: [noise[0]!, noise[1]!, noise[2]!], ...error }, scale, (d) =>
+      orderOf(d, boundaries),
     ),
   );
+}
+
+function scaleOf(scene: FilmScene, fit: CameraFit, relativeSd: number): ThicknessScale {
+  const shift = fit.parameters[AT.index]!;
+  const perIndex = -1 / (scene.stack.film.refractiveIndex(550) + shift);
+  return { factor: pathRatio(scene, shift), perIndex, relativeSd };
 }
 
 function fitInput(

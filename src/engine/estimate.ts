@@ -16,6 +16,7 @@ import { heedPins } from './pins.ts';
 import { makeReader } from './seenAngles.ts';
 import type { Setup } from './setup.ts';
 import { summarise } from './summarise.ts';
+import { type TallyFacts, tallyFactsOf } from './tallyFacts.ts';
 
 /** Places that the order step looks at, at most; larger photos are sampled evenly for it. */
 const MOST_PLACES = 400_000;
@@ -73,6 +74,11 @@ export function readBand(
 /** Milliseconds since any fixed moment; injected, because the pure code has no clock. */
 export type Clock = () => number;
 
+/** The estimate with what its tally needs. */
+export interface HeadlessResult extends EstimateResult {
+  readonly tallyFacts: TallyFacts;
+}
+
 /**
  * The whole job on one thread: photo pixels and a set-up in, thickness map and summary out.
  * @throws SetupError, PhotoError with a sentence that says what to do
@@ -82,7 +88,7 @@ export function estimate(
   setup: Setup,
   clock: Clock = () => 0,
   onStep: OnStep = () => {},
-): EstimateResult {
+): HeadlessResult {
   const started = clock();
   const leftOut = leftOutOf(pixels, setup);
   const activity = activityMap(pixels);
@@ -108,7 +114,12 @@ export function estimate(
     map: mapped - ordered,
     total: mapped - started,
   };
-  return { map, summary: summarise(map, calibration, timingsMs), camera: calibration.camera };
+  return {
+    map,
+    summary: summarise(map, calibration, timingsMs),
+    camera: calibration.camera,
+    tallyFacts: tallyFactsOf(calibration, leftOut),
+  };
 }
 
 /** Puts bands, top to bottom, together into one map. A single band's arrays are used as they are. */

@@ -22,11 +22,11 @@ import type { Setup } from './setup.ts';
 import { changeBetween } from './setupChanges.ts';
 import { summarise } from './summarise.ts';
 import { tallyPhoto } from './tally.ts';
-import { clippedShareOf } from './tallyFacts.ts';
+import { type TallyFacts, tallyFactsOf } from './tallyFacts.ts';
 
 interface Measured {
   readonly setup: Setup;
-  readonly clippedShare: number;
+  readonly tallyFacts: TallyFacts;
   readonly calibration: Calibration;
   readonly reader: PixelReader;
   readonly settled: SettledField;
@@ -97,7 +97,7 @@ serve<LeadJobs>(
       };
       measured = {
         setup,
-        clippedShare: clippedShareOf(leftOut),
+        tallyFacts: tallyFactsOf(calibration, leftOut),
         calibration,
         reader,
         settled,
@@ -159,11 +159,11 @@ serve<LeadJobs>(
     },
     tally: ({ setup: changed, ...options }) => {
       if (!photo || !measured?.map) return null;
-      const { map, clippedShare } = measured;
+      const { map, tallyFacts } = measured;
       const { metadata } = photo;
       const setup = changed ? withPhotoFocal(changed, metadata) : measured.setup;
       const view = photoViewOf(setup, map.width, map.height);
-      return tallyPhoto(map, setup, view, options, { metadata, clippedShare });
+      return tallyPhoto(map, setup, view, options, { ...tallyFacts, metadata });
     },
     probe: ({ x, y }) => {
       if (!photo || !measured) return null;

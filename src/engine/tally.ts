@@ -1,5 +1,5 @@
+import { type CommonError, commonSdOfMean } from '../match/commonError.ts';
 import { PIXEL_STATUS, type ThicknessMap } from '../match/types.ts';
-import type { PhotoMetadata } from '../photo/types.ts';
 import { seededRandom } from '../scene/random.ts';
 import { type AppearanceShares, volumeByCode } from '../tally/appearanceCode.ts';
 import { type MappedShares, sharesFromMap } from '../tally/appearanceShares.ts';
@@ -22,18 +22,8 @@ import type {
   TallyReport,
   TallyShares,
 } from './tallyContract.ts';
+import type { TallyFacts } from './tallyFacts.ts';
 import { headingOf, positionOf, sunOf, tallyNotices } from './tallyNotices.ts';
-
-/** What is known of the photo besides its map. */
-export interface TallyFacts {
-  readonly metadata?: PhotoMetadata;
-  /** Part of the region's pixels that are clipped. */
-  readonly clippedShare?: number;
-  /** What all thicknesses have in common beside index and angle; guesses of `DEFAULT_VOLUME_INPUTS` where absent. */
-  readonly volumeInputs?: Partial<VolumeInputs>;
-  /** The film's index as fitted; the preset's where absent. */
-  readonly filmIndex?: FilmIndex;
-}
 
 /**
  * How much there is on a measured photo: areas, coverage, thickness histogram, volumes by thickness and by appearance
@@ -89,9 +79,12 @@ function inMetres(
   const byThickness = volumeByThickness(
     film,
     cells,
-    drawOf(view, cells, filmIndexOf(setup, facts)),
+    drawOf(view, cells, filmIndexOf(setup, facts.common)),
     seededRandom(options.seed ?? 1),
-    { ...facts.volumeInputs, ...(options.trials !== undefined && { trials: options.trials }) },
+    {
+      ...(facts.common && commonInputs(film, facts.common)),
+      ...(options.trials !== undefined && { trials: options.trials }),
+    },
   );
   const shares = sharesOf(mapped, area, options.shares);
   const byCode =
@@ -199,14 +192,27 @@ function drawOf(view: PhotoView, cells: AreaCells, index: FilmIndex): CommonDraw
     : scaleDraw(index, view.sd.heightShare);
 }
 
-function filmIndexOf(setup: Setup, { filmIndex }: TallyFacts): FilmIndex {
-  if (filmIndex) return filmIndex;
+/** The index that phase goes by; its doubt is in the common error where there is one. */
+function filmIndexOf(setup: Setup, common: CommonError | undefined): FilmIndex {
   const { film } = prepareScene(setup).scene.stack;
-  return { index: film.refractiveIndex(MIDDLE_NM), indexSd: film.indexSpread };
+  return { index: film.refractiveIndex(MIDDLE_NM), indexSd: common ? 0 : film.indexSpread };
 }
 
 /** Wavelength at which one index stands for all of them: the middle of what is seen. */
 const MIDDLE_NM = 550;
+
+/** The common error as it comes out in the sum over this film: what moves thin and thick film apart cancels in part. */
+function commonInputs({ map, areaM2 }: FilmRegion, common: CommonError): Partial<VolumeInputs> {
+  const areaAt = new Float64Array(common.parts.length / common.count);
+  const last = areaAt.length - 1;
+  for (let i = 0; i < areaM2.length; i++) {
+    const status = map.status[i]!;
+    if (status !== PIXEL_STATUS.measured && status !== PIXEL_STATUS.ambiguous) continue;
+    const area = areaM2[i]!;
+    if (area > 0) areaAt[Math.min(last, Math.round(map.thicknessNm[i]! / common.stepNm))]! += area;
+  }
+  return { thicknessShiftNm: commonSdOfMean(common, areaAt), thicknessShare: common.relativeSd };
+}
 
 function countIn(region: Uint8Array, areaM2: Float32Array): number {
   let count = 0;

@@ -10,8 +10,8 @@ import { type ViewShares, viewNotices } from '../view/viewLimits.ts';
 import type { Notice } from './contract.ts';
 import type { PhotoView } from './photoView.ts';
 import type { PositionSetup, Setup } from './setup.ts';
-import type { TallyFacts } from './tally.ts';
 import type { TallyOptions, TallyShares } from './tallyContract.ts';
+import type { TallyFacts } from './tallyFacts.ts';
 
 /** Typed, else the photo's own; null where neither says. */
 export function positionOf(setup: Setup, metadata?: PhotoMetadata): PositionSetup | null {

@@ -10,6 +10,7 @@ import { regionMask } from '../../scene/region.ts';
 import { type DrawnConditions, type Scene, TRUE_KIND } from '../../scene/types.ts';
 import { type ErrorSample, sampleErrors } from './statistics.ts';
 import { nearSteps } from './steps.ts';
+import { type TalliedEstimate, type TallyReading, tallyScene } from './tallyScene.ts';
 
 /** One photo to render, read and compare. */
 export interface SceneTask {
@@ -41,10 +42,12 @@ export interface SceneReading {
   readonly setup: Setup;
   readonly fit: EstimateResult['summary']['fit'];
   readonly estimateMs: number;
+  /** How much there is, on scenes over level water; null elsewhere. */
+  readonly tally: TallyReading | null;
   readonly timingsMs: Readonly<Record<string, number>>;
 }
 
-export type Estimator = (pixels: PhotoPixels, setup: Setup, clock: () => number) => EstimateResult;
+export type Estimator = (pixels: PhotoPixels, setup: Setup, clock: () => number) => TalliedEstimate;
 
 /** The estimator, or null where this build has none. */
 export async function loadEstimator(): Promise<Estimator | null> {
@@ -88,8 +91,9 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
   const codes = await throughJpeg(scene.codes, width, height);
   const pixels: PhotoPixels = { width, height, codes, channels: 3, maxCode: 255, encoding: SRGB };
   const started = performance.now();
-  const { map, summary } = estimate(pixels, scene.setup, () => performance.now());
+  const result = estimate(pixels, scene.setup, () => performance.now());
   const estimateMs = performance.now() - started;
+  const { map, summary } = result;
 
   const inRegion = regionMask(scene.setup.region, width, height);
   const isFilm = new Uint8Array(width * height);
@@ -140,6 +144,7 @@ export async function readScene(task: SceneTask, estimate: Estimator): Promise<S
     drawn: scene.drawn,
     setup: scene.setup,
     fit: summary.fit,
+    tally: tallyScene(scene, result),
     estimateMs,
     timingsMs: summary.timingsMs,
   };
