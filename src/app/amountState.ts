@@ -5,6 +5,7 @@ import { withWholeView } from '../engine/setupView.ts';
 import type { TallyOptions, TallyReport } from '../engine/tallyContract.ts';
 import type { AppearanceCode, AppearanceShares } from '../tally/appearanceCode.ts';
 import { withObserverShares } from '../tally/appearanceShares.ts';
+import { rememberedObserver } from './records/observerMemory.ts';
 import { theEngine } from './session.ts';
 import { image, result, setup } from './state.ts';
 import { lensFacts } from './viewState.ts';
@@ -31,8 +32,14 @@ export const tallyFault = signal<string | null>(null);
 export const givenShares = signal<GivenShares>({});
 /** Film past the end of colour counts as Rainbow (2), or as Metallic (3) where the observer saw a mirror. */
 export const atLeastCode = signal<2 | 3>(2);
-export const viewpoint = signal<Viewpoint>('unknown');
+/** People come back to the same kind of place. */
+export const viewpoint = signal<Viewpoint>(rememberedPlace());
 export const polariser = signal<Polariser>('unknown');
+
+function rememberedPlace(): Viewpoint {
+  const from = rememberedObserver()?.from;
+  return from === undefined || from === 'bench' ? 'unknown' : from;
+}
 
 /** The map's shares with the observer's word over them; null where they do not make 100 %. */
 export function ownShares(ofMap: AppearanceShares | null, given: GivenShares): AppearanceShares | null {

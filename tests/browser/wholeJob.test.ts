@@ -1,5 +1,4 @@
 import { mkdirSync, readdirSync, readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import { join } from 'node:path';
 import { gzipSync } from 'node:zlib';
 import type { Browser, BrowserContext, Page } from 'playwright-core';
@@ -8,8 +7,8 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { TRUTH_CODES_PER_NM } from '../../src/scene/truthPicture.ts';
 import { type BuiltApp, serveBuiltApp } from './builtApp.ts';
 import { launchChromium } from './chromium.ts';
+import { violations } from './page.ts';
 
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 /** `npm run screenshots` keeps what the tests see, for the README and the manifest. */
 const KEEP = process.env.KEEP_SCREENSHOTS === '1';
 
@@ -46,20 +45,6 @@ async function picture(name: string): Promise<void> {
   if (!KEEP) return;
   mkdirSync('public/screenshots', { recursive: true });
   await page.screenshot({ path: `public/screenshots/${name}.png` });
-}
-
-/** Violations that axe-core finds, as "rule: first element". */
-async function violations(): Promise<string[]> {
-  await page.evaluate(axeSource);
-  return page.evaluate(async () => {
-    const { axe } = globalThis as unknown as {
-      axe: {
-        run: (target: Document) => Promise<{ violations: { id: string; nodes: { html: string }[] }[] }>;
-      };
-    };
-    const { violations: found } = await axe.run(document);
-    return found.map((violation) => `${violation.id}: ${violation.nodes[0]?.html}`);
-  });
 }
 
 /**
@@ -104,7 +89,7 @@ describe('the whole job in a real browser, offline', () => {
     await context.setOffline(true);
     await page.reload();
     await page.getByText('Draining soap film').waitFor();
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     await picture('start');
   });
 
@@ -129,7 +114,7 @@ describe('the whole job in a real browser, offline', () => {
     await page.mouse.move(left + width * scale, top + height * scale, { steps: 6 });
     await page.mouse.up();
     await page.getByRole('button', { name: 'Remove this mark' }).waitFor();
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     await picture('mark');
   });
 
@@ -138,7 +123,7 @@ describe('the whole job in a real browser, offline', () => {
       await page.getByRole('button', { name: theme }).click();
       for (const name of ['Film', 'Light', 'Mark']) {
         await step(name).click();
-        expect(await violations(), `${name}, ${theme}`).toEqual([]);
+        expect(await violations(page), `${name}, ${theme}`).toEqual([]);
       }
     }
     await step('Film').click();
@@ -149,7 +134,7 @@ describe('the whole job in a real browser, offline', () => {
     await step('Map').click();
     await page.locator('.legend').waitFor({ timeout: 60_000 });
     await picture('map');
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     const box = await page.locator('.stage canvas').first().boundingBox();
     if (!box) throw new Error('no stage');
     const scale = Math.min(box.width / 1200, box.height / 1600);
@@ -172,7 +157,7 @@ describe('the whole job in a real browser, offline', () => {
     expect(Number(low?.replace(',', ''))).toBeLessThanOrEqual(greatest);
     expect(Number(high?.replace(',', ''))).toBeGreaterThanOrEqual(least);
     await picture('reading');
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     if (KEEP) {
       await page.setViewportSize({ width: 1280, height: 800 });
       await page.screenshot({ path: 'public/screenshots/wide.png', scale: 'css' });
@@ -183,7 +168,7 @@ describe('the whole job in a real browser, offline', () => {
   it('saves a record in one tap and hands over its map', async () => {
     await page.getByRole('button', { name: 'Save record' }).click();
     await page.getByText('Saved on this device').waitFor();
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     await page.getByRole('link', { name: 'Hand over' }).click();
     const [map] = await Promise.all([
       page.waitForEvent('download'),
@@ -238,11 +223,11 @@ describe('the whole job in a real browser, offline', () => {
   it('shows the chart and the sources', async () => {
     await page.goto(`${app.url}#/chart`);
     await page.locator('.chart:not([aria-busy="true"])').waitFor();
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
     await picture('chart');
     await page.goto(`${app.url}#/about`);
     await page.getByText('BSD-3-Clause').first().waitFor();
-    expect(await violations()).toEqual([]);
+    expect(await violations(page)).toEqual([]);
   });
 
   it('never asked anything of another origin, and nothing complained', () => {

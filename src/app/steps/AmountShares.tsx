@@ -12,7 +12,7 @@ export function AmountShares({ report }: { readonly report: TallyReport }) {
   const { ofMap } = report.shares;
   const given = givenShares.value;
   const own = ownShares(ofMap, given);
-  const used = own ?? report.shares.used;
+  const used = own ?? ofMap;
   const isGiven = Object.keys(given).length > 0;
   const percents = used ? wholePercents(used) : null;
   const set = (code: AppearanceCode, percent: number) => {

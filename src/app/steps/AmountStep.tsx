@@ -83,16 +83,18 @@ function Report({ report }: { readonly report: TallyReport }) {
   );
 }
 
-/** The observer's shares take effect at once; the rest follows when the worker has answered. */
-function codeNow(report: TallyInMetres): VolumeByCode | null {
-  const own = ownShares(report.shares.ofMap, givenShares.value);
-  return own ? volumeByCode(report.area.oiledM2, own) : report.shares.from === 'map' ? report.byCode : null;
+/** A change of the shares takes effect at once; the rest follows when the worker has answered. */
+function codeNow({ shares, area, mapped, byCode }: TallyInMetres): VolumeByCode | null {
+  const own = ownShares(shares.ofMap, givenShares.value);
+  if (own) return volumeByCode(area.oiledM2, own);
+  if (shares.from === 'map') return byCode;
+  return shares.ofMap && volumeByCode(mapped.codedM2, shares.ofMap);
 }
 
 function Areas({ report }: { readonly report: TallyInMetres }) {
   const area = areaFigures(report.byThickness.oiledM2, areaUnitOf());
   return (
-    <dl class="figures">
+    <dl class="key-figures">
       <div>
         <dt>Oiled area</dt>
         <dd>
@@ -128,7 +130,7 @@ function NoScale({ report }: { readonly report: TallyReport }) {
   const missing = missingView.value.map((id) => MISSING_WORDS[id]);
   return (
     <>
-      <dl class="figures">
+      <dl class="key-figures">
         <Covered report={report} />
       </dl>
       <p class="note">
