@@ -1,6 +1,7 @@
 import { type ComponentType, render } from 'preact';
 import { useEffect, useState } from 'preact/hooks';
 import './app.css';
+import { targetFile } from './camera/targetState.ts';
 import { keepChanges, restoreTheme } from './keep.ts';
 import { StartScreen } from './StartScreen.tsx';
 import { image } from './state.ts';
@@ -13,6 +14,7 @@ const LAZY: Readonly<Record<string, () => Promise<Screen>>> = {
   '#/about': async () => (await import('./AboutScreen.tsx')).AboutScreen,
   '#/chart': async () => (await import('./ChartRoute.tsx')).ChartRoute,
   '#/records': async () => (await import('./records/RecordsRoute.tsx')).RecordsRoute,
+  target: async () => (await import('./camera/TargetRoute.tsx')).TargetRoute,
   work: async () => (await import('./WorkScreen.tsx')).WorkScreen,
 };
 
@@ -30,7 +32,7 @@ function App() {
   const hash = useHash();
   // The records have screens of their own behind their first part: "#/records/ID".
   const part = hash.split('/').slice(0, 2).join('/');
-  const key = LAZY[part] ? part : image.value ? 'work' : 'start';
+  const key = LAZY[part] ? part : targetFile.value ? 'target' : image.value ? 'work' : 'start';
   const [loaded, setLoaded] = useState<{ key: string; Screen: Screen } | null>(null);
   useEffect(() => {
     const load = LAZY[key];

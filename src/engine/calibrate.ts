@@ -1,7 +1,6 @@
 import { orderBoundaries, orderOf } from '../chart/orders.ts';
 import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
-import type { RgbEncoding } from '../colour/types.ts';
 import type { ActivityMap } from '../match/activity.ts';
 import { buildCodeChart, type ThicknessScale } from '../match/buildCodeChart.ts';
 import { withCamera } from '../match/cameraKnowledge.ts';
@@ -25,8 +24,8 @@ import {
   type Outcome,
   spanOf,
 } from './fitWithFallback.ts';
-import { type FittedCamera, fittedCamera, withLessEvidence } from './keptCamera.ts';
-import { isOtherCamera, knownCamera } from './knownCamera.ts';
+import { cameraOfFilm, type FittedCamera } from './keptCamera.ts';
+import { isOtherCamera, keptName, knownCamera } from './knownCamera.ts';
 import { photoViewOf } from './photoView.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
 import { type References, readReferences } from './references.ts';
@@ -193,13 +192,16 @@ export function calibrate(
   };
   let prior = known ? withCamera(anyCamera(start), known) : anyCamera(start);
   let outcome = fitTwice(prior, start.starts, known ? LEAST_SPAN_KNOWN_NM : LEAST_SPAN_NM);
-  if (known && isOtherCamera(setup, known, outcome.fit, notices)) {
+  const isOther = known !== null && isOtherCamera(setup, known, outcome.fit, notices);
+  if (isOther) {
     const afresh = startGains(coarse, sample, references, pixels);
     prior = anyCamera(afresh);
     outcome = fitTwice(prior, afresh.starts, LEAST_SPAN_NM);
   }
   onStep(0.8, 'drawing the chart for this photo');
-  const camera = keepable(outcome, prior, pixels.encoding);
+  const { fit: found, determined } = outcome;
+  const camera =
+    determined === 'no' ? null : cameraOfFilm(found, prior, COVARIANCE_FACTOR, pixels.encoding, determined);
   if (outcome.determined !== 'no') {
     const covariance = outcome.fit.covariance.map((v) => v * COVARIANCE_FACTOR);
     outcome.fit = { ...outcome.fit, covariance };
@@ -231,17 +233,19 @@ export function calibrate(
     orderBoundariesNm: boundaries,
     resolvableNm: resolvable,
     calibrated,
-    fit: asObserver ? null : describeFit(outcome.fit, outcome.determined, prior, outcome.spanNm, setup),
+    fit: asObserver
+      ? null
+      : describeFit(
+          outcome.fit,
+          outcome.determined,
+          prior,
+          outcome.spanNm,
+          setup,
+          known && !isOther ? keptName(setup) : null,
+        ),
     camera,
     notices,
   };
-}
-
-/** What of a fit may be kept, its evidence weighed down as the charts weigh it down. */
-function keepable({ fit, determined }: Outcome, prior: Prior, encoding: RgbEncoding): FittedCamera | null {
-  if (determined === 'no') return null;
-  const covariance = withLessEvidence(fit.covariance, prior.precision, COVARIANCE_FACTOR);
-  return fittedCamera({ parameters: fit.parameters, covariance }, encoding, 'film', determined);
 }
 
 function rulesFor(setup: Setup, scene: FilmScene, resolvableNm: number): ReadingRules {

@@ -2,7 +2,7 @@
 import type { RgbEncoding } from '../colour/types.ts';
 import { type CameraKnowledge, cameraKnowledge, KEPT } from '../match/cameraKnowledge.ts';
 import type { CameraFit } from '../match/fitCamera.ts';
-import { PARAMETERS } from '../match/parameters.ts';
+import { PARAMETERS, type Prior } from '../match/parameters.ts';
 import { choleskyInPlace, inverseOf } from '../match/symmetric.ts';
 
 /** What a fit or a colour target tells of a camera, before it gets a name. */
@@ -55,19 +55,22 @@ export function fittedCamera(
 }
 
 /**
- * The covariance of a fit whose evidence counts `factor` times less, the prior counting as before: (P + (C^-1 - P) /
- * factor)^-1. Never wider than the prior.
+ * The camera of a fit to film, whose evidence counts `factor` times less than the fit took it for while the prior counts
+ * as before: covariance (P + (C^-1 - P) / factor)^-1, never wider than the prior.
  */
-export function withLessEvidence(
-  covariance: Float64Array,
-  prior: Float64Array,
+export function cameraOfFilm(
+  fit: Pick<CameraFit, 'parameters' | 'covariance'>,
+  prior: Prior,
   factor: number,
-): Float64Array {
-  const precision = inverseOf(covariance, PARAMETERS);
-  return inverseOf(
-    precision.map((v, k) => prior[k]! + (v - prior[k]!) / factor),
+  encoding: RgbEncoding,
+  determined: FittedCamera['determined'],
+): FittedCamera {
+  const precision = inverseOf(fit.covariance, PARAMETERS);
+  const covariance = inverseOf(
+    precision.map((v, k) => prior.precision[k]! + (v - prior.precision[k]!) / factor),
     PARAMETERS,
   );
+  return fittedCamera({ parameters: fit.parameters, covariance }, encoding, 'film', determined);
 }
 
 /** Gives a fitted camera its name. */

@@ -30,6 +30,11 @@ export function knownCamera(
   return atNextPhoto(known, matrixFor(known.mean.subarray(0, 9)));
 }
 
+/** What the set-up's kept camera is called; empty where there is none. */
+export function keptName({ camera }: Setup): string {
+  return typeof camera === 'object' ? (camera.kept?.name ?? '') : '';
+}
+
 /** Whether a fit with a kept camera as its prior says that it is another camera; then the notice says so. */
 export function isOtherCamera(
   setup: Setup,
@@ -40,7 +45,7 @@ export function isOtherCamera(
   const { probability } = conflictWith(known, fit);
 
   if (probability >= LEAST_PROBABILITY) return false;
-  const name = typeof setup.camera === 'object' ? (setup.camera.kept?.name ?? '') : '';
+  const name = keptName(setup);
   notices.push({
     code: 'kept-camera-conflict',
     text: `This photo does not look as if the kept camera “${name}” took it, so it was put aside. Check the phone, the lens and the light, or choose another kept camera.`,

@@ -1,4 +1,5 @@
 import type { IlluminantId } from '../../colour/types.ts';
+import { CameraPart, CameraSuggestion } from '../camera/CameraPart.tsx';
 import { change, onWater, setup } from '../state.ts';
 import { missingView } from '../viewState.ts';
 import { incidenceWords, skyWords } from '../words/names.ts';
@@ -24,6 +25,7 @@ export function LightStep() {
   const isSky = 'daylightK' in light;
   return (
     <section aria-label="Light">
+      <CameraSuggestion />
       <h1>What does the film mirror?</h1>
       <fieldset class="segments" aria-label="Light">
         <button
@@ -104,6 +106,7 @@ export function LightStep() {
       <p class="small quiet">
         The mirrored part of the sky or the lamp counts, not the sun. The photo itself corrects a rough guess.
       </p>
+      <CameraPart />
     </section>
   );
 }

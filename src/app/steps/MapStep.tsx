@@ -1,3 +1,4 @@
+import { KeepCamera } from '../camera/KeepCamera.tsx';
 import { ProbeSheet } from '../reading/ProbeSheet.tsx';
 import { image, mapView, probe, result, setup, wipe } from '../state.ts';
 import { shareText } from '../words/numbers.ts';
@@ -94,6 +95,9 @@ export function MapStep() {
         </p>
       ) : null}
       {summary.fit ? <p class="note small quiet">{summary.fit.advice}</p> : null}
+      {done.camera?.determined === 'well' && image.value ? (
+        <KeepCamera camera={done.camera} metadata={image.value.opened.metadata} />
+      ) : null}
       {notices.map((text) => (
         <p key={text} class="note small warn">
           {text}
