@@ -14,7 +14,7 @@ export type ViewMode = 'horizon' | 'tilt' | 'down';
 /** What taps on the photo place in the view step. */
 export type ViewTarget = 'horizon' | 'length';
 
-/** Chosen by hand; null while the set-up itself tells. */
+/** Chosen by hand; what the set-up says goes before it, so that an undo brings its way of telling back. */
 const chosenMode = signal<ViewMode | null>(null);
 export const viewTarget = signal<ViewTarget>('horizon');
 /** The first of two taps, until the second is made. */
@@ -27,10 +27,10 @@ const DOWN_DEG = -90;
 
 export const viewMode = computed<ViewMode>(() => {
   const { horizon, pitchDeg, pixelSizeM } = setup.value.view ?? {};
-  if (chosenMode.value) return chosenMode.value;
   if (horizon) return 'horizon';
-  if (pixelSizeM !== undefined || pitchDeg === DOWN_DEG) return 'down';
-  return pitchDeg === undefined ? 'horizon' : 'tilt';
+  if (pixelSizeM !== undefined) return 'down';
+  if (pitchDeg !== undefined) return pitchDeg === DOWN_DEG && chosenMode.value !== 'tilt' ? 'down' : 'tilt';
+  return chosenMode.value === 'tilt' ? 'tilt' : 'horizon';
 });
 
 export function lensFacts(): LensFacts {

@@ -76,6 +76,21 @@ describe('where the camera stood', () => {
     expect(setup.value.view).toEqual({ heightM: 3 });
   });
 
+  it('comes back with an undo, and the way of telling with it', () => {
+    changeView({
+      horizon: [
+        [100, 120],
+        [900, 110],
+      ],
+    });
+    chooseViewMode('tilt');
+    changeView({ pitchDeg: -30 });
+    undo();
+    undo();
+    expect(viewMode.value).toBe('horizon');
+    expect(setup.value.view?.horizon).toBeDefined();
+  });
+
   it('has no view left when the last thing said is taken away', () => {
     changeView({ heightM: 3 });
     changeView({ heightM: undefined });

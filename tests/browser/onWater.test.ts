@@ -4,7 +4,13 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { paintedOutside } from '../../src/engine/leftOut.ts';
 import type { Setup } from '../../src/engine/setup.ts';
 import { demoHarbour } from '../../src/scene/demoScenes.ts';
-import { incidenceRad, lookAlong, viewAxes, waterAreaM2 } from '../../src/scene/perspective.ts';
+import {
+  incidenceRad,
+  lookAlong,
+  type PinholeView,
+  viewAxes,
+  waterAreaM2,
+} from '../../src/scene/perspective.ts';
 import { NO_TRUTH, TRUTH_CODES_PER_NM } from '../../src/scene/truthPicture.ts';
 import { type BuiltApp, serveBuiltApp } from './builtApp.ts';
 import { launchChromium } from './chromium.ts';
@@ -89,6 +95,20 @@ function interval(words: string): readonly [number, number] {
   return [Number(low?.replaceAll(',', '')), Number(high?.replaceAll(',', ''))];
 }
 
+/** The renderer's own camera, from a small picture of the same draw. */
+function trueView(): PinholeView {
+  const small = demoHarbour({ width: PHOTO.width / 8, height: PHOTO.height / 8 }).view;
+  return { ...small, widthPx: PHOTO.width, heightPx: PHOTO.height, focalPx: 8 * small.focalPx };
+}
+
+/** Where a picture place lies on the water by the renderer's geometry, metres. */
+function onWater(view: PinholeView, x: number, y: number): readonly [number, number] {
+  const look = [0, 0, 0];
+  lookAlong(view, viewAxes(view), x, y, look);
+  const reach = view.heightM / -(look[2] ?? Number.NaN);
+  return [(look[0] ?? 0) * reach, (look[1] ?? 0) * reach];
+}
+
 interface Truth {
   readonly volumeM3: number;
   readonly heightM: number;
@@ -100,8 +120,7 @@ async function truthIn(setup: Setup): Promise<Truth> {
   const { width, height } = await picture.metadata();
   const codes = await picture.toColourspace('grey16').raw({ depth: 'ushort' }).toBuffer();
   const outside = paintedOutside(PHOTO.width, PHOTO.height, setup);
-  const small = demoHarbour({ width: PHOTO.width / 8, height: PHOTO.height / 8 }).view;
-  const view = { ...small, widthPx: PHOTO.width, heightPx: PHOTO.height, focalPx: 8 * small.focalPx };
+  const view = trueView();
   const axes = viewAxes(view);
   const look = [0, 0, 0];
   let volumeM3 = 0;
@@ -243,6 +262,66 @@ describe('oil on water, from a slanted photo to an amount', () => {
     await page.setViewportSize({ width: 390, height: 844 });
   });
 
+  it('finds the true height from a length on the water', async () => {
+    await step('View').click();
+    await button('Check with a known length').click();
+    const ends = [
+      [560, 1400],
+      [980, 1000],
+    ] as const;
+    for (const [x, y] of ends) await touchPhoto(x, y);
+    const view = trueView();
+    const [from, to] = ends.map(([x, y]) => onWater(view, x, y));
+    const trueM = Math.hypot((to?.[0] ?? 0) - (from?.[0] ?? 0), (to?.[1] ?? 0) - (from?.[1] ?? 0));
+    const entry = page.getByLabel('Length between the taps, in metres');
+    await entry.fill(trueM.toFixed(3));
+    await entry.blur();
+    const words = (await button('Done').locator('xpath=../..').textContent()) ?? '';
+    // 3 m was typed: by the horizon alone every length comes out too long by 3 over the true height.
+    const [, off, way] = /(\d+) % (more|too long)/.exec(words) ?? [];
+    expect(way).toBeDefined();
+    expect(Math.abs(Number(off) - 100 * (3 / view.heightM - 1))).toBeLessThan(2);
+    const use = page.getByRole('button', { name: /^Use it for the height/ });
+    const [, heightM] = /([\d.]+) m/.exec((await use.textContent()) ?? '') ?? [];
+    // Taps of a whole pixel of the screen, three of the photo, over 400.
+    expect(Math.abs(Number(heightM) / view.heightM - 1)).toBeLessThan(0.02);
+    await use.click();
+    await page.getByText('Height from the known length').waitFor();
+    expect(await violations(page)).toEqual([]);
+    await button('Remove it').click();
+    await button('Lens above the water: less').waitFor();
+  });
+
+  it('takes the tilt of the phone where that is allowed, and says what to do where it is not', async () => {
+    await button('Tilt').click();
+    const listen = page.getByRole('button', { name: /^Hold the phone/ });
+    await page.evaluate(() => {
+      const asking = DeviceOrientationEvent as unknown as { requestPermission?: () => Promise<string> };
+      asking.requestPermission = async () => 'denied';
+    });
+    await listen.click();
+    await page.getByRole('alert').getByText('Mark the horizon instead').waitFor();
+    await page.evaluate(() => {
+      const asking = DeviceOrientationEvent as unknown as { requestPermission?: () => Promise<string> };
+      asking.requestPermission = async () => 'granted';
+    });
+    await listen.click();
+    // A phone held upright has a beta of 90 degrees and looks level (W3C); leant forward by 30 it looks down by 30.
+    for (let i = 0; i < 3; i++) {
+      await page.evaluate(() => {
+        dispatchEvent(new DeviceOrientationEvent('deviceorientation', { alpha: 0, beta: 60, gamma: 0 }));
+      });
+    }
+    await page.waitForFunction(
+      () =>
+        document.querySelector<HTMLInputElement>('[aria-label="Tilted down from level, in degrees"]')
+          ?.value === '30',
+    );
+    await button('Undo').click();
+    await button('Undo').click();
+    expect(await button('Horizon').getAttribute('aria-pressed')).toBe('true');
+  });
+
   it('gives shares but no litres without a view, and says what is missing', async () => {
     await step('View').click();
     await button('Lens above the water: less').waitFor();
@@ -251,7 +330,7 @@ describe('oil on water, from a slanted photo to an amount', () => {
     await step('Amount').click();
     await page
       .getByText('No area and no litres yet: tell the height of the lens.')
-      .waitFor({ timeout: 120_000 });
+      .waitFor({ timeout: 60_000 });
     expect(await page.locator('.volume').count()).toBe(0);
     expect(await page.locator('.key-figures').textContent()).toMatch(/Coverage\d+ %/);
     expect(await violations(page)).toEqual([]);

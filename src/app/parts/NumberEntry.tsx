@@ -85,7 +85,7 @@ export function NumberEntry({ label, value, units, low, high, start, stepOf, onC
           <button
             type="button"
             class="plain unit"
-            aria-label={`Unit: ${unit.name}. Change to ${units[(chosen + 1) % units.length]?.name}`}
+            aria-label={`Unit ${unit.symbol}, ${unit.name}. Change to ${units[(chosen + 1) % units.length]?.name}`}
             onClick={() => setChosen((chosen + 1) % units.length)}
           >
             {unit.symbol}
