@@ -15,6 +15,7 @@ import { AT, FIXED_CAMERA, type Prior, statedPrior } from '../match/parameters.t
 import { type FilmSample, SAMPLE_VARIANCE_SHARE, sampleFilm } from '../match/sampleFilm.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import { planAngles } from './anglePlan.ts';
+import { assumedIncidence } from './assumedIncidence.ts';
 import type { FitReport, Notice } from './contract.ts';
 import { describeFit } from './describeFit.ts';
 import {
@@ -110,9 +111,17 @@ export function calibrate(
   const { light } = prepared;
   const photoView = photoViewOf(setup, pixels.width, pixels.height);
   const plan = photoView?.view ? planAngles(photoView.view, prepared.scene.stack, leftOut) : null;
-  const scene = plan ? { ...prepared.scene, incidenceRad: plan.referenceRad } : prepared.scene;
+  const assumed = assumedIncidence(setup, photoView, prepared.scene);
+  const scene = {
+    ...prepared.scene,
+    incidenceRad: plan?.referenceRad ?? assumed?.incidenceRad ?? prepared.scene.incidenceRad,
+  };
   const marked = readReferences(pixels, setup);
-  const notices: Notice[] = [...marked.notices, ...viewNoticesOf(photoView, leftOut)];
+  const notices: Notice[] = [
+    ...marked.notices,
+    ...(assumed?.notices ?? []),
+    ...viewNoticesOf(photoView, leftOut),
+  ];
   const maxNm = setup.maxThicknessNm ?? USUAL_MAX_NM;
   const asObserver = setup.camera === 'cie1931';
   const fits = !asObserver && !(typeof setup.camera === 'object' && !setup.camera.fit);
@@ -159,12 +168,12 @@ export function calibrate(
   const noise = sample.count > 0 ? sample.pixelNoise : Float64Array.of(2, 2, 2);
   const orders = orderBoundaries(scene.stack, scene.incidenceRad, maxNm);
   const chartsFor = (model: CameraModel, fit: CameraFit) =>
-    drawCharts(model, fit, scene, noise, orders, OUTSIDE_FAMILY);
+    drawCharts(model, fit, scene, noise, orders, { relative: assumed?.relativeSd ?? 0, brightness: 0 });
   const slantedCharts = (fit: CameraFit, every: number): SeenAngles | null =>
     slanted && {
       view: slanted.plan.view,
-      charts: angleCharts(slanted, every, maxNm, (basis, at, relativeSd, own) =>
-        drawCharts(modelOf(basis), fit, at, noise, own, Math.hypot(OUTSIDE_FAMILY, relativeSd)),
+      charts: angleCharts(slanted, every, maxNm, (basis, at, sd, own) =>
+        drawCharts(modelOf(basis), fit, at, noise, own, sd),
       ),
     };
   /** Fits from the starts, settles orders roughly with that camera, and fits once more. */
@@ -264,13 +273,17 @@ function drawCharts(
   scene: FilmScene,
   noise: Float64Array,
   nominalOrdersNm: readonly number[],
-  relativeSd: number,
+  angleSd: { readonly relative: number; readonly brightness: number },
 ): CodeChart[] {
-  const scale = scaleOf(scene, fit, relativeSd);
+  const scale = scaleOf(scene, fit, Math.hypot(OUTSIDE_FAMILY, angleSd.relative));
   const boundaries = nominalOrdersNm.map((d) => d * scale.factor);
   return CHART_ERRORS.map((error) =>
-    buildCodeChart(model, fit, { codes: [noise[0]!, noise[1]!, noise[2]!], ...error }, scale, (d) =>
-      orderOf(d, boundaries),
+    buildCodeChart(
+      model,
+      fit,
+      { codes: [noise[0]!, noise[1]!, noise[2]!], ...error, brightness: angleSd.brightness },
+      scale,
+      (d) => orderOf(d, boundaries),
     ),
   );
 }

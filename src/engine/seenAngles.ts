@@ -42,7 +42,7 @@ export function angleCharts(
   draw: (
     basis: FilmBasis,
     scene: FilmScene,
-    relativeSd: number,
+    sd: { readonly relative: number; readonly brightness: number },
     nominalOrdersNm: readonly number[],
   ) => readonly CodeChart[],
 ): AngleCharts {
@@ -53,7 +53,7 @@ export function angleCharts(
     draw(
       optics.basisAt(angle),
       optics.sceneAt(angle),
-      optics.relativeSdAt(angle),
+      { relative: optics.relativeSdAt(angle), brightness: optics.brightnessSdAt(angle) },
       orderBoundaries(stack, angle, maxNm),
     ),
   );

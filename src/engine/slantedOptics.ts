@@ -20,6 +20,8 @@ export interface SlantedOptics {
   readonly basisAt: (incidenceRad: number) => FilmBasis;
   /** Relative standard deviation of thickness from what is not known of the angle. */
   readonly relativeSdAt: (incidenceRad: number) => number;
+  /** Relative standard deviation of a film's brightness from the same. */
+  readonly brightnessSdAt: (incidenceRad: number) => number;
   /** The sample with its colours brought to the middle of their strips, and the strip of each. */
   readonly place: (sample: FilmSample, encoding: RgbEncoding) => PlacedSample;
 }
@@ -73,6 +75,8 @@ export function slantedOptics(
     blur: windMS === null ? scene.blur : waveBlur(plan, scene.blur, incidenceRad, windMS),
   });
   const computed = (incidenceRad: number) => make(sceneAt(incidenceRad), SLANTED_STEP_NM, count, grid);
+  const angleSd = (incidenceRad: number) =>
+    Math.hypot(poses ? incidenceSdRad(plan, poses, incidenceRad) : 0, waveTiltSd(plan, incidenceRad, windMS));
   const from = Math.min(chartRad[0]!, cleanRad ?? Number.POSITIVE_INFINITY);
   const to = Math.max(chartRad[chartRad.length - 1]!, cleanRad ?? 0);
   const bases: AngleBasis = angleBasis(computed, from, to);
@@ -83,10 +87,8 @@ export function slantedOptics(
     bareRow: strips.length * fitCount,
     sceneAt,
     basisAt: bases.at,
-    relativeSdAt: (incidenceRad) => {
-      const view = poses ? incidenceSdRad(plan, poses, incidenceRad) : 0;
-      return perAngle(scene, incidenceRad) * Math.hypot(view, waveTiltSd(plan, incidenceRad, windMS));
-    },
+    relativeSdAt: (incidenceRad) => perAngle(scene, incidenceRad) * angleSd(incidenceRad),
+    brightnessSdAt: (incidenceRad) => brighterPerAngle(plan, incidenceRad) * angleSd(incidenceRad),
     place: (sample, encoding) => placeSample(plan, scene, sample, encoding, fitCount),
   };
 }
@@ -110,6 +112,12 @@ function perAngle(scene: FilmScene, incidenceRad: number): number {
   return (ambient * sine * Math.cos(incidenceRad)) / (n * n - sine * sine);
 }
 
+/** Relative change of a film's brightness a radian of incidence. */
+function brighterPerAngle({ brightness }: AnglePlan, incidenceRad: number): number {
+  const step = Math.PI / 180;
+  return Math.log(brightness(incidenceRad + step) / brightness(incidenceRad)) / step;
+}
+
 function waveBlur(plan: AnglePlan, blur: Blur, incidenceRad: number, windMS: number): Blur {
   const inside = slopeVarianceInsidePixel(
     slopeVariance(windMS, 'slick').total,
@@ -120,9 +128,15 @@ function waveBlur(plan: AnglePlan, blur: Blur, incidenceRad: number, windMS: num
   return { ...blur, incidence: incidenceDistribution(incidenceRad, inside, WAVE_NODES) };
 }
 
+/**
+ * Slope of the water along the line of sight that is allowed for where no wind is given, one standard deviation: the
+ * swing of sheltered water. A judgement, without a source; a sixth of what Cox & Munk's slick has at no wind.
+ */
+const CALM_TILT_RAD = 0.01;
+
 /** Waves longer than a pixel tilt it as a whole: an angle that is not known, one standard deviation in radians. */
 function waveTiltSd(plan: AnglePlan, incidenceRad: number, windMS: number | null): number {
-  if (windMS === null) return 0;
+  if (windMS === null) return CALM_TILT_RAD;
   const { total } = slopeVariance(windMS, 'slick');
   const inside = slopeVarianceInsidePixel(total, pixelOnWaterM(plan, incidenceRad), windMS, 'slick');
   return Math.sqrt(Math.max(0, total - inside) / 2);

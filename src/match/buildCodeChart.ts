@@ -10,6 +10,8 @@ export interface PixelNoise {
   /** What the model and compression leave out, one standard deviation: of luma, and of each chroma plane. */
   readonly luma: number;
   readonly chroma: number;
+  /** How much brighter or darker a film may look than its chart, as a share: waves tilt a slanted surface. 0 if left out. */
+  readonly brightness?: number;
 }
 
 export interface ThicknessScale {
@@ -49,6 +51,7 @@ export function buildCodeChart(
   const spread = new Float64Array(3 * PARAMETERS);
   const slide = new Float64Array(PARAMETERS);
   const s = new Float64Array(6);
+  const brighter2 = (noise.brightness ?? 0) ** 2;
   const pairs = [
     [0, 0],
     [1, 1],
@@ -73,6 +76,8 @@ export function buildCodeChart(
       const [a, b] = pairs[k]!;
       let sum = noise.luma ** 2 + noise.chroma ** 2 * (CR[a]! * CR[b]! + CB[a]! * CB[b]!);
       if (a === b) sum += noise.codes[a]! ** 2;
+      sum +=
+        brighter2 * jacobian[a * PARAMETERS + AT.logGain + a]! * jacobian[b * PARAMETERS + AT.logGain + b]!;
       for (let p = 0; p < PARAMETERS; p++) sum += spread[a * PARAMETERS + p]! * jacobian[b * PARAMETERS + p]!;
       s[k] = sum;
     }
