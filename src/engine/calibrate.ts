@@ -238,7 +238,12 @@ export function calibrate(
     charts,
     angles,
     rules: rulesFor(setup, scene, reachesEnd ? Number.POSITIVE_INFINITY : resolvable.toNm),
-    common: commonError(model, outcome.fit, chart, scaleOf(scene, outcome.fit, OUTSIDE_FAMILY)),
+    common: commonError(
+      model,
+      outcome.fit,
+      chart,
+      scaleOf(scene, outcome.fit, Math.hypot(OUTSIDE_FAMILY, assumed?.relativeSd ?? 0)),
+    ),
     orderBoundariesNm: boundaries,
     resolvableNm: resolvable,
     calibrated,

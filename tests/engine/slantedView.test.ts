@@ -41,7 +41,11 @@ const REGION = { fromX: 24 } as const;
  * A calm sheen over level water, seen from 20 degrees to beyond 75 by the renderer's own camera, without noise and in 16
  * bit: thickness changes evenly from row to row, so any step in the reading is the reader's. Bare along the left edge.
  */
-function render(thicknessAt: (share: number) => number): { pixels: PhotoPixels; trueNm: Float32Array } {
+function render(thicknessAt: (share: number) => number): {
+  pixels: PhotoPixels;
+  trueNm: Float32Array;
+  setup: Setup;
+} {
   const stack = filmStackFor('diesel');
   const random = seededRandom('slanted');
   const drawn = drawConditions(
@@ -80,12 +84,12 @@ function render(thicknessAt: (share: number) => number): { pixels: PhotoPixels; 
     maxCode: 65535,
     encoding: SRGB,
   };
-  return { pixels, trueNm };
+  return { pixels, trueNm, setup: setupFor(drawn.toldDaylightK) };
 }
 
-const setup: Setup = {
+const setupFor = (daylightK: number): Setup => ({
   film: 'diesel',
-  light: { daylightK: 6500 },
+  light: { daylightK },
   references: { clean: [2, 560, 18, 60] },
   region: [
     [0, 0],
@@ -99,7 +103,7 @@ const setup: Setup = {
     rollDeg: 0,
     focal35mm: (700 * Math.hypot(36, 24)) / Math.hypot(WIDTH, HEIGHT),
   },
-};
+});
 
 /** Incidence of a row's middle by the renderer's geometry, degrees. */
 function rowDeg(y: number): number {
@@ -109,7 +113,7 @@ function rowDeg(y: number): number {
 }
 
 describe('a photo with a view', () => {
-  const { pixels, trueNm } = render((share) => 60 + 420 * share);
+  const { pixels, trueNm, setup } = render((share) => 60 + 420 * share);
   let result: ReturnType<typeof estimate>;
   beforeAll(() => {
     result = estimate(pixels, setup);
@@ -127,8 +131,10 @@ describe('a photo with a view', () => {
   it('reads a film whose thickness is known, from 20 to 70 degrees', () => {
     for (let y = 0; y < HEIGHT; y += 10) {
       const degrees = rowDeg(y);
+      // Thin film near 70 degrees is told by brightness alone, and the fit leaves out what lies beyond 66.
+      const allowedNm = degrees < 65 ? 4 : 6;
       if (degrees < 70)
-        expect(Math.abs(rowError(y)), `row ${y}, ${degrees.toFixed(1)} degrees`).toBeLessThan(4);
+        expect(Math.abs(rowError(y)), `row ${y}, ${degrees.toFixed(1)} degrees`).toBeLessThan(allowedNm);
     }
   });
 
@@ -199,8 +205,8 @@ describe('a photo with a view', () => {
 
 describe('an angle of view that is not given', () => {
   it('opens the intervals of a photo without one, and says so', () => {
+    const { pixels, setup } = render((share) => 60 + 400 * share);
     const { view: _, region: __, ...bare } = setup;
-    const { pixels } = render((share) => 60 + 400 * share);
     const marks = leftOutOf(pixels, bare);
     const sharedShare = (given: Setup) => {
       const { charts } = calibrate(pixels, given, marks, activityMap(pixels));
