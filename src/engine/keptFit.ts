@@ -1,6 +1,7 @@
 import { type ActivityMap, activityMap } from '../match/activity.ts';
 import type { CandidateField } from '../match/candidates.ts';
 import type { PixelReader } from '../match/pixelReader.ts';
+import { type TextureMap, textureMap } from '../match/texture.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import { type Calibration, calibrate, type OnStep } from './calibrate.ts';
 import { emptyField } from './estimate.ts';
@@ -14,6 +15,7 @@ export interface KeptFit {
   readonly setup: Setup;
   readonly leftOut: Uint8Array;
   readonly activity: ActivityMap;
+  readonly texture: TextureMap;
   readonly calibration: Calibration;
   readonly reader: PixelReader;
   /** Room for the candidates; to be filled anew for each reading, since pins change it. */
@@ -33,9 +35,10 @@ export function keepFit(
 ): KeptFit {
   const change = kept ? changeBetween(kept.setup, setup) : 'all';
   if (kept && (change === 'none' || change === 'orders')) return { ...kept, setup };
-  const leftOut = leftOutOf(pixels, setup);
+  const texture = kept?.texture ?? textureMap(pixels);
+  const leftOut = leftOutOf(pixels, setup, texture);
   const activity = kept?.activity ?? activityMap(pixels);
   const calibration = calibrate(pixels, setup, leftOut, activity, onStep);
   const reader = makeReader(pixels, activity, calibration);
-  return { setup, leftOut, activity, calibration, reader, field: kept?.field ?? emptyField(pixels) };
+  return { setup, leftOut, activity, texture, calibration, reader, field: kept?.field ?? emptyField(pixels) };
 }

@@ -125,7 +125,7 @@ serve<LeadJobs>(
       const change = changeBetween(kept.setup, setup);
       if (change === 'all') return null;
       const { reader, calibration, field } = kept;
-      const leftOut = change === 'mask' ? leftOutOf(pixels, setup) : kept.leftOut;
+      const leftOut = change === 'mask' ? leftOutOf(pixels, setup, kept.texture) : kept.leftOut;
       fillCandidates(pixels, reader, calibration.rules, leftOut, field, 0, field.height);
       return previewMap(field, setup, calibration, leftOut, pixels.width, pixels.height);
     },

@@ -1,8 +1,9 @@
+import { type TextureMap, textureMap } from '../match/texture.ts';
 import { pixelsOf } from '../photo/rectangle.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import { LEFT_OUT } from './leftOutMarks.ts';
 import { photoViewOf } from './photoView.ts';
-import type { Setup } from './setup.ts';
+import type { Setup, Stroke } from './setup.ts';
 import { fillCapsule, fillPolygon } from './spans.ts';
 import { leaveOutSlanted } from './viewSeen.ts';
 
@@ -30,12 +31,37 @@ export function paintedOutside(
   return out;
 }
 
+/** Leaves out what is rough without a film's colours, but for what a finger has painted in. */
+function leaveOutTexture(
+  out: Uint8Array,
+  width: number,
+  height: number,
+  strokes: readonly Stroke[],
+  { side, columns, rough }: TextureMap,
+): void {
+  // Of the strokes alone: the first to paint in begins with nothing, so only what is painted in is left.
+  const first = strokes.findIndex(({ paint }) => paint === 'in');
+  const asked = first < 0 ? null : paintedOutside(width, height, { strokes: strokes.slice(first) });
+  for (let block = 0; block < rough.length; block++) {
+    if (!rough[block]) continue;
+    const left = (block % columns) * side;
+    const top = Math.floor(block / columns) * side;
+    for (let y = top; y < top + side; y++) {
+      for (let i = y * width + left; i < y * width + left + side; i++) {
+        if (out[i] === LEFT_OUT.no && asked?.[i] !== LEFT_OUT.no) out[i] = LEFT_OUT.texture;
+      }
+    }
+  }
+}
+
 /**
- * Pixels that take no part: outside the region or painted out, seen too flat or above the horizon, a card, or clipped. Painting in brings no colour back:
- * clipped pixels and the card stay out.
+ * Pixels that take no part: outside the region or painted out, seen too flat or above the horizon, a card, clipped, or
+ * rough like no film. A finger can paint rough places in; clipped pixels and the card stay out, since painting brings
+ * no colour back.
+ * @param texture of the photo, judged once by `textureMap`
  * @returns one byte a pixel of `LEFT_OUT`
  */
-export function leftOutOf(pixels: PhotoPixels, setup: Setup): Uint8Array {
+export function leftOutOf(pixels: PhotoPixels, setup: Setup, texture = textureMap(pixels)): Uint8Array {
   const { width, height, codes, channels, maxCode } = pixels;
   const out = paintedOutside(width, height, setup);
   const view = photoViewOf(setup, width, height)?.view;
@@ -55,5 +81,6 @@ export function leftOutOf(pixels: PhotoPixels, setup: Setup): Uint8Array {
       }
     }
   }
+  leaveOutTexture(out, width, height, setup.strokes ?? [], texture);
   return out;
 }

@@ -1,6 +1,6 @@
 import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
 import { finishAngleRows, finishRows } from '../match/finishRows.ts';
-import { COVER_90, makeMapRows } from '../match/mapPixels.ts';
+import { COVER_90, makeMapRows, statusOfLeftOut } from '../match/mapPixels.ts';
 import { type OrderSolution, resolveOrders } from '../match/resolveOrders.ts';
 import { PIXEL_STATUS, type ThicknessMap } from '../match/types.ts';
 import { cosineReader } from '../view/waterFields.ts';
@@ -66,8 +66,8 @@ export function previewMap(
         readPlace(field, solution, place, rules.ambiguityMargin, rows);
         continue;
       }
-      rows.status[place] =
-        leftOut[y * width + x] === LEFT_OUT.outsideRegion ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour;
+      const mark = leftOut[y * width + x]!;
+      rows.status[place] = mark === LEFT_OUT.no ? PIXEL_STATUS.noFilmColour : statusOfLeftOut(mark);
       rows.thicknessNm[place] = Number.NaN;
       rows.lowNm[place] = Number.NaN;
       rows.highNm[place] = Number.NaN;

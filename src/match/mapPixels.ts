@@ -25,6 +25,11 @@ export const COVER_90 = 1.6448536;
 /** Marks of pixels that take no part: outside the region, clipped, painted out. One byte a pixel; 0 = takes part. */
 export type LeftOut = Uint8Array | null;
 
+/** What the map says of a mark (`engine/leftOutMarks.ts`): clipped or rough places are seen and no film, others outside. */
+export function statusOfLeftOut(mark: number): PixelStatus {
+  return mark === 2 || mark === 5 ? PIXEL_STATUS.noFilmColour : PIXEL_STATUS.outside;
+}
+
 /** Fills rows [fromRow, toRow) of a candidate field from the photo. */
 export function fillCandidates(
   pixels: Omit<PhotoPixels, 'encoding'>,
@@ -113,7 +118,7 @@ export function mapRows(
       const pixel = y * width + x;
       const out = (y - rows.fromRow) * width + x;
       if (leftOut?.[pixel]) {
-        noAnswer(rows, out, leftOut[pixel]! !== 2 ? PIXEL_STATUS.outside : PIXEL_STATUS.noFilmColour);
+        noAnswer(rows, out, statusOfLeftOut(leftOut[pixel]!));
         continue;
       }
       const offset = reader.lookUp(x, y);
