@@ -54,6 +54,22 @@ async function contentOf(id: string): Promise<ArchiveContent> {
   return unkept.get(id) ?? (await theStore()).open(id);
 }
 
+/** Keeps what came in a ZIP, but never over a record of the same name that says something else. */
+async function imported(content: ArchiveContent): Promise<KeptRecord> {
+  const { observation } = content;
+  const entries = await theStore().then(
+    (store) => store.list(),
+    () => [],
+  );
+  const here = entries.find(({ id }) => id === observation.id)?.observation;
+  if (here && JSON.stringify(here) !== JSON.stringify(observation)) {
+    throw new RecordError(
+      `“${here.title}” is on this device already and was changed there: delete it, or hand it over as a ZIP first, then import again.`,
+    );
+  }
+  return kept(content);
+}
+
 /** Only what the observation says, without reading its files. */
 async function observationOf(id: string): Promise<Observation> {
   const inMemory = unkept.get(id)?.observation;
@@ -209,7 +225,7 @@ serve<RecordJobs>(
       const blob = new Blob(parts as BlobPart[], { type });
       return { blob, name: `${fileStem(content.observation)}${ending}`, notices };
     },
-    import: async ({ file }) => kept(await readArchive(await bytesOf(file), webSha256)),
+    import: async ({ file }) => imported(await readArchive(await bytesOf(file), webSha256)),
   },
   buffersIn,
 );

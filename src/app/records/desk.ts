@@ -1,7 +1,7 @@
 import { signal } from '@preact/signals';
+import { finished } from '../../engine/newObservation.ts';
 import { createRecordDesk, type RecordDesk } from '../../engine/recordDesk.client.ts';
 import type { KeptRecord } from '../../engine/recordJobs.ts';
-import { finished } from '../../record/newObservation.ts';
 import type { Observation } from '../../record/observation.ts';
 import { openStore, type RecordStore } from '../../record/store.browser.ts';
 

@@ -1,4 +1,4 @@
-import { newObservation } from '../../record/newObservation.ts';
+import { newObservation } from '../../engine/newObservation.ts';
 import type { Observation, ViewpointKind } from '../../record/observation.ts';
 import { recordResult } from '../../record/recordResult.ts';
 import { type AppearanceShares, type VolumeByCode, volumeByCode } from '../../tally/appearanceCode.ts';

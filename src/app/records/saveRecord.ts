@@ -1,5 +1,5 @@
 import { signal } from '@preact/signals';
-import { newObservation } from '../../record/newObservation.ts';
+import { newObservation } from '../../engine/newObservation.ts';
 import type { Observation, ViewpointKind } from '../../record/observation.ts';
 import { recordResult } from '../../record/recordResult.ts';
 import { polariser, tally, tallyFault, viewpoint, workOutAmount } from '../amountState.ts';

@@ -1,6 +1,6 @@
 import { useState } from 'preact/hooks';
+import { deviceTime, observedTime } from '../../../engine/newObservation.ts';
 import { timeWords } from '../../../record/inWords.ts';
-import { deviceTime, observedTime } from '../../../record/newObservation.ts';
 import type { Observation } from '../../../record/observation.ts';
 import { edit } from '../desk.ts';
 import { Fact } from './Inputs.tsx';

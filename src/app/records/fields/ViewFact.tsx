@@ -28,7 +28,7 @@ export function ViewFact({ observation }: { readonly observation: Observation })
       if (patch.from) rememberObserver(next);
       return next;
     });
-  const isMeasured = setup?.view?.heightM !== undefined;
+  const isMeasured = setup?.view !== undefined && heightM !== undefined;
   return (
     <Fact
       name="Seen"

@@ -1,7 +1,5 @@
-import type { Setup } from '../engine/setup.ts';
 import type { PhotoMetadata } from '../photo/types.ts';
-import { sunPosition } from '../view/sun.ts';
-import { notKnown } from './notKnown.ts';
+import { notKnown } from '../record/notKnown.ts';
 import {
   type Conditions,
   OBSERVATION_KIND,
@@ -12,7 +10,11 @@ import {
   SCHEMA_VERSION,
   type Viewpoint,
   type ViewpointKind,
-} from './observation.ts';
+} from '../record/observation.ts';
+import { sunPosition } from '../view/sun.ts';
+import { photoViewOf, withPhotoFocal } from './photoView.ts';
+import type { Setup } from './setup.ts';
+import { withWholeView } from './setupView.ts';
 
 export interface NewObservation {
   readonly id: string;
@@ -34,7 +36,7 @@ export interface NewObservation {
 
 /** An observation with all that the photo, the set-up and the device know; its files come later. */
 export function newObservation(given: NewObservation): Observation {
-  const { id, nowUtc, madeWith, title, from, photo, setup } = given;
+  const { id, nowUtc, madeWith, title, photo, setup } = given;
   const metadata = photo?.metadata;
   return finished({
     kind: OBSERVATION_KIND,
@@ -47,7 +49,7 @@ export function newObservation(given: NewObservation): Observation {
     observer: given.observer ?? {},
     time: metadata ? timeOf(metadata) : deviceTime(nowUtc),
     position: positionOf(setup, metadata),
-    viewpoint: viewpointOf(from, setup, metadata),
+    viewpoint: viewpointOf(given),
     conditions: { ...(setup?.windMS !== undefined && { windMS: setup.windMS }), ...given.conditions },
     substance: null,
     slickByEye: null,
@@ -113,14 +115,15 @@ function positionOf(setup?: Setup, metadata?: PhotoMetadata): ObservedPosition |
   return { latitudeDeg, longitudeDeg, ...(errorM !== undefined && { errorM }), source: 'exif' };
 }
 
-/** Camera angles are the set-up's where it says them; a heading typed there is from true north. */
-function viewpointOf(from: ViewpointKind, setup?: Setup, metadata?: PhotoMetadata): Viewpoint {
+/** Height, angles and lens as the areas were worked out with; a heading typed in the set-up is from true north. */
+function viewpointOf({ from, setup, photo }: NewObservation): Viewpoint {
   const { view, headingDeg } = setup ?? {};
+  const metadata = photo?.metadata;
   const exifHeading = metadata?.headingDeg;
   const focal = view?.focal35mm ?? metadata?.focalLength35mm;
   return {
     from,
-    ...(view?.heightM !== undefined && { heightM: { value: view.heightM, source: 'typed' } }),
+    ...poseOf(setup, photo),
     ...(headingDeg !== undefined
       ? {
           headingDeg: { value: headingDeg, source: headingDeg === exifHeading ? 'exif' : 'typed' },
@@ -130,12 +133,49 @@ function viewpointOf(from: ViewpointKind, setup?: Setup, metadata?: PhotoMetadat
           headingDeg: { value: exifHeading, source: 'exif' },
           ...(metadata?.headingReference && { headingReference: metadata.headingReference }),
         }),
-    ...(view?.pitchDeg !== undefined && { pitchDeg: { value: view.pitchDeg, source: 'typed' } }),
-    ...(view?.rollDeg !== undefined && { rollDeg: { value: view.rollDeg, source: 'typed' } }),
     ...(focal !== undefined && {
       focalLength35mm: { value: focal, source: view?.focal35mm === undefined ? 'exif' : 'typed' },
     }),
   };
+}
+
+/** The camera's height and tilt: typed, or from horizon and known length; only the height while the view is half told. */
+function poseOf(
+  setup: Setup | undefined,
+  photo: NewObservation['photo'],
+): Pick<Viewpoint, 'heightM' | 'pitchDeg' | 'rollDeg'> {
+  const view = setup?.view;
+  if (!setup || !view) return {};
+  const seen = photo && seenThrough(setup, photo);
+  if (!seen) return view.heightM === undefined ? {} : { heightM: { value: view.heightM, source: 'typed' } };
+  const typedHeight = view.heightM !== undefined && !view.knownLength?.sets && view.pixelSizeM === undefined;
+  const tilt = view.horizon ? 'photo' : 'typed';
+  return {
+    heightM: typedHeight
+      ? { value: view.heightM, source: 'typed' }
+      : { value: rounded(seen.heightM), source: 'computed' },
+    pitchDeg: { value: rounded((seen.pitchRad * 180) / Math.PI), source: tilt },
+    rollDeg: { value: rounded((seen.rollRad * 180) / Math.PI), source: tilt },
+  };
+}
+
+function seenThrough(
+  setup: Setup,
+  { metadata, measuredWidth, measuredHeight }: NonNullable<NewObservation['photo']>,
+) {
+  const lens = { width: measuredWidth, height: measuredHeight, focalLength35mm: metadata.focalLength35mm };
+  try {
+    const whole = withPhotoFocal(withWholeView(setup, lens), metadata);
+    return photoViewOf(whole, measuredWidth, measuredHeight)?.view ?? null;
+  } catch {
+    // A view that contradicts itself is said where it is told; here it only gives no angles.
+    return null;
+  }
+}
+
+/** Four digits: more than any of this is known to. */
+function rounded(value: number): number {
+  return Number(value.toPrecision(4));
 }
 
 function sunOf({ time, position, viewpoint, leftOut }: Observation): Conditions['sun'] {
