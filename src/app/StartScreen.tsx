@@ -121,13 +121,17 @@ export function StartScreen() {
             Open photo
             <input class="hidden-input" type="file" accept="image/*,.heic,.heif,.avif" onChange={pick} />
           </label>
+          <a class="button" href="#/records/new">
+            <Icon name="plus" />
+            No photo
+          </a>
           <a class="button" href="#/records">
             <Icon name="records" />
             Records
           </a>
           <a class="button" href="#/chart">
             <Icon name="chart" />
-            Colour chart
+            Chart
           </a>
         </div>
         <label class="button primary">

@@ -83,7 +83,8 @@ async function observationOf(id: string): Promise<Observation> {
 async function fileOf(id: string, role: 'original' | 'mapPicture'): Promise<Uint8Array | null> {
   const listed = (await observationOf(id)).files.find((file) => file.role === role);
   if (!listed) return null;
-  return unkept.get(id)?.files.get(listed.path) ?? (await theStore()).file(listed.sha256);
+  // A copy: answers are handed over to the page, and what is not kept has only this one.
+  return unkept.get(id)?.files.get(listed.path)?.slice() ?? (await theStore()).file(listed.sha256);
 }
 
 /** The map that came in layers; null unless all are there. */

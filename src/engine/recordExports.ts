@@ -1,10 +1,12 @@
 /** The hand-over files of one observation, from what it holds. Pure: the worker and the tests call the same. */
+
+import type { ThicknessMap } from '../match/types.ts';
 import type { ArchiveContent } from '../record/archive.ts';
-import type { Observation } from '../record/observation.ts';
+import type { Observation, RecordFiles } from '../record/observation.ts';
 import { RecordError } from '../record/readObservation.ts';
 import { mapOf } from '../record/recordFiles.ts';
 import { ROW_PROFILE_HEADER, rowProfile } from '../record/rowProfile.ts';
-import { type GroundFacts, groundOf, groundTiff, slickGeoJson } from './groundFiles.ts';
+import { type Ground, type GroundFacts, groundOf, groundTiff, slickGeoJson } from './groundFiles.ts';
 
 const NO_MAP = 'This record holds no map: measure its photo, then save the record again.';
 const NO_VIEW =
@@ -23,8 +25,7 @@ export function fileStem({ title }: Pick<Observation, 'title'>): string {
 
 /** Thickness by row (RFC 4180). @throws RecordError without a map */
 export function rowsCsv({ observation, files }: ArchiveContent): string {
-  const map = mapOf(observation.files, files);
-  if (!map) throw new RecordError(NO_MAP);
+  const map = mapIn({ observation, files });
   const lineOf = rowProfile(map);
   const lines = [ROW_PROFILE_HEADER];
   for (let y = 0; y < map.height; y++) {
@@ -34,9 +35,31 @@ export function rowsCsv({ observation, files }: ArchiveContent): string {
   return `${lines.join('\r\n')}\r\n`;
 }
 
-function factsOf({ observation, files }: ArchiveContent): GroundFacts {
-  const map = mapOf(observation.files, files);
-  if (!map || !observation.setup) throw new RecordError(NO_MAP);
+/** The map, unpacked once for all exports of one content. @throws RecordError without a map */
+function mapIn(content: ArchiveContent): ThicknessMap {
+  const map = unpacked.get(content.files) ?? mapOf(content.observation.files, content.files);
+  if (!map) throw new RecordError(NO_MAP);
+  unpacked.set(content.files, map);
+  return map;
+}
+const unpacked = new WeakMap<RecordFiles, ThicknessMap>();
+
+/** The map on the water, worked out once for outlines and grid. @throws RecordError where the photo has no scale */
+function groundIn(content: ArchiveContent): { readonly facts: GroundFacts; readonly ground: Ground } {
+  const before = laidOut.get(content);
+  if (before) return before;
+  const facts = factsOf(content);
+  const ground = groundOf(facts);
+  if (!ground) throw new RecordError(NO_VIEW);
+  laidOut.set(content, { facts, ground });
+  return { facts, ground };
+}
+const laidOut = new WeakMap<ArchiveContent, { readonly facts: GroundFacts; readonly ground: Ground }>();
+
+function factsOf(content: ArchiveContent): GroundFacts {
+  const { observation } = content;
+  const map = mapIn(content);
+  if (!observation.setup) throw new RecordError(NO_MAP);
   const { position, viewpoint, photo, setup } = observation;
   const { headingDeg, headingReference } = viewpoint;
   return {
@@ -51,9 +74,7 @@ function factsOf({ observation, files }: ArchiveContent): GroundFacts {
 
 /** Outlines as GeoJSON. @throws RecordError where the photo has no scale */
 export function recordGeoJson(content: ArchiveContent): string {
-  const facts = factsOf(content);
-  const ground = groundOf(facts);
-  if (!ground) throw new RecordError(NO_VIEW);
+  const { facts, ground } = groundIn(content);
   const { id, time, madeWith } = content.observation;
   return slickGeoJson(facts, ground, {
     record: id,
@@ -65,9 +86,8 @@ export function recordGeoJson(content: ArchiveContent): string {
 
 /** Thickness on the ground as GeoTIFF. @throws RecordError where the photo has no scale */
 export function recordGeoTiff(content: ArchiveContent): Uint8Array {
-  const facts = factsOf(content);
-  const ground = groundOf(facts);
-  const tiff = ground && groundTiff(facts, ground);
+  const { facts, ground } = groundIn(content);
+  const tiff = groundTiff(facts, ground);
   if (!tiff) throw new RecordError(NO_VIEW);
   return tiff;
 }

@@ -13,8 +13,8 @@ export interface ZipOptions {
 }
 
 const PIECE = 2 << 20;
-/** Already packed: packing again takes time and saves nothing. */
-const PACKED = /\.(jpe?g|png|webp|avif|hei[cf]|zip)$/i;
+/** Already packed (our TIFFs are deflated inside): packing again takes time and saves nothing. */
+const PACKED = /\.(jpe?g|png|webp|avif|hei[cf]|tiff?|zip)$/i;
 const LEVEL = 3;
 
 /**
