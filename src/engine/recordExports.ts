@@ -2,7 +2,7 @@
 
 import type { ThicknessMap } from '../match/types.ts';
 import type { ArchiveContent } from '../record/archive.ts';
-import type { Observation, RecordFiles } from '../record/observation.ts';
+import type { Observation } from '../record/observation.ts';
 import { RecordError } from '../record/readObservation.ts';
 import { mapOf } from '../record/recordFiles.ts';
 import { ROW_PROFILE_HEADER, rowProfile } from '../record/rowProfile.ts';
@@ -37,12 +37,12 @@ export function rowsCsv({ observation, files }: ArchiveContent): string {
 
 /** The map, unpacked once for all exports of one content. @throws RecordError without a map */
 function mapIn(content: ArchiveContent): ThicknessMap {
-  const map = unpacked.get(content.files) ?? mapOf(content.observation.files, content.files);
+  const map = unpacked.get(content.observation.files) ?? mapOf(content.observation.files, content.files);
   if (!map) throw new RecordError(NO_MAP);
-  unpacked.set(content.files, map);
+  unpacked.set(content.observation.files, map);
   return map;
 }
-const unpacked = new WeakMap<RecordFiles, ThicknessMap>();
+const unpacked = new WeakMap<Observation['files'], ThicknessMap>();
 
 /** The map on the water, worked out once for outlines and grid. @throws RecordError where the photo has no scale */
 function groundIn(content: ArchiveContent): { readonly facts: GroundFacts; readonly ground: Ground } {
