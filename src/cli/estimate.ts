@@ -56,7 +56,7 @@ async function main(): Promise<number> {
   try {
     await mkdir(options.out, { recursive: true });
     // Files of an earlier run must not pass for this one's.
-    for (const name of GROUND_FILES) await rm(join(options.out, name), { force: true });
+    for (const name of [...GROUND_FILES, 'camera.json']) await rm(join(options.out, name), { force: true });
   } catch {
     throw new UsageError(`The folder ${options.out} cannot be made; name another with --out.`);
   }

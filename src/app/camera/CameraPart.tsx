@@ -75,7 +75,7 @@ export function CameraPart() {
           {keepFault.value}
         </p>
       ) : null}
-      <div class="row">
+      <div class="target-ways">
         <label class="button plain">
           <Icon name="photo" />
           Photograph a colour target
