@@ -18,13 +18,12 @@ export interface DemoSize {
   readonly height: number;
 }
 
-/** Incidence up to which the harbour demo is marked, and the one angle its set-up names for all of that. */
-const MARKED_TO_DEG = 46;
-const NAMED_DEG = 37;
+/** Incidence up to which the harbour demo is marked: beyond, bare water and thin film look too much alike. */
+const MARKED_TO_DEG = 60;
 
 /**
  * The harbour demo: sheen drifting along a quay wall. The draw was picked for its looks among two dozen. Its set-up marks
- * the near water only, because it names one angle: 9 degrees off that shift the thickness by some 4 %.
+ * the near water and says where the camera stood, its height to a decimetre, as somebody on that quay would know it.
  */
 export function demoHarbour(size: DemoSize = DEMO_SIZE): HarbourScene {
   const scene = harbourScene({
@@ -37,7 +36,13 @@ export function demoHarbour(size: DemoSize = DEMO_SIZE): HarbourScene {
     rippleWaves: 28,
   });
   const region = waterRegion(scene.view, scene.quayX, MARKED_TO_DEG);
-  return { ...scene, name: 'harbour', setup: { ...scene.setup, incidenceDeg: NAMED_DEG, region } };
+  const { incidenceDeg: _, ...setup } = scene.setup;
+  const heightM = Math.round(10 * scene.view.heightM) / 10;
+  return {
+    ...scene,
+    name: 'harbour',
+    setup: { ...setup, region, view: { heightM, horizon: scene.toldView.horizon } },
+  };
 }
 
 const FRAME: Box = [0.1, 0.14, 0.58, 0.74];

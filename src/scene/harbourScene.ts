@@ -67,14 +67,16 @@ export function harbourScene(request: HarbourRequest): HarbourScene {
     subsamples: request.subsamples,
   });
   const off = random.fork('told');
+  const onHorizon = (share: number): Point => [
+    Math.round(share * width),
+    Math.round(horizonAt(view, share * width)),
+  ];
   const toldView = {
     heightM: view.heightM * (1 + 0.05 * off.normal()),
     pitchDeg: (view.pitchRad * 180) / Math.PI + 0.5 * off.normal(),
     rollDeg: (view.rollRad * 180) / Math.PI,
     focal35mm: place.focal35mm,
-    horizon: [0.15, 0.85].map(
-      (share): Point => [Math.round(share * width), Math.round(horizonAt(view, share * width))],
-    ),
+    horizon: [onHorizon(0.15), onHorizon(0.85)] as const,
   };
   const setup: Setup = {
     film: 'diesel',
@@ -113,7 +115,7 @@ export interface ToldView {
   readonly rollDeg: number;
   readonly focal35mm: number;
   /** Two places on the horizon, to the nearest pixel, as two taps give them. */
-  readonly horizon: readonly Point[];
+  readonly horizon: readonly [Point, Point];
 }
 
 export type HarbourScene = Scene &
