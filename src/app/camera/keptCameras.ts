@@ -6,7 +6,7 @@ import { change, image, setup } from '../state.ts';
 const CAMERAS_KEY = 'tintfathom.cameras';
 
 export const keptCameras = signal<readonly KeptCamera[]>([]);
-/** The camera last deleted, until another is or it is brought back. */
+/** The camera last deleted or replaced, until another is or it is brought back. */
 export const forgotten = signal<KeptCamera | null>(null);
 /** Why keeping failed, in a sentence. */
 export const keepFault = signal<string | null>(null);
@@ -38,10 +38,17 @@ function store(next: readonly KeptCamera[]): boolean {
   return true;
 }
 
-/** Keeps a camera; one of the same name is replaced. */
+/** Keeps a camera; one of the same name is replaced, and `bringBack` puts it in its place again. */
 export async function keepCamera(camera: KeptCamera): Promise<boolean> {
   await loadCameras();
-  return store([camera, ...keptCameras.value.filter(({ name }) => name !== camera.name)]);
+  return put(camera);
+}
+
+function put(camera: KeptCamera): boolean {
+  const before = keptCameras.value.find(({ name }) => name === camera.name) ?? null;
+  if (!store([camera, ...keptCameras.value.filter((other) => other !== before)])) return false;
+  forgotten.value = before;
+  return true;
 }
 
 /** Deletes a camera; `bringBack` undoes it. A photo that was to be read with it goes back to a typical phone. */
@@ -52,8 +59,7 @@ export function forgetCamera(camera: KeptCamera): void {
 }
 
 export function bringBack(): void {
-  const camera = forgotten.value;
-  if (camera && store([camera, ...keptCameras.value])) forgotten.value = null;
+  if (forgotten.value) put(forgotten.value);
 }
 
 /** The kept camera that the open photo is read with. */
