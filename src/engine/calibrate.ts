@@ -16,6 +16,7 @@ import { type FilmSample, SAMPLE_VARIANCE_SHARE, sampleFilm } from '../match/sam
 import type { PhotoPixels } from '../photo/types.ts';
 import { planAngles } from './anglePlan.ts';
 import { assumedIncidence } from './assumedIncidence.ts';
+import { bareLimits } from './bareLimits.ts';
 import type { FitReport, Notice } from './contract.ts';
 import { describeFit } from './describeFit.ts';
 import {
@@ -215,7 +216,8 @@ export function calibrate(
     const covariance = outcome.fit.covariance.map((v) => v * COVARIANCE_FACTOR);
     outcome.fit = { ...outcome.fit, covariance };
   }
-  const angles = slantedCharts(outcome.fit, 1);
+  const seen = slantedCharts(outcome.fit, 1);
+  const angles = seen && canBeBare(setup, scene.stack) ? withBareLimits(seen, pixels, leftOut) : seen;
   const middle = angles ? nearestOf(angles.charts.incidenceRad, scene.incidenceRad) : 0;
   const model =
     slanted && angles
@@ -260,6 +262,10 @@ export function calibrate(
     camera,
     notices,
   };
+}
+
+function withBareLimits(seen: SeenAngles, pixels: PhotoPixels, leftOut: Uint8Array | null): SeenAngles {
+  return { ...seen, charts: { ...seen.charts, bareNm: bareLimits(pixels, leftOut, seen, BARE_NM) } };
 }
 
 function rulesFor(setup: Setup, scene: FilmScene, resolvableNm: number): ReadingRules {

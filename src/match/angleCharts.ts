@@ -11,6 +11,8 @@ export interface AngleCharts {
   readonly charts: readonly (readonly CodeChart[])[];
   /** Past this thickness colour tells nothing more, for each angle. */
   readonly resolvableNm: Float64Array;
+  /** Under this thickness film cannot be told from bare surface, for each angle; absent where one limit serves all. */
+  readonly bareNm?: Float64Array;
   /** Of the film and of what light comes through to it: a colour fixes thickness times sqrt(n^2 - (n0 sin i)^2). */
   readonly filmIndex: number;
   readonly ambientIndex: number;

@@ -33,7 +33,8 @@ export function finishAngleRows(
       cursor.moveTo(x, y);
       const chart = angles.charts[cursor.near]![0]!;
       const resolvableNm = angles.resolvableNm[cursor.near]! * cursor.scale;
-      finishPixel(rows, i, chart, cursor.scale, rules.bareNm, resolvableNm, ownShare ? ownShare[i]! : 1);
+      const bareNm = (angles.bareNm?.[cursor.near] ?? rules.bareNm) * (angles.bareNm ? cursor.scale : 1);
+      finishPixel(rows, i, chart, cursor.scale, bareNm, resolvableNm, ownShare ? ownShare[i]! : 1);
     }
   }
 }
@@ -66,6 +67,7 @@ function finishPixel(
     rows.status[i] = PIXEL_STATUS.bare;
     rows.thicknessNm[i] = 0;
     rows.lowNm[i] = 0;
+    rows.highNm[i] = Math.max(high, bareNm);
     rows.order[i] = 0;
   } else if (thickness > resolvableNm) {
     rows.status[i] = PIXEL_STATUS.atLeast;
