@@ -16,8 +16,12 @@ const NEAR_CHROMA = 5;
 const NEAR_DARKER = 0.6;
 /** Median of the size of a normal deviate. */
 const MEDIAN_SIZE = 0.6744897501960817;
-/** One-sided 95 %: Currie 1968 (Anal. Chem. 40:586), the critical level of detection. */
-const CRITICAL = 1.6448536269514722;
+/**
+ * Standard deviations that a brightness must stand out by to be film: a critical level as of Currie 1968 (Anal. Chem.
+ * 40:586). One is few for a single decision, but here it is the one at which about as much thin film passes for water as
+ * water for film, so that the oiled area comes out right (set on seeded scenes).
+ */
+const CRITICAL = 1;
 
 /**
  * Thickness under which film cannot be told from bare water, for each angle of a slanted photo, nm. Seen flat, a wave's

@@ -99,6 +99,7 @@ const byThickness = v.strictObject({
     thicknessShare: finite,
     thicknessShiftNm: finite,
     correlatedPixels: finite,
+    unreadMost: v.optional(finite, 0),
   }),
 });
 

@@ -29,6 +29,9 @@ export interface CellSums {
   /** What the sum would gain, nm m2, were every ambiguous pixel of the cell its alternative, and how probable that is. */
   readonly switchNmM2: Float64Array;
   readonly switchShare: Float64Array;
+  /** Bare water, m2, and what gave no answer though it lies in the region. */
+  readonly bareM2: Float64Array;
+  readonly unreadM2: Float64Array;
 }
 
 /**
@@ -52,6 +55,8 @@ export function cellSums(film: FilmRegion, cells: AreaCells, alternatives?: Alte
     ambiguousM2: zeros(),
     switchNmM2: zeros(),
     switchShare: zeros(),
+    bareM2: zeros(),
+    unreadM2: zeros(),
   };
   for (let y = 0; y < height; y++) {
     const firstCell = cells.rowOf[y]! * cells.columns;
@@ -79,6 +84,10 @@ export function cellSums(film: FilmRegion, cells: AreaCells, alternatives?: Alte
       } else if (code === PIXEL_STATUS.atLeast) {
         sums.atLeastM2[cell]! += area;
         sums.atLeastNmM2[cell]! += area * lowNm[i]!;
+      } else if (code === PIXEL_STATUS.bare) {
+        sums.bareM2[cell]! += area;
+      } else if (code === PIXEL_STATUS.noFilmColour) {
+        sums.unreadM2[cell]! += area;
       }
     }
   }

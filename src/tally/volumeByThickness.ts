@@ -14,6 +14,11 @@ export interface VolumeInputs {
   readonly thicknessShiftNm: number;
   /** Pixels that share one error of colour: JPEG works in blocks of 8 x 8, so 64 where nothing better is known. */
   readonly correlatedPixels: number;
+  /**
+   * What gave no answer (glint, mirrored walls, posts) may be water as oily as the read water around it, or none: each
+   * trial takes a share of it drawn evenly from 0 to this, 0 to 1. The best value counts none of it.
+   */
+  readonly unreadMost: number;
 }
 
 export const DEFAULT_VOLUME_INPUTS: VolumeInputs = {
@@ -22,6 +27,7 @@ export const DEFAULT_VOLUME_INPUTS: VolumeInputs = {
   thicknessShare: 0.02,
   thicknessShiftNm: 2,
   correlatedPixels: 64,
+  unreadMost: 1,
 };
 
 /** Never one bare number: ends of the coverage interval about the nominal value. */
@@ -49,7 +55,8 @@ export interface VolumeByThickness {
 /**
  * Oil volume as the sum of thickness times area over pixels with an answer, with a Monte Carlo interval (JCGM 101:2008).
  * What all pixels share (view, index, chart, shift) is drawn once a trial; what each pixel has to itself shrinks with
- * their number. Pixels past the resolvable range enter with their lower bound.
+ * their number. Pixels past the resolvable range enter with their lower bound; water without an answer widens the interval
+ * upwards only.
  * @param draw errors of view and index (`commonDraw`, `indexDraw`)
  * @param alternatives second readings of ambiguous pixels; without them their likeliest reading is taken as right
  * @throws RangeError where arrays or cells do not fit the map
@@ -78,8 +85,10 @@ export function volumeFromSums(
   const areas = new Float64Array(inputs.trials);
   const areaFactor = new Float64Array(count);
   const thicknessFactor = new Float64Array(count);
+  const { perM2, nmPerM2 } = unreadAsAround(sums);
   for (let trial = 0; trial < inputs.trials; trial++) {
     draw(random, areaFactor, thicknessFactor);
+    const unread = inputs.unreadMost > 0 ? inputs.unreadMost * random.next() : 0;
     const factor = 1 + inputs.thicknessShare * random.normal();
     const shift = inputs.thicknessShiftNm * random.normal();
     let nmM2 = 0;
@@ -88,7 +97,8 @@ export function volumeFromSums(
     for (let cell = 0; cell < count; cell++) {
       const film = sums.filmM2[cell]!;
       const open = sums.atLeastM2[cell]!;
-      if (film + open === 0) {
+      const filled = unread * sums.unreadM2[cell]!;
+      if (film + open + filled === 0) {
         continue;
       }
       const area = areaFactor[cell]!;
@@ -97,8 +107,10 @@ export function volumeFromSums(
       if (sums.switchShare[cell]! > 0 && random.next() < sums.switchShare[cell]!) {
         sum += sums.switchNmM2[cell]!;
       }
-      nmM2 += area * (thickness * (sum + sums.atLeastNmM2[cell]!) + shift * (film + open));
-      m2 += area * (film + open);
+      sum += sums.atLeastNmM2[cell]! + filled * nmPerM2[cell]!;
+      const oiled = film + open + filled * perM2[cell]!;
+      nmM2 += area * (thickness * sum + shift * oiled);
+      m2 += area * oiled;
       variance += area * area * thickness * thickness * sums.varianceNm2M4[cell]!;
     }
     const noise = Math.sqrt(variance * inputs.correlatedPixels) * random.normal();
@@ -120,6 +132,24 @@ export function volumeFromSums(
     meanThicknessNm: (1e9 * bestM3) / oiledM2,
     inputs,
   };
+}
+
+/** Oiled share and nm of oil over a square metre of read water in each cell; those of all cells where one has none. */
+function unreadAsAround(sums: CellSums): { readonly perM2: Float64Array; readonly nmPerM2: Float64Array } {
+  const { count } = sums.cells;
+  const perM2 = new Float64Array(count);
+  const nmPerM2 = new Float64Array(count);
+  const oiled = total(sums.filmM2) + total(sums.atLeastM2);
+  const read = oiled + total(sums.bareM2);
+  const nmM2 = total(sums.filmNmM2) + total(sums.atLeastNmM2);
+  for (let cell = 0; cell < count; cell++) {
+    const here = sums.filmM2[cell]! + sums.atLeastM2[cell]!;
+    const readHere = here + sums.bareM2[cell]!;
+    const nmM2Here = sums.filmNmM2[cell]! + sums.atLeastNmM2[cell]!;
+    perM2[cell] = readHere > 0 ? here / readHere : read > 0 ? oiled / read : 0;
+    nmPerM2[cell] = readHere > 0 ? nmM2Here / readHere : read > 0 ? nmM2 / read : 0;
+  }
+  return { perM2, nmPerM2 };
 }
 
 function spread(values: Float64Array, best: number, coverage: number): Spread {

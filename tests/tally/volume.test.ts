@@ -11,7 +11,7 @@ import { focalPxFrom35mm, pinholeCamera } from '../../src/view/pinholeCamera.ts'
 import { posesFromHorizon, posesFromTilt } from '../../src/view/poseDraws.ts';
 import { groundAreaAtM2, groundAreaField, incidenceField } from '../../src/view/waterFields.ts';
 import { incidenceAtRad, waterView } from '../../src/view/waterView.ts';
-import { ambiguous, atLeast, bare, evenArea, film, madeMap } from './fields.ts';
+import { ambiguous, atLeast, bare, evenArea, film, glint, madeMap } from './fields.ts';
 
 const exact = { thicknessShare: 0, thicknessShiftNm: 0, correlatedPixels: 0 };
 const sure = indexDraw({ index: 1.47, indexSd: 0 });
@@ -68,6 +68,25 @@ describe('volume by thickness', () => {
     // One standard deviation of 10 nm in 300 over 1200 / 64 patches.
     expect(width(64) / (2 * 1.645 * (10 / 300) * Math.sqrt(64 / 1200))).toBeCloseTo(1, 1);
     expect(width(64) / width(1)).toBeCloseTo(8, 0);
+  });
+
+  it('water without an answer widens the interval upwards, as oily as what is read around it at the most', () => {
+    const map = madeMap(40, 30, (x) => (x < 20 ? film(200) : x < 30 ? bare : glint));
+    const one = areaCells(40, 30, 1, 1);
+    const result = volumeByThickness({ map, areaM2: evenArea(1200, 1) }, one, sure, seededRandom(9), {
+      ...exact,
+      trials: 20_000,
+    });
+    // 600 m2 of film and 300 m2 without an answer, of which two thirds would be oiled: 600 to 800, evenly.
+    expect(result.oiledM2.best).toBe(600);
+    expect(result.oiledM2.least).toBeCloseTo(610, -0.5);
+    expect(result.oiledM2.most).toBeCloseTo(790, -0.5);
+    expect(result.volumeM3.most / result.volumeM3.best).toBeCloseTo(790 / 600, 2);
+    const none = volumeByThickness({ map, areaM2: evenArea(1200, 1) }, one, sure, seededRandom(9), {
+      ...exact,
+      unreadMost: 0,
+    });
+    expect(none.oiledM2.most).toBe(600);
   });
 
   it('film past the resolvable range enters with its lower bound and makes the total "at least"', () => {
