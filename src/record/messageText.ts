@@ -43,8 +43,9 @@ function positionLine({ position, leftOut, placeName }: Observation): string {
 function amountLines({ result, slickByEye }: Observation): string[] {
   const lines: string[] = [];
   if (slickByEye?.lengthM !== undefined && slickByEye.widthM !== undefined) {
-    const { lengthM, widthM } = slickByEye;
-    lines.push(`By eye ${lengthM} metres long, ${widthM} ${plural('metre', widthM)} wide.`);
+    const { lengthM, widthM, coverage } = slickByEye;
+    const oiled = coverage === undefined ? '' : `, ${percentWords(coverage)} of that oiled`;
+    lines.push(`By eye ${lengthM} metres long, ${widthM} ${plural('metre', widthM)} wide${oiled}.`);
   }
   if (result?.byThickness) {
     const { least, best, most, unit } = areaFigures(result.byThickness.oiledM2);

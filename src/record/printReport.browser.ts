@@ -7,6 +7,7 @@ const ALONE_CSS = `
 @media screen { .${HOLDER} { display: none; } }
 @media print {
   body > :not(.${HOLDER}) { display: none !important; }
+  :root { color-scheme: light !important; }
   html, body { height: auto; overflow: visible; background: #fff; }
 }`;
 

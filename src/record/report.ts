@@ -1,3 +1,4 @@
+import { APPEARANCE_CODE_SCOPE } from '../tally/appearanceCode.ts';
 import { SAFETY_CAUTIONS, USE_CAUTIONS } from '../tally/cautions.ts';
 import { type HtmlPart, html, SafeHtml } from './html.ts';
 import { conditionWords, positionWords, sourceWords, timeWords, viewpointWords } from './inWords.ts';
@@ -44,12 +45,18 @@ ${result && result.reasons.length > 0 && html`<section><h2>Why the two methods d
 </div>
 ${observation.remarks !== '' && html`<section><h2>Remarks</h2><p class="report-remarks">${observation.remarks}</p></section>`}
 <section class="report-cautions"><h2>Cautions</h2>${list([
-    ...(result?.summary?.notices ?? []).map(({ text }) => text),
-    ...(result?.notices ?? []).map(({ text }) => text),
+    ...readingNotices(observation),
     ...(isBench ? [BENCH_CAUTION] : [...USE_CAUTIONS, ...SAFETY_CAUTIONS].map(({ text }) => text)),
   ])}</section>
 ${footer(observation)}
 </article>`;
+}
+
+/** What the reading and the tally said, each once; the scope of the code stands below its table already. */
+function readingNotices({ result, viewpoint }: Observation): string[] {
+  const texts = [...(result?.summary?.notices ?? []), ...(result?.notices ?? [])].map(({ text }) => text);
+  const saidBelowTable = result?.byCode && viewpoint.from !== 'aircraft';
+  return [...new Set(texts)].filter((text) => !saidBelowTable || text !== APPEARANCE_CODE_SCOPE);
 }
 
 /** The same as a whole document with its style, for a file that opens anywhere. */

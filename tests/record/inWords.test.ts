@@ -80,7 +80,7 @@ test('the message of a full record', () => {
 test('the message of a notebook says what is missing, and nothing that is not there', () => {
   const message = messageText(notebookObservation());
   expect(message).toContain('Time not known.\nPosition not known.');
-  expect(message).toContain('By eye 2000 metres long, 300 metres wide.');
+  expect(message).toContain('By eye 2000 metres long, 300 metres wide, 40 percent of that oiled.');
   expect(message).toMatch(/Not known: .*; and \d+ more\./);
   expect(message).not.toMatch(/undefined|null|NaN/);
   // 240,000 m² of 90 % sheen and 10 % rainbow: 0.9 · 0.04 + 0.1 · 0.3 = 0.066 µm; 0.9 · 0.3 + 0.1 · 5 = 0.77 µm.

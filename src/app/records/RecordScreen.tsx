@@ -127,8 +127,29 @@ function Body({ observation }: { readonly observation: Observation }) {
           <p class="quiet">Nothing that is usually recorded is missing.</p>
         )}
       </section>
+      <Cautions observation={observation} />
       <Actions observation={observation} />
     </>
+  );
+}
+
+/** What the reading and the tally said. */
+function Cautions({ observation: { result } }: { readonly observation: Observation }) {
+  const texts = [...(result?.summary?.notices ?? []), ...(result?.notices ?? [])].map(({ text }) => text);
+  const each = [...new Set(texts)];
+  if (each.length === 0) return null;
+  return (
+    <details class="fact">
+      <summary>
+        <span class="fact-name">Cautions</span>
+        <span class="fact-value">{each.length} to read before use</span>
+      </summary>
+      <ul class="unknown small">
+        {each.map((text) => (
+          <li key={text}>{text}</li>
+        ))}
+      </ul>
+    </details>
   );
 }
 
