@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import type { Page } from 'playwright-core';
+import type { Setup } from '../../src/engine/setup.ts';
 
 const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
@@ -70,4 +71,32 @@ export function misplaced(page: Page): Promise<string[]> {
     }
     return found;
   });
+}
+
+/** The button of a step in the bar below. */
+export const stepButton = (page: Page, name: string) =>
+  page.getByRole('navigation', { name: 'Steps' }).getByRole('button', { name, exact: true });
+
+/** The set-up that the app keeps for a reload. */
+export function keptSetup(page: Page): Promise<Setup> {
+  return page.evaluate(() => {
+    const text = localStorage.getItem('tintfathom.setup') ?? '{"setup":{}}';
+    return (JSON.parse(text) as { setup: Setup }).setup;
+  });
+}
+
+/** Place on the screen of a pixel of a photo that is shown whole, centred on the stage. */
+export async function onScreen(
+  page: Page,
+  photo: { readonly width: number; readonly height: number },
+  x: number,
+  y: number,
+): Promise<readonly [number, number]> {
+  const box = await page.locator('.stage > canvas').boundingBox();
+  if (!box) throw new Error('There is no stage.');
+  const scale = Math.min(box.width / photo.width, box.height / photo.height);
+  return [
+    box.x + (box.width - photo.width * scale) / 2 + x * scale,
+    box.y + (box.height - photo.height * scale) / 2 + y * scale,
+  ];
 }

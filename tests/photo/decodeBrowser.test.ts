@@ -13,7 +13,7 @@ const files = scratch();
 let opened: PhotoPage;
 beforeAll(async () => {
   opened = await openPhotoPage();
-});
+}, 60_000);
 afterAll(async () => {
   await opened?.close();
   files.remove();

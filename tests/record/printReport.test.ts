@@ -2,8 +2,8 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { encodeRgbPng } from '../../src/record/png.ts';
 import { CONTENT_SECURITY_POLICY } from '../../vite.config.ts';
+import { openServedPage, type ServedPage } from '../browser/servedPage.ts';
 import { quayObservation } from './sample.ts';
-import { openServedPage, type ServedPage } from './servedPage.ts';
 import { scratch, tool } from './tools.ts';
 
 const files = scratch();

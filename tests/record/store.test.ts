@@ -3,8 +3,8 @@ import { afterAll, afterEach, beforeAll, expect, test } from 'vitest';
 import type { Observation } from '../../src/record/observation.ts';
 import { writeObservation } from '../../src/record/readObservation.ts';
 import { isFound } from '../../src/record/searchText.ts';
+import { openServedPage, type ServedPage } from '../browser/servedPage.ts';
 import { nodeSha256, notebookObservation, quayObservation, sampleFiles } from './sample.ts';
-import { openServedPage, type ServedPage } from './servedPage.ts';
 import type { Crossing } from './storeInPage.ts';
 
 let served: ServedPage;

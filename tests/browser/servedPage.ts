@@ -2,7 +2,7 @@
 import { dirname, join } from 'node:path';
 import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import { createServer } from 'vite';
-import { launchChromium } from '../browser/chromium.ts';
+import { launchChromium } from './chromium.ts';
 
 export interface ServedPage {
   readonly page: Page;
@@ -18,6 +18,8 @@ export interface ServedPageOptions {
   readonly ready: string;
   /** Packages that the module uses; named, or Vite finds them in mid-test and reloads the page. */
   readonly packages: readonly string[];
+  /** What is in the page before the module runs. */
+  readonly body?: string;
   readonly context?: BrowserContextOptions;
   /** Sent with the page as its Content-Security-Policy. */
   readonly policy?: string;
@@ -27,6 +29,7 @@ export async function openServedPage({
   module,
   ready,
   packages,
+  body = '<div id="app"></div>',
   context,
   policy,
 }: ServedPageOptions): Promise<ServedPage> {
@@ -35,6 +38,7 @@ export async function openServedPage({
     configFile: false,
     root: project,
     logLevel: 'error',
+    define: { __APP_VERSION__: JSON.stringify('0.0.0-test') },
     cacheDir: join(project, `node_modules/.vite-${ready}`),
     server: { port: 0, host: '127.0.0.1', watch: null, hmr: false },
     optimizeDeps: { include: [...packages], noDiscovery: true },
@@ -45,7 +49,7 @@ export async function openServedPage({
     response.setHeader('content-type', 'text/html');
     if (policy) response.setHeader('content-security-policy', policy);
     response.end(
-      `<!doctype html><html lang="en"><meta name="viewport" content="width=device-width"><title>Test</title><div id="app"></div><script type="module" src="${module}"></script></html>`,
+      `<!doctype html><html lang="en"><meta name="viewport" content="width=device-width"><title>Test</title>${body}<script type="module" src="${module}"></script></html>`,
     );
   });
   await server.listen();
