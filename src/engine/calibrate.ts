@@ -173,6 +173,7 @@ export function calibrate(
   const slantedCharts = (fit: CameraFit, every: number): SeenAngles | null =>
     slanted && {
       view: slanted.plan.view,
+      referenceRad: scene.incidenceRad,
       charts: angleCharts(slanted, every, maxNm, (basis, at, sd, own) =>
         drawCharts(modelOf(basis), fit, at, noise, own, sd),
       ),

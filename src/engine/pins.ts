@@ -1,6 +1,7 @@
 import { orderOf } from '../chart/orders.ts';
 import { type CandidateField, MOST_CANDIDATES } from '../match/candidates.ts';
 import type { Calibration } from './calibrate.ts';
+import { seenAt } from './seenAngles.ts';
 import type { Pin } from './setup.ts';
 
 /** A pin speaks for the places within this share of the longer side. */
@@ -13,6 +14,9 @@ const CONTRADICTION = 1000;
  * no reading comes near it.
  */
 export function heedPins(field: CandidateField, pins: readonly Pin[], calibration: Calibration): void {
+  const { spacing } = field;
+  const half = spacing >> 1;
+  const seen = seenAt(calibration);
   const reach = Math.max(1, Math.round(PIN_REACH * Math.max(field.width, field.height)));
   for (const pin of pins) {
     const column = Math.round(pin.at[0] / field.spacing);
@@ -20,13 +24,14 @@ export function heedPins(field: CandidateField, pins: readonly Pin[], calibratio
     for (let y = Math.max(0, row - reach); y <= Math.min(field.height - 1, row + reach); y++) {
       for (let x = Math.max(0, column - reach); x <= Math.min(field.width - 1, column + reach); x++) {
         if ((x - column) ** 2 + (y - row) ** 2 > reach * reach) continue;
-        heedAt(field, y * field.width + x, pin, calibration);
+        const { orderBoundariesNm } = seen(x * spacing + half, y * spacing + half);
+        heedAt(field, y * field.width + x, pin, orderBoundariesNm);
       }
     }
   }
 }
 
-function heedAt(field: CandidateField, place: number, pin: Pin, calibration: Calibration): void {
+function heedAt(field: CandidateField, place: number, pin: Pin, orderBoundariesNm: readonly number[]): void {
   const at = place * MOST_CANDIDATES;
   if (pin.is === 'bare') {
     field.count[place] = 1;
@@ -36,7 +41,7 @@ function heedAt(field: CandidateField, place: number, pin: Pin, calibration: Cal
     return;
   }
   for (let k = 0; k < field.count[place]!; k++) {
-    const order = orderOf(field.thicknessNm[at + k]!, calibration.orderBoundariesNm);
+    const order = orderOf(field.thicknessNm[at + k]!, orderBoundariesNm);
     if (order !== pin.order) field.cost[at + k]! += CONTRADICTION;
   }
 }

@@ -8,9 +8,10 @@ import type { Reading } from '../match/types.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import type { Calibration } from './calibrate.ts';
 import type { Probe } from './contract.ts';
+import { seenAt } from './seenAngles.ts';
 
 /** Step of the posterior curve that a probe hands over, nm. */
-const CURVE_STEP = 2;
+const CURVE_STEP_NM = 2;
 
 /**
  * All that is known of one pixel, but for what the map says there (the caller has the map).
@@ -34,14 +35,20 @@ export function probePixel(
     number,
   ];
   const block = ((y / BLOCK_SIDE) | 0) * activity.columns + ((x / BLOCK_SIDE) | 0);
-  const chart = calibration.charts[activity.classOf[block]!]!;
-  const count = Math.floor((chart.count - 1) / CURVE_STEP) + 1;
-  const thicknessNm = Float32Array.from({ length: count }, (_, k) => chart.thicknessNm[k * CURVE_STEP]!);
-  const costs = Float64Array.from({ length: count }, (_, k) => costAt(chart, k * CURVE_STEP, seen));
+  const { charts, scale: perChart, orderBoundariesNm } = seenAt(calibration)(x, y);
+  const chart = charts[activity.classOf[block]!]!;
+  const stride = Math.max(1, Math.round(CURVE_STEP_NM / chart.thicknessNm[1]!));
+  const count = Math.floor((chart.count - 1) / stride) + 1;
+  const thicknessNm = Float32Array.from(
+    { length: count },
+    (_, k) => perChart * chart.thicknessNm[k * stride]!,
+  );
+  const costs = Float64Array.from({ length: count }, (_, k) => costAt(chart, k * stride, seen));
+  const stepNm = perChart * stride * chart.thicknessNm[1]!;
   const around = neighbourCosts(settled, x, y, thicknessNm);
-  const readings = readingsAt(reader, x, y, calibration);
+  const readings = readingsAt(reader, x, y, calibration.rules.outlierDistance, orderBoundariesNm);
   const best = readings[0];
-  const label = best ? Math.round(best.thicknessNm / chart.thicknessNm[1]!) : -1;
+  const label = best ? Math.round(best.thicknessNm / (perChart * chart.thicknessNm[1]!)) : -1;
   return {
     x,
     y,
@@ -49,9 +56,12 @@ export function probePixel(
     matched:
       label >= 0 ? [chart.codes[3 * label]!, chart.codes[3 * label + 1]!, chart.codes[3 * label + 2]!] : null,
     thicknessNm,
-    posteriorAlone: density(costs),
-    posteriorWithNeighbours: density(costs.map((c, k) => c + around[k]!)),
-    orderBoundariesNm: calibration.orderBoundariesNm,
+    posteriorAlone: density(costs, stepNm),
+    posteriorWithNeighbours: density(
+      costs.map((c, k) => c + around[k]!),
+      stepNm,
+    ),
+    orderBoundariesNm,
     readings,
   };
 }
@@ -72,13 +82,13 @@ function costAt(chart: Calibration['charts'][number], j: number, seen: readonly 
 }
 
 /** Normalised density from costs (minus twice the log). */
-function density(costs: Float64Array): Float32Array {
+function density(costs: Float64Array, stepNm: number): Float32Array {
   let least = Number.POSITIVE_INFINITY;
   for (const c of costs) if (c < least) least = c;
   const out = new Float32Array(costs.length);
   let sum = 0;
   for (let k = 0; k < out.length; k++) sum += out[k] = Math.exp((least - costs[k]!) / 2);
-  for (let k = 0; k < out.length; k++) out[k]! /= sum * CURVE_STEP;
+  for (let k = 0; k < out.length; k++) out[k]! /= sum * stepNm;
   return out;
 }
 
@@ -112,10 +122,16 @@ function neighbourCosts(
   return out;
 }
 
-function readingsAt(reader: PixelReader, x: number, y: number, calibration: Calibration): Reading[] {
+function readingsAt(
+  reader: PixelReader,
+  x: number,
+  y: number,
+  outlierDistance: number,
+  orderBoundariesNm: readonly number[],
+): Reading[] {
   const offset = reader.lookUp(x, y);
-  const records = reader.records;
-  if (records[offset + 1]! > calibration.rules.outlierDistance) return [];
+  const { records, scale } = reader;
+  if (records[offset + 1]! > outlierDistance) return [];
   const count = records[offset]!;
   const best = records[offset + 2 + 3]!;
   const readings: (Reading & { weight: number })[] = [];
@@ -125,10 +141,10 @@ function readingsAt(reader: PixelReader, x: number, y: number, calibration: Cali
     const weight = Math.exp((best - records[mode + 3]!) / 2);
     total += weight;
     readings.push({
-      thicknessNm: records[mode]!,
-      lowNm: records[mode + 1]!,
-      highNm: records[mode + 2]!,
-      order: orderOf(records[mode]!, calibration.orderBoundariesNm),
+      thicknessNm: records[mode]! * scale,
+      lowNm: records[mode + 1]! * scale,
+      highNm: records[mode + 2]! * scale,
+      order: orderOf(records[mode]! * scale, orderBoundariesNm),
       share: 0,
       weight,
     });

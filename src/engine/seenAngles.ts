@@ -1,6 +1,6 @@
 import { orderBoundaries } from '../chart/orders.ts';
 import type { ActivityMap } from '../match/activity.ts';
-import type { AngleCharts } from '../match/angleCharts.ts';
+import { type AngleCharts, angleCursor } from '../match/angleCharts.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import type { FilmBasis, FilmScene } from '../match/filmBasis.ts';
 import { makeAngleReader, makePixelReader, type PixelReader } from '../match/pixelReader.ts';
@@ -17,6 +17,39 @@ import type { SlantedOptics } from './slantedOptics.ts';
 export interface SeenAngles {
   readonly charts: AngleCharts;
   readonly view: WaterView;
+  /** Angle whose order boundaries the calibration lists. */
+  readonly referenceRad: number;
+}
+
+/** What holds at one pixel: its charts, how thickness there follows from thickness on them, and where orders end. */
+export interface SeenAt {
+  readonly charts: readonly CodeChart[];
+  readonly scale: number;
+  readonly orderBoundariesNm: readonly number[];
+}
+
+/** What holds at pixels of a photo; call the answer for each pixel. */
+export function seenAt(calibration: {
+  readonly charts: readonly CodeChart[];
+  readonly angles: SeenAngles | null;
+  readonly orderBoundariesNm: readonly number[];
+}): (x: number, y: number) => SeenAt {
+  const { charts, angles, orderBoundariesNm } = calibration;
+  if (!angles) return () => ({ charts, scale: 1, orderBoundariesNm });
+  const cosineAt = cosineReader(angles.view);
+  const cursor = angleCursor(angles.charts, cosineAt);
+  const { filmIndex, ambientIndex } = angles.charts;
+  const root = (cosine: number) => Math.sqrt(filmIndex ** 2 - ambientIndex ** 2 * (1 - cosine ** 2));
+  const reference = root(Math.cos(angles.referenceRad));
+  return (x, y) => {
+    cursor.moveTo(x, y);
+    const ratio = reference / root(Math.max(0, cosineAt(x, y)));
+    return {
+      charts: angles.charts.charts[cursor.near]!,
+      scale: cursor.scale,
+      orderBoundariesNm: orderBoundariesNm.map((d) => d * ratio),
+    };
+  };
 }
 
 /** Wavelength at which phase is counted, nm. */
