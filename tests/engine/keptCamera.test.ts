@@ -5,12 +5,17 @@ import type { EstimateResult } from '../../src/engine/contract.ts';
 import { estimate } from '../../src/engine/estimate.ts';
 import { cameraNameFrom, type KeptCamera, nameCamera } from '../../src/engine/keptCamera.ts';
 import { readKeptCamera } from '../../src/engine/keptCameraSchema.ts';
+import { measureTarget } from '../../src/engine/measureTarget.ts';
 import { parseSetup } from '../../src/engine/parseSetup.ts';
 import type { Setup } from '../../src/engine/setup.ts';
+import { filmStackFor } from '../../src/optics/filmPresets.ts';
 import type { PhotoPixels } from '../../src/photo/types.ts';
 import { SCENES } from '../../src/scene/catalogue.ts';
 import { CONDITIONS } from '../../src/scene/conditions.ts';
+import { drawPhone } from '../../src/scene/phone.ts';
+import { seededRandom } from '../../src/scene/random.ts';
 import type { Scene } from '../../src/scene/types.ts';
+import { CORNERS, targetPhoto } from './targetPhoto.ts';
 
 const WIDTH = 320;
 const HEIGHT = 240;
@@ -142,6 +147,30 @@ describe('a camera kept from one photo, at the next photo of the same phone', ()
     const camera = { fit: true, kept: { ...kept[0]!, encoding: 'display-p3' } };
     expect(codesOf(estimate(next.pixels, { ...next.scene.setup, camera }))).toContain('kept-camera-colours');
   });
+});
+
+describe('a camera from a colour target, at a photo of the same phone', () => {
+  it('reads a film of few colours clearly better than without it', async () => {
+    const without: number[] = [];
+    const withTarget: number[] = [];
+    for (const phone of ['1', '2', '3']) {
+      const request = { phone, seed: `target ${phone}`, conditions: CONDITIONS.stated };
+      const { drawn, camera } = drawPhone(seededRandom(`target ${phone}`), filmStackFor('soap'), 0, request);
+      const gains = [1.03, 0.98, 1.01] as const;
+      const target = await targetPhoto({ camera, tone: drawn.tone, seed: phone, gains });
+      const reading = measureTarget(target, CORNERS, { daylightK: drawn.toldDaylightK });
+      const next = await soapPhoto(`next${phone}`, phone, [80, 250]);
+      const { references: _, ...setup } = next.scene.setup;
+      const found = nameCamera(reading.camera, 'target', '2026-05-01T10:00:00Z');
+      without.push(...errorsOf(next, estimate(next.pixels, setup)));
+      withTarget.push(
+        ...errorsOf(next, estimate(next.pixels, { ...setup, camera: { fit: true, kept: found } })),
+      );
+    }
+    if (process.env.PRINT_FIGURES) console.log(figures(without), figures(withTarget));
+    expect(figures(withTarget).median).toBeLessThan(0.7 * figures(without).median);
+    expect(figures(withTarget).p90).toBeLessThan(0.5 * figures(without).p90);
+  }, 300_000);
 });
 
 describe('a kept camera as data', () => {
