@@ -26,7 +26,7 @@ export function UpdatePrompt() {
   return (
     <div class="toast" role="status">
       <span>A new version is ready.{image.value ? ' Your photo and marks are kept.' : ''}</span>
-      <button type="button" onClick={() => takeOver(workbox)}>
+      <button type="button" class="primary" onClick={() => takeOver(workbox)}>
         Update
       </button>
       <button type="button" onClick={() => (waiting.value = null)}>
