@@ -134,7 +134,7 @@ export function WorkScreen() {
             </button>
           ) : next ? (
             <button type="button" class="primary" onClick={() => go(next)}>
-              {next === 'map' ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
+              {next === 'map' && !measured ? 'Measure' : `Next: ${STEP_NAMES[next].toLowerCase()}`}
             </button>
           ) : (
             <button type="button" class="primary" onClick={save}>

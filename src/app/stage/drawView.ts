@@ -130,9 +130,10 @@ function drawLimit(
     const isSeen = middle && middle[1] > 0 && middle[1] < photo.height;
     if (!middle || !isSeen) continue;
     const [, y] = toScreen(screen, middle[0], middle[1]);
-    const [x] = toScreen(screen, photo.width / 2, 0);
+    // To the right, clear of the distances on the left.
+    const [right] = toScreen(screen, photo.width, 0);
     // Lines that lie close: the lower one's words go below it.
-    label(context, words, x, above !== null && y - above < 26 ? y + 18 : y - 7, colour, 'center');
+    label(context, words, right - 10, above !== null && y - above < 26 ? y + 18 : y - 7, colour, 'right');
     above = y;
   }
 }

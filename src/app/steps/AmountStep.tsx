@@ -118,7 +118,7 @@ function Covered({ report }: { readonly report: TallyReport }) {
         {share === null ? 'no answer' : percent(share)}
         {least !== null && most !== null && percent(least) !== percent(most) ? (
           <small>
-            {percent(least)} to {percent(most)}
+            {percent(least)} to {percent(most)} with water not read
           </small>
         ) : null}
       </dd>
