@@ -190,6 +190,18 @@ describe('set-ups', () => {
         { at: [6, 6], order: 2 },
       ],
       trend: 'thickerDown',
+      strokes: [{ paint: 'out', points: [[3, 4]], widthPx: 12 }],
+      view: {
+        heightM: 3,
+        focal35mm: 26,
+        horizon: [
+          [0, 5],
+          [100, 6],
+        ],
+      },
+      windMS: 3,
+      position: { latitudeDeg: 47, longitudeDeg: -21 },
+      headingDeg: 200,
     };
     const schema = JSON.parse(readFileSync('src/engine/setup.schema.json', 'utf8')) as { properties: object };
     expect(Object.keys(full).sort()).toEqual(Object.keys(schema.properties).sort());
