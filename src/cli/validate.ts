@@ -6,6 +6,7 @@ import { type FilmKind, markdownTable, type ReportLine, table, verdict } from '.
 import { runTasks } from './validate/runTasks.ts';
 import { summariseErrors } from './validate/statistics.ts';
 import { STEP_NM, STEP_REACH_PX } from './validate/steps.ts';
+import { tallyLines } from './validate/tallyReport.ts';
 
 function percent(part: number, whole: number): string {
   return whole > 0 ? `${((100 * part) / whole).toFixed(1)} %` : '-';
@@ -110,6 +111,8 @@ function print(readings: readonly SceneReading[], options: ValidateOptions): voi
         console.log(verdict(`${name}, index error divided out`, kind, divided));
       }
     }
+    const tallies = tallyLines(under.flatMap(({ tally }) => tally ?? []));
+    if (tallies.length > 0) console.log(`\n${tallies.join('\n')}`);
   }
   console.log(
     '\nAll film pixels in the marked region are counted; a pixel without an answer counts as infinitely far off in the' +

@@ -1,5 +1,6 @@
 import { type AreaCells, lookFromCells, newCellView } from '../view/areaCells.ts';
 import type { PoseDraw } from '../view/poseDraws.ts';
+import { WARNING_RAD } from '../view/viewLimits.ts';
 import type { WaterView } from '../view/waterView.ts';
 import type { RandomNumbers } from './monteCarlo.ts';
 
@@ -29,20 +30,30 @@ const STEEPEST_RAD = (85 * Math.PI) / 180;
  * Errors of the view and of the film's index. A colour fixes the phase, that is thickness times
  * sqrt(n^2 - sin^2 i); so if index or incidence were other than assumed, every thickness in the cell changes by the ratio
  * of that root, and every area by the ratio of the cell's ground areas.
+ * @param lostOrders largest share by which film seen at more than 60 degrees may be thicker than read: narrow bands are
+ * lost there and read an order too thin. Each trial draws a share evenly from 0 to this.
  */
-export function commonDraw(view: WaterView, cells: AreaCells, poses: PoseDraw, film: FilmIndex): CommonDraw {
+export function commonDraw(
+  view: WaterView,
+  cells: AreaCells,
+  poses: PoseDraw,
+  film: FilmIndex,
+  lostOrders = 0,
+): CommonDraw {
   const nominal = newCellView(cells);
   const drawn = newCellView(cells);
   lookFromCells(view, cells, nominal);
   return (random, areaFactor, thicknessFactor) => {
     lookFromCells(poses(random), cells, drawn);
     const index = film.index + film.indexSd * random.normal();
+    const lost = lostOrders > 0 ? 1 + lostOrders * random.next() : 1;
     for (let cell = 0; cell < cells.count; cell++) {
       const before = nominal.incidenceRad[cell]!;
       const after = drawn.incidenceRad[cell]!;
       areaFactor[cell] =
         before < STEEPEST_RAD && after < STEEPEST_RAD ? drawn.areaM2[cell]! / nominal.areaM2[cell]! : 1;
-      thicknessFactor[cell] = phaseRoot(film.index, before) / phaseRoot(index, after);
+      thicknessFactor[cell] =
+        (phaseRoot(film.index, before) / phaseRoot(index, after)) * (before > WARNING_RAD ? lost : 1);
     }
   };
 }

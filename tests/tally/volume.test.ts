@@ -140,6 +140,22 @@ describe('errors of the view', () => {
   const sums = cellSums({ map, areaM2 }, areaCells(400, 300));
   const steadyFilm = { index: 1.47, indexSd: 0 };
 
+  it('film seen at more than 60 degrees may be thicker than read, steeper film is not', () => {
+    const [area, thickness] = [new Float64Array(sums.cells.count), new Float64Array(sums.cells.count)];
+    const half = { next: () => 0.5, normal: () => 0 };
+    commonDraw(view, sums.cells, () => view, steadyFilm, 0.4)(half, area, thickness);
+    let slanted = 0;
+    for (let cell = 0; cell < sums.cells.count; cell++) {
+      const x = (((cell % sums.cells.columns) + 0.5) * 400) / sums.cells.columns;
+      const y = ((Math.floor(cell / sums.cells.columns) + 0.5) * 300) / sums.cells.rows;
+      const isSlanted = incidenceAtRad(view, x, y) > Math.PI / 3;
+      slanted += isSlanted ? 1 : 0;
+      expect(thickness[cell]).toBeCloseTo(isSlanted ? 1.2 : 1, 12);
+    }
+    expect(slanted).toBeGreaterThan(0);
+    expect(slanted).toBeLessThan(sums.cells.count);
+  });
+
   it('a colour keeps its phase: seen flatter than thought, the film is thicker; of higher index, thinner', () => {
     const flatter = waterView({ ...view, pitchRad: view.pitchRad + 0.02 });
     const [area, thickness] = [new Float64Array(sums.cells.count), new Float64Array(sums.cells.count)];

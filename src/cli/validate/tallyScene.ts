@@ -14,6 +14,9 @@ export interface TallyReading {
   /** Measured / true - 1. */
   readonly oiledError: number;
   readonly volumeError: number;
+  /** The same with what the told height's own error does to areas divided out. */
+  readonly oiledErrorTrueHeight: number;
+  readonly volumeErrorTrueHeight: number;
   /** Measured - true, 0 to 1. */
   readonly coverageError: number;
   /** Whether the 90 % intervals of volume and oiled area hold the truth. */
@@ -31,7 +34,7 @@ export interface TallyReading {
 
 /** Tallies a map of a scene over level water; null for other scenes. */
 export function tallyScene(scene: Scene, { map, tallyFacts }: TalliedEstimate): TallyReading | null {
-  const { water, setup, width, height } = scene;
+  const { water, setup, width, height, view: trueView } = scene;
   if (!water || !setup.view) return null;
   const report = tallyPhoto(map, setup, photoViewOf(setup, width, height), {}, tallyFacts);
   if (report.scale !== 'metres') return null;
@@ -40,9 +43,14 @@ export function tallyScene(scene: Scene, { map, tallyFacts }: TalliedEstimate): 
   const isIn = (value: number, least: number, most: number) => value >= least && value <= most;
   const { least, best, most } = byThickness.volumeM3;
   const { oiledM2 } = byThickness;
+  const toldM = setup.view.heightM;
+  // All areas go with the square of the height.
+  const scale = toldM && trueView ? (toldM / trueView.heightM) ** 2 : 1;
   return {
     oiledError: oiledM2.best / water.oiledM2 - 1,
     volumeError: best / trueM3 - 1,
+    oiledErrorTrueHeight: oiledM2.best / scale / water.oiledM2 - 1,
+    volumeErrorTrueHeight: best / scale / trueM3 - 1,
     coverageError: (coverage.share ?? Number.NaN) - water.oiledM2 / water.regionM2,
     volumeHeld: isIn(trueM3, least, most),
     oiledHeld: isIn(water.oiledM2, oiledM2.least, oiledM2.most),
