@@ -153,8 +153,10 @@ function base64(bytes: Uint8Array): string {
 
 serve<RecordJobs>(
   {
-    layer: ({ role, values }) => {
-      layers[role] = values;
+    layer: ({ role, length, from, values }) => {
+      if (from === 0)
+        layers[role] = values instanceof Float32Array ? new Float32Array(length) : new Uint8Array(length);
+      layers[role]?.set(values, from);
       return null;
     },
     keep: async ({ observation, original, thumbnail, map: size }) => {
@@ -202,6 +204,7 @@ serve<RecordJobs>(
         return { observation, problem: error.message };
       }
     },
+    unkept: () => [...unkept.values()].map(({ observation }) => observation),
     retry: async ({ id }) => kept(await contentOf(id)),
     open: async ({ id }) => ({
       observation: await observationOf(id),

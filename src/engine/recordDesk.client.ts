@@ -6,6 +6,7 @@ import {
   type HandOverChoice,
   type KeptRecord,
   MAP_LAYERS,
+  type MapLayer,
   type RecordJobs,
 } from './recordJobs.ts';
 
@@ -19,6 +20,8 @@ export interface RecordDesk {
     readonly map: ThicknessMap | null;
   }): Promise<KeptRecord>;
   revise(observation: Observation): Promise<KeptRecord>;
+  /** Records that live in memory only, because the device had no room. */
+  unkept(): Promise<readonly Observation[]>;
   retry(id: string): Promise<KeptRecord>;
   open(id: string): Promise<KeptRecord>;
   picture(id: string): Promise<{ readonly png: Blob; readonly topNm: number } | null>;
@@ -31,7 +34,8 @@ export interface RecordDesk {
   importZip(file: Blob): Promise<KeptRecord>;
 }
 
-const pause = () => new Promise<void>((resolve) => setTimeout(resolve, 0));
+/** Pixels copied at once: a few milliseconds' work on a phone. */
+const PIECE = 1_000_000;
 
 export function createRecordDesk(): RecordDesk {
   const worker = new Worker(new URL('./record.worker.ts', import.meta.url), {
@@ -39,16 +43,26 @@ export function createRecordDesk(): RecordDesk {
     name: 'record',
   });
   const { call } = makeCaller<RecordJobs>(worker);
+  const sendLayer = async (role: MapLayer, layer: Float32Array | Uint8Array) => {
+    for (let from = 0; from < layer.length; from += PIECE) {
+      // Copying takes the page's time, so each piece has a turn of its own.
+      const values = layer.slice(from, from + PIECE);
+      await call(
+        'layer',
+        { role, length: layer.length, from, values },
+        { transfer: [values.buffer as ArrayBuffer] },
+      );
+    }
+  };
   return {
     keep: async ({ map, ...rest }) => {
-      // Copying a layer into the worker takes the page's time, so each has a turn of its own.
       for (const role of map ? MAP_LAYERS : []) {
-        if (map) await call('layer', { role, values: map[role] });
-        await pause();
+        if (map) await sendLayer(role, map[role]);
       }
       return call('keep', { ...rest, map: map && { width: map.width, height: map.height } });
     },
     revise: (observation) => call('revise', observation),
+    unkept: () => call('unkept', null),
     retry: (id) => call('retry', { id }),
     open: (id) => call('open', { id }),
     picture: async (id) => {

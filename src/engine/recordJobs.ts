@@ -36,9 +36,15 @@ export interface KeptRecord {
 }
 
 export interface RecordJobs {
-  /** One layer of the map that `keep` will use; layers come one by one so that copying one never holds the page up. */
+  /** A piece of a layer of the map that `keep` will use: pieces, so that copying one never holds the page up. */
   readonly layer: {
-    readonly in: { readonly role: MapLayer; readonly values: Float32Array | Uint8Array };
+    readonly in: {
+      readonly role: MapLayer;
+      /** Pixels of the whole layer, and the first one of this piece. */
+      readonly length: number;
+      readonly from: number;
+      readonly values: Float32Array | Uint8Array;
+    };
     readonly out: null;
   };
   readonly keep: {
@@ -54,6 +60,8 @@ export interface RecordJobs {
   readonly revise: { readonly in: Observation; readonly out: KeptRecord };
   /** Keeps once more what could not be kept. */
   readonly retry: { readonly in: { readonly id: string }; readonly out: KeptRecord };
+  /** Records that could not be kept and live in memory only. */
+  readonly unkept: { readonly in: null; readonly out: readonly Observation[] };
   readonly open: { readonly in: { readonly id: string }; readonly out: KeptRecord };
   /** The map's picture with the thickness at the light end of its ramp; null where there is no map. */
   readonly picture: {

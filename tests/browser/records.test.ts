@@ -1,13 +1,12 @@
 import { createHash } from 'node:crypto';
 import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import { strFromU8, unzipSync } from 'fflate';
 import type { Browser, BrowserContext, Download, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { type BuiltApp, serveBuiltApp } from './builtApp.ts';
 import { launchChromium } from './chromium.ts';
+import { smallControls, violations } from './page.ts';
 
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 /** The demo photo says where it was taken: digits that no file may hold once the position is left out. */
 const PLACE = /47\.25|21\.40|15\.06|24\.18|47°|21°/;
 
@@ -43,27 +42,14 @@ afterAll(async () => {
   await app?.close();
 });
 
-async function violations(): Promise<string[]> {
-  await page.evaluate(axeSource);
-  return page.evaluate(async () => {
-    const { axe } = globalThis as unknown as {
-      axe: {
-        run: (target: Document) => Promise<{ violations: { id: string; nodes: { html: string }[] }[] }>;
-      };
-    };
-    const { violations: found } = await axe.run(document);
-    return found.map((violation) => `${violation.id}: ${violation.nodes[0]?.html}`);
-  });
-}
-
-/** Faults of the screen in both themes. */
+/** Faults of the screen in both themes, and controls too small for a thumb. */
 async function faults(): Promise<string[]> {
   const found: string[] = [];
   for (const theme of ['Sunlight theme', 'Dark theme']) {
     await page.getByRole('button', { name: theme }).click();
-    found.push(...(await violations()));
+    found.push(...(await violations(page)));
   }
-  return found;
+  return [...found, ...(await smallControls(page))];
 }
 
 async function download(name: string | RegExp): Promise<{ name: string; bytes: Buffer }> {
@@ -138,6 +124,12 @@ describe('a record, offline', () => {
     await page.getByText('Type a number from 0 to 360.').waitFor();
     await page.getByLabel('Wind from, degrees').fill('240');
     expect(await faults()).toEqual([]);
+    await fact('Time').click();
+    await page.getByLabel('Offset from UTC').fill('+02:00');
+    await page.getByText('14 May 2025, 08:32 UTC').waitFor();
+    await page.getByLabel('Offset from UTC').fill('+2');
+    await page.getByText('Type the offset like +02:00').waitFor();
+    await page.getByLabel('Offset from UTC').fill('-01:00');
     await page.waitForTimeout(700);
     await page.reload();
     await saved();
@@ -341,6 +333,11 @@ describe('where the device keeps nothing', () => {
     ]);
     const entries = unzipSync(await bytesOf(file));
     expect(strFromU8(entries['observation.json']!)).toContain('Not to be lost.');
+    // The list knows it too, as long as the page is open.
+    await there.getByRole('link', { name: 'All records' }).click();
+    await there.getByText('Only in memory until this page closes').waitFor();
+    await there.locator('.record-link').click();
+    expect(await there.getByLabel('Remarks').inputValue()).toBe('Not to be lost.');
     expect(
       Buffer.from(entries['original/soap-film.jpg']!).equals(readFileSync('public/demo/soap-film.jpg')),
     ).toBe(true);

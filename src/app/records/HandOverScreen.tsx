@@ -20,6 +20,7 @@ export function HandOverScreen({ id }: { readonly id: string }) {
   );
 }
 
+const NO_PLACE = 'areas without outlines: position or heading from true north is missing';
 const NO_SCALE = 'needs the camera’s height and the horizon: View step of the photo';
 
 function Files({ observation }: { readonly observation: Observation }) {
@@ -43,6 +44,8 @@ function Files({ observation }: { readonly observation: Observation }) {
   }, [observation, leaves, keepsOriginal]);
   const write = (kind: ExportKind, words: string) => () =>
     void attempt(words, async () => setNotices(await handOver(kind, { id, ...choice })));
+  const { headingDeg, headingReference } = observation.viewpoint;
+  const isPlaced = !leaves && observation.position !== null && !!headingDeg && headingReference === 'true';
   const noScale = hasScale(observation) ? null : NO_SCALE;
   const offered: readonly FileButton[] = [
     {
@@ -79,13 +82,13 @@ function Files({ observation }: { readonly observation: Observation }) {
           },
           {
             name: 'GeoJSON',
-            content: noScale ?? 'outline and classes, for a map program',
+            content: noScale ?? (isPlaced ? 'outline and classes, for a map program' : NO_PLACE),
             icon: 'save',
             make: noScale ? null : write('geojson', 'drawing outlines'),
           },
           {
             name: 'GeoTIFF',
-            content: noScale ?? 'thickness on the water, metres',
+            content: noScale ?? `thickness on the water, metres${isPlaced ? '' : '; on a grid of its own'}`,
             icon: 'save',
             make: noScale ? null : write('geotiff', 'laying it on the water'),
           },

@@ -1,6 +1,7 @@
 import { signal } from '@preact/signals';
 import { useEffect, useState } from 'preact/hooks';
 import { timeWords } from '../../record/inWords.ts';
+import type { Observation } from '../../record/observation.ts';
 import type { ObservationEntry } from '../../record/store.browser.ts';
 import { Icon } from '../parts/Icon.tsx';
 import { attempt, shown, theDesk, theStore } from './desk.ts';
@@ -15,11 +16,17 @@ export const removed = signal<{ readonly id: string; readonly title: string } | 
 export function RecordList() {
   const [query, setQuery] = useState('');
   const [entries, setEntries] = useState<readonly ObservationEntry[] | null>(null);
+  const [unkept, setUnkept] = useState<readonly Observation[]>([]);
   const [warning, setWarning] = useState<string | null>(null);
   const [turn, setTurn] = useState(0);
   // A new turn asks for the list anew.
   useEffect(() => {
     let stale = false;
+    void theDesk()
+      .unkept()
+      .then((found) => {
+        if (!stale) setUnkept(found);
+      });
     void attempt('reading the records', async () => {
       const store = await theStore();
       const found = await store.list(query);
@@ -72,7 +79,19 @@ export function RecordList() {
           </button>
         </div>
       ) : null}
-      {entries?.length === 0 ? (
+      {unkept.length > 0 ? (
+        <section class="not-kept" aria-label="Not kept yet">
+          <p class="warn">Only in memory until this page closes: open it and save it as a ZIP.</p>
+          <ul class="record-list">
+            {unkept.map((observation) => (
+              <li key={observation.id}>
+                <Entry entry={{ id: observation.id, observation, problem: null }} />
+              </li>
+            ))}
+          </ul>
+        </section>
+      ) : null}
+      {entries?.length === 0 && unkept.length === 0 ? (
         <p class="quiet">
           {query.trim()
             ? 'No record has these words.'

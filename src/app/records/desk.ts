@@ -103,4 +103,8 @@ export async function retry(): Promise<void> {
   if (kept) shown.value = kept;
 }
 
-if (typeof addEventListener === 'function') addEventListener('pagehide', () => void flush());
+addEventListener('pagehide', () => void flush());
+// What lives in memory only would be gone: the browser asks first.
+addEventListener('beforeunload', (event) => {
+  if (shown.value?.problem) event.preventDefault();
+});

@@ -1,11 +1,12 @@
 import { signal } from '@preact/signals';
-import { newObservation } from '../../engine/newObservation.ts';
+import { finished, newObservation } from '../../engine/newObservation.ts';
 import type { Observation, ViewpointKind } from '../../record/observation.ts';
 import { recordResult } from '../../record/recordResult.ts';
 import { polariser, tally, tallyFault, viewpoint, workOutAmount } from '../amountState.ts';
 import { failure, image, onWater, progress, result, setup } from '../state.ts';
 import { filmName } from '../words/names.ts';
 import { shown, theDesk, theStore, trouble } from './desk.ts';
+import { patched } from './fields/patched.ts';
 import { rememberedObserver } from './observerMemory.ts';
 import { thumbnailOf } from './thumbnail.ts';
 
@@ -74,7 +75,7 @@ async function save(): Promise<void> {
     }),
     ...(isOnWater && polariser.value !== 'unknown' && { conditions: { polariser: polariser.value } }),
   });
-  const observation = before ? renewed(before, fresh) : fresh;
+  const observation = before ? finished(renewed(before, fresh)) : fresh;
   const thumbnail = await thumbnailOf(open.bitmap);
   const kept = await theDesk().keep({ observation, original: open.blob, thumbnail, map: done.map });
   // Asked for once there is something to lose; only the page may ask.
@@ -85,21 +86,34 @@ async function save(): Promise<void> {
   location.hash = `#/records/${observation.id}`;
 }
 
-/** The new reading, with the words that were given to the record before. */
+/**
+ * The new reading, with the words that were given to the record before. Where both the set-up and the record have a word
+ * for a thing, the set-up's counts only if it has changed since.
+ */
 function renewed(before: Observation, fresh: Observation): Observation {
+  const [old, now] = [before.setup, fresh.setup];
+  const isSame = (key: 'position' | 'windMS' | 'headingDeg') =>
+    JSON.stringify(old?.[key]) === JSON.stringify(now?.[key]);
+  const { headingDeg, headingReference } = before.viewpoint;
   return {
     ...fresh,
     title: before.title,
     createdUtc: before.createdUtc,
     observer: before.observer,
     time: before.time,
-    position: before.position ?? fresh.position,
+    position: isSame('position') ? before.position : fresh.position,
     ...(before.placeName !== undefined && { placeName: before.placeName }),
-    viewpoint: {
-      ...fresh.viewpoint,
-      from: viewpoint.value === 'unknown' ? before.viewpoint.from : fresh.viewpoint.from,
-    },
-    conditions: { ...before.conditions, ...fresh.conditions },
+    viewpoint: patched(
+      {
+        ...fresh.viewpoint,
+        from: viewpoint.value === 'unknown' ? before.viewpoint.from : fresh.viewpoint.from,
+      },
+      isSame('headingDeg') ? { headingDeg, headingReference } : {},
+    ),
+    conditions: patched(
+      { ...before.conditions, ...fresh.conditions },
+      isSame('windMS') ? { windMS: before.conditions.windMS } : {},
+    ),
     substance: before.substance,
     slickByEye: before.slickByEye,
     lookAlikes: before.lookAlikes,
