@@ -97,7 +97,7 @@ function Files({ observation }: { readonly observation: Observation }) {
   ];
   return (
     <>
-      <label class="switch">
+      <label class="check">
         <input
           type="checkbox"
           checked={leaves}
@@ -112,7 +112,7 @@ function Files({ observation }: { readonly observation: Observation }) {
         </span>
       </label>
       {leaves && hasOriginal ? (
-        <label class="switch">
+        <label class="check">
           <input
             type="checkbox"
             checked={keepsOriginal}
