@@ -221,3 +221,36 @@ describe('an angle of view that is not given', () => {
     expect(notices.map(({ code }) => code)).toContain('incidence-assumed');
   }, 120_000);
 });
+
+describe('wind over a slanted view', () => {
+  it('fades the colours of thick film, and opens the intervals the more the stronger it blows', () => {
+    const { pixels, setup } = render((share) => 60 + 300 * share);
+    const marks = leftOutOf(pixels, setup);
+    const activity = activityMap(pixels);
+    const at = [undefined, 2, 10].map((windMS) => {
+      // From 600 m a pixel covers a metre: oil stills the waves that are shorter than a foot.
+      const view = { ...setup.view!, heightM: 600 };
+      const given: Setup = {
+        ...setup,
+        view,
+        camera: { fit: false },
+        ...(windMS === undefined ? {} : { windMS }),
+      };
+      const { angles } = calibrate(pixels, given, marks, activity);
+      const k = angles!.charts.incidenceRad.findIndex((angle) => angle > 55 * DEGREE);
+      const chart = angles!.charts.charts[k]![0]!;
+      // Swing of green over the orders from 700 to 1100 nm, labels being 2 nm apart.
+      const green = Array.from({ length: 200 }, (_, j) => chart.codes[3 * (350 + j) + 1]!);
+      return {
+        swing: Math.max(...green) - Math.min(...green),
+        share: chart.sharedSdNm[200]! / chart.thicknessNm[200]!,
+      };
+    });
+    const [calm, light, strong] = at as [(typeof at)[0], (typeof at)[0], (typeof at)[0]];
+    // A stronger wind raises longer waves too, so less of its slope lies inside a pixel: either fades, no order between.
+    expect(strong.swing).toBeLessThan(calm.swing);
+    expect(light.swing).toBeLessThan(calm.swing);
+    expect(strong.share).toBeGreaterThan(light.share);
+    expect(light.share).toBeGreaterThan(calm.share);
+  }, 180_000);
+});
