@@ -31,6 +31,7 @@ import { MapStep } from './steps/MapStep.tsx';
 import { MarkStep } from './steps/MarkStep.tsx';
 import { ViewStep } from './steps/ViewStep.tsx';
 import { useMapPicture } from './useMapPicture.ts';
+import { firstTap, undoTap } from './viewState.ts';
 
 const STEP_NAMES: Readonly<Record<Step, string>> = {
   film: 'Film',
@@ -118,7 +119,12 @@ export function WorkScreen() {
           )}
         </div>
         <div class="act">
-          <button type="button" onClick={undo} disabled={!canUndo.value || !!busy} aria-label="Undo">
+          <button
+            type="button"
+            onClick={() => undoTap() || undo()}
+            disabled={!(canUndo.value || firstTap.value) || !!busy}
+            aria-label="Undo"
+          >
             <Icon name="undo" />
           </button>
           <button type="button" onClick={redo} disabled={!canRedo.value || !!busy} aria-label="Redo">

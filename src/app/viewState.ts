@@ -107,6 +107,13 @@ export function tapView(at: Point): void {
   else lengthEnds.value = pair;
 }
 
+/** Takes back a first tap that waits for its second. @returns whether there was one */
+export function undoTap(): boolean {
+  const waits = firstTap.value !== null;
+  firstTap.value = null;
+  return waits;
+}
+
 function withNearerMoved(pair: readonly [Point, Point], at: Point): readonly [Point, Point] {
   const away = (end: Point) => Math.hypot(end[0] - at[0], end[1] - at[1]);
   return away(pair[0]) <= away(pair[1]) ? [at, pair[1]] : [pair[0], at];

@@ -80,8 +80,3 @@ function tiltOf({ horizon, pitchDeg, rollDeg }: ViewSetup, camera: PinholeCamera
     ? tiltFromHorizon(camera, horizon[0], horizon[1], horizonDipRad(heightM))
     : { pitchRad: (pitchDeg ?? 0) * DEGREE, rollRad: (rollDeg ?? 0) * DEGREE };
 }
-
-/** The camera over the water where a set-up says all that is needed; else null. @throws RangeError like `sketchView` */
-export function setupView(view: ViewSetup | undefined, photo: LensFacts): WaterView | null {
-  return missingOfView(view, photo).length > 0 ? null : (sketchView(view, photo)?.view ?? null);
-}

@@ -110,6 +110,7 @@ function onWater(view: PinholeView, x: number, y: number): readonly [number, num
 }
 
 interface Truth {
+  readonly oiledM2: number;
   readonly volumeM3: number;
   readonly heightM: number;
 }
@@ -123,6 +124,7 @@ async function truthIn(setup: Setup): Promise<Truth> {
   const view = trueView();
   const axes = viewAxes(view);
   const look = [0, 0, 0];
+  let oiledM2 = 0;
   let volumeM3 = 0;
   for (let j = 0; j < height; j++) {
     for (let i = 0; i < width; i++) {
@@ -131,16 +133,19 @@ async function truthIn(setup: Setup): Promise<Truth> {
       if (code === NO_TRUTH || code === 0 || outside[y * PHOTO.width + x]) continue;
       lookAlong(view, axes, x, y, look);
       if (incidenceRad(look) > (75 * Math.PI) / 180) continue;
-      volumeM3 += (TRUTH_STEP ** 2 * waterAreaM2(view, look) * code * 1e-9) / TRUTH_CODES_PER_NM;
+      const areaM2 = TRUTH_STEP ** 2 * waterAreaM2(view, look);
+      oiledM2 += areaM2;
+      volumeM3 += (areaM2 * code * 1e-9) / TRUTH_CODES_PER_NM;
     }
   }
-  return { volumeM3, heightM: view.heightM };
+  return { oiledM2, volumeM3, heightM: view.heightM };
 }
 
 describe('oil on water, from a slanted photo to an amount', () => {
   let taps = 0;
   let volume: readonly [number, number] = [Number.NaN, Number.NaN];
   let codeVolume = volume;
+  let area = volume;
   let volumeWords = '';
   const tap = async (what: () => Promise<unknown>) => {
     taps++;
@@ -157,11 +162,16 @@ describe('oil on water, from a slanted photo to an amount', () => {
     await tap(() => strokePhoto(WATER));
     await tap(() => step('View').click());
     await tap(() => touchPhoto(180, 112));
+    // Not a tap that is needed: a first tap gone wrong is taken back alone.
+    await button('Undo').click();
+    await page.getByText('Tap the horizon twice').waitFor();
+    await touchPhoto(180, 112);
     await tap(() => touchPhoto(1020, 100));
     await tap(() => button('Lens above the water: more').click());
     await tap(() => step('Amount').click());
     await page.locator('.amount[aria-busy="false"]').waitFor({ timeout: 120_000 });
     volume = interval((await page.locator('.volume').first().textContent()) ?? '');
+    area = interval((await page.locator('.key-figures dd').first().textContent()) ?? '');
     codeVolume = interval((await page.locator('.volume').nth(1).textContent()) ?? '');
     volumeWords = (await page.locator('.methods').textContent()) ?? '';
     await tap(() => button('Save record').click());
@@ -186,13 +196,16 @@ describe('oil on water, from a slanted photo to an amount', () => {
     expect(await violations(page)).toEqual([]);
   });
 
-  it('gives volumes that hold the truth of the part that was painted in', async () => {
+  it('gives area and volumes that hold the truth of the part that was painted in', async () => {
     const kept = await page.evaluate(() => localStorage.getItem('tintfathom.setup'));
     const { setup } = JSON.parse(kept ?? '') as { setup: Setup };
-    const { volumeM3, heightM } = await truthIn(setup);
+    const { oiledM2, volumeM3, heightM } = await truthIn(setup);
     // What is typed is 3 m: at the same angles all areas, and so all volumes, go with the square of the height.
     const asTypedML = volumeM3 * 1e6 * (3 / heightM) ** 2;
     expect(volumeWords).toContain('mL');
+    expect(area[0]).toBeLessThanOrEqual(oiledM2 * (3 / heightM) ** 2);
+    expect(area[1]).toBeGreaterThanOrEqual(oiledM2 * (3 / heightM) ** 2);
+    expect(area[1] / area[0]).toBeLessThan(1.6);
     expect(volume[0]).toBeLessThanOrEqual(asTypedML);
     expect(volume[1]).toBeGreaterThanOrEqual(asTypedML);
     expect(volume[1] / volume[0]).toBeLessThan(2);
