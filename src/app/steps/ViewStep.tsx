@@ -157,7 +157,10 @@ function LensEntry({ focal35mm }: { readonly focal35mm: number | undefined }) {
   if (own !== undefined && focal35mm === undefined) {
     return (
       <details class="small">
-        <summary>Lens {own} mm, from the photo (as on 35 mm film)</summary>
+        <summary class="split">
+          <span>Lens {own} mm, from the photo</span>
+          <span class="change">Change</span>
+        </summary>
         <FocalEntry value={own} />
       </details>
     );
