@@ -1,6 +1,7 @@
 import { matrixMaker } from './cameraMatrix.ts';
 import { lightSpectrum } from './light.ts';
 import type { Matrix3 } from './matrix3.ts';
+import { SENSOR_DEPARTURES, sensorDepartures } from './sensorDepartures.ts';
 import { SENSOR_COMPONENTS, sensorComponents, sensorCurves } from './sensorFamily.ts';
 import type { ChannelWeights, Light, RgbEncoding } from './types.ts';
 
@@ -53,15 +54,26 @@ function mixRows(matrix: Matrix3, rows: Float64Array): Float64Array {
   return out;
 }
 
+/** Rows of a channel in `cameraBasis`: the family's mean and components, then the departures from it. */
+export const BASIS_ROWS = SENSOR_COMPONENTS + SENSOR_DEPARTURES;
+
 /**
- * The family's components under a light, not normalised: 12 rows of component times light power. Their products with
- * a reflectance are what a fit mixes; their plain sums are the white that it divides by.
+ * The family's components and departures under a light, not normalised: 3 x BASIS_ROWS rows of component times light
+ * power. Their products with a reflectance are what a fit mixes; their plain sums are the white that it divides by.
  */
 export function cameraBasis(light: Light, wavelengthNm: Float64Array): Float64Array {
   const n = wavelengthNm.length;
   const power = lightSpectrum(light, wavelengthNm);
-  const rows = sensorComponents(wavelengthNm);
-  for (let row = 0; row < 3 * SENSOR_COMPONENTS; row++) {
+  const family = sensorComponents(wavelengthNm);
+  const departures = sensorDepartures(wavelengthNm);
+  const rows = new Float64Array(3 * BASIS_ROWS * n);
+  for (let c = 0; c < 3; c++) {
+    const own = SENSOR_COMPONENTS * n;
+    rows.set(family.subarray(c * own, (c + 1) * own), c * BASIS_ROWS * n);
+    const beyond = SENSOR_DEPARTURES * n;
+    rows.set(departures.subarray(c * beyond, (c + 1) * beyond), c * BASIS_ROWS * n + own);
+  }
+  for (let row = 0; row < 3 * BASIS_ROWS; row++) {
     for (let i = 0; i < n; i++) rows[row * n + i]! *= power[i]!;
   }
   return rows;

@@ -78,7 +78,7 @@ const CHART_ERRORS = [
   { luma: 3, chroma: 5 },
 ] as const;
 /** Share of its weight that a sample keeps, because samples share errors of compression and processing. */
-const SAMPLE_WEIGHT = 0.02;
+const SAMPLE_WEIGHT = 0.05;
 /** What a sampled colour may be off for reasons other than noise, codes of 255. */
 const SAMPLE_ERROR = 2;
 /**

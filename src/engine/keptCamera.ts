@@ -12,9 +12,9 @@ export interface FittedCamera {
   readonly determined: 'well' | 'partly';
   /** Code space of the photo: tone curve and matrix are departures from it. */
   readonly encoding: string;
-  /** The 18 parameters that belong to the phone: 9 sensor, 3 tone, 6 matrix; see `match/parameters.ts`. */
+  /** The parameters that belong to the phone, 36: 9 sensor, 3 tone, 6 matrix, 18 departures of the sensor; see `match/parameters.ts`. */
   readonly mean: readonly number[];
-  /** Lower triangle of their covariance, row by row: 171 numbers. */
+  /** Lower triangle of their covariance, row by row: 666 numbers. */
   readonly covariance: readonly number[];
 }
 

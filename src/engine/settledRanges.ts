@@ -9,6 +9,11 @@ import type { PlacedSample } from './slantedOptics.ts';
 
 /** Places of the rough order step: enough to follow the bands, few enough to take a moment. */
 const PLACES = 60_000;
+/**
+ * The first camera may be off, and then every place of a thick part is off alike: colours are trusted little here, and
+ * the film's continuity a lot (set on seeded scenes through measured cameras; at 1, whole parts move by an order).
+ */
+const ROUGH_TRUST = 0.1;
 /** A sample may move this far from its settled thickness in the next fit, nm: under half an order. */
 const FREEDOM_NM = 70;
 
@@ -32,7 +37,7 @@ export function settledRanges(
     spacing,
   );
   fillCandidates(pixels, reader, rules, leftOut, field, 0, field.height);
-  const { choice } = resolveOrders(field);
+  const { choice } = resolveOrders(field, { trust: ROUGH_TRUST });
   const labels = placed?.rows ?? chart.count;
   const stepNm = chart.thicknessNm[1]!;
   const reach = Math.ceil(FREEDOM_NM / stepNm);

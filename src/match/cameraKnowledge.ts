@@ -3,15 +3,17 @@
  * the phone. Gains, veil, light and film index belong to the photo and are not kept; their uncertainty is, because the
  * covariance is the marginal of the whole fit.
  */
+import { SENSOR_DEPARTURES } from '../colour/sensorDepartures.ts';
 import type { CameraFit } from './fitCamera.ts';
 import { AT, PARAMETERS, type Prior } from './parameters.ts';
 import { inverseOf } from './symmetric.ts';
 
-/** Places in the parameter vector that are kept: sensor, tone curve, colour matrix. */
+/** Places in the parameter vector that are kept: sensor, tone curve, colour matrix, the sensor's departures from its family. */
 export const KEPT_PLACES: readonly number[] = [
   ...Array.from({ length: 9 }, (_, k) => AT.sensor + k),
   ...Array.from({ length: 3 }, (_, k) => AT.tone + k),
   ...Array.from({ length: 6 }, (_, k) => AT.matrix + k),
+  ...Array.from({ length: 3 * SENSOR_DEPARTURES }, (_, k) => AT.departure + k),
 ];
 export const KEPT = KEPT_PLACES.length;
 
@@ -61,7 +63,7 @@ export function cameraKnowledge(fit: Pick<CameraFit, 'parameters' | 'covariance'
 export function atNextPhoto(known: CameraKnowledge, matrix: ArrayLike<number>): CameraKnowledge {
   const covariance = known.covariance.slice();
   for (let i = 0; i < KEPT; i++) {
-    const sd = i < 9 ? CHANGE.sensor : i < 12 ? CHANGE.tone[i - 9]! : CHANGE.matrix;
+    const sd = i < 9 || i >= 18 ? CHANGE.sensor : i < 12 ? CHANGE.tone[i - 9]! : CHANGE.matrix;
     covariance[i * KEPT + i]! += sd * sd;
   }
   const turned = turnedBy(matrix);

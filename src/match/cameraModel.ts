@@ -1,3 +1,5 @@
+import { SENSOR_DEPARTURES } from '../colour/sensorDepartures.ts';
+import { SENSOR_COMPONENTS } from '../colour/sensorFamily.ts';
 import type { RgbEncoding } from '../colour/types.ts';
 import { COMPONENTS, type FilmBasis, ROW } from './filmBasis.ts';
 import { AT, PARAMETERS } from './parameters.ts';
@@ -36,6 +38,13 @@ const OFF_DIAGONAL: readonly (readonly [number, number])[] = [
   [2, 1],
 ];
 
+/** Place of the coefficient of channel c's component k (1 and up) in the parameter vector. */
+function placeOf(c: number, k: number): number {
+  return k < SENSOR_COMPONENTS
+    ? AT.sensor + c * (SENSOR_COMPONENTS - 1) + k - 1
+    : AT.departure + c * SENSOR_DEPARTURES + k - SENSOR_COMPONENTS;
+}
+
 /** Slope of the encoding by a central difference small against its curvature everywhere. */
 function encodeSlope(encoding: RgbEncoding, linear: number): number {
   const h = 1e-5;
@@ -59,7 +68,7 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
   const rgb = new Float64Array(3);
   const linear = new Float64Array(3);
 
-  const weightOf = (c: number, k: number) => (k === 0 ? 1 : parameters[AT.sensor + c * 3 + k - 1]!);
+  const weightOf = (c: number, k: number) => (k === 0 ? 1 : parameters[placeOf(c, k)]!);
 
   function moveTo(next: Float64Array, withDerivatives: boolean): void {
     parameters.set(next);
@@ -164,14 +173,15 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
             parameters[AT.index]! * basis.perIndex[at + k]! +
             mired * basis.perMired[at + k]!;
           let d = through * (own - s * white[source * COMPONENTS + k]!);
-          const sensor = source * 3 + k - 1;
-          const by = sensor * 9 + c * 3;
-          d +=
-            gain[c]! *
-            (matrixBySensor[by]! * response[0]! +
-              matrixBySensor[by + 1]! * response[1]! +
-              matrixBySensor[by + 2]! * response[2]!);
-          out[row + AT.sensor + sensor] = d;
+          if (k < SENSOR_COMPONENTS) {
+            const by = (source * 3 + k - 1) * 9 + c * 3;
+            d +=
+              gain[c]! *
+              (matrixBySensor[by]! * response[0]! +
+                matrixBySensor[by + 1]! * response[1]! +
+                matrixBySensor[by + 2]! * response[2]!);
+          }
+          out[row + placeOf(source, k)] = d;
         }
       }
     }

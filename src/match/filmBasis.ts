@@ -1,6 +1,6 @@
 import { applyRows } from '../colour/applyWeights.ts';
 import { DAYLIGHT_RANGE_K } from '../colour/light.ts';
-import { cameraBasis } from '../colour/photoCamera.ts';
+import { BASIS_ROWS, cameraBasis } from '../colour/photoCamera.ts';
 import type { Light } from '../colour/types.ts';
 import { blurredReflectanceTable } from '../optics/blur.ts';
 import type { Blur, FilmStack, Polarisation } from '../optics/types.ts';
@@ -14,14 +14,14 @@ export interface FilmScene {
   readonly blur: Blur;
 }
 
-/** Components of one sensor channel: the family's mean and its three principal components. */
-export const COMPONENTS = 4;
+/** Components of one sensor channel: the family's mean, its three principal components, departures from the family. */
+export const COMPONENTS = BASIS_ROWS;
 /** Channels times components: the length of one row of a basis table. */
 export const ROW = 3 * COMPONENTS;
 
 /**
  * What each sensor component records of the film, thickness by thickness, and how that changes with the two things
- * a set-up does not know exactly. Rows are [r0 r1 r2 r3 g0 .. g3 b0 .. b3]; component 0 is the family's mean.
+ * a set-up does not know exactly. Rows are [r0 r1 .. g0 g1 .. b0 b1 ..]; component 0 is the family's mean.
  *
  * Thickness here is *nominal*: the thickness that the nominal index at the nominal angle would need for the same
  * optical path. An index shift at a fixed path changes contrast only, so `perIndex` is small and close to linear.

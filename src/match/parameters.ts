@@ -4,6 +4,8 @@
  * code = tone(encode(gain * (matrix * sensor response) + veil)); see `cameraModel.ts`.
  */
 
+import { SENSOR_DEPARTURES } from '../colour/sensorDepartures.ts';
+
 /** Places in the parameter vector. */
 export const AT = {
   /** Sensor family coefficients r1 r2 r3 g1 g2 g3 b1 b2 b3, each N(0, 1) over real cameras. */
@@ -20,8 +22,10 @@ export const AT = {
   mired: 19,
   /** Off-diagonal departures of the image processor's colour matrix: rg rb gr gb br bg (rows keep their sums). */
   matrix: 20,
+  /** Departures of the sensor from the family, red's first; each N(0, 1), see `colour/sensorDepartures.ts`. */
+  departure: 26,
 } as const;
-export const PARAMETERS = 26;
+export const PARAMETERS = 26 + 3 * SENSOR_DEPARTURES;
 
 export const PARAMETER_NAMES: readonly string[] = [
   ...['red', 'green', 'blue'].flatMap((c) => [1, 2, 3].map((k) => `${c} sensitivity, component ${k}`)),
@@ -33,6 +37,9 @@ export const PARAMETER_NAMES: readonly string[] = [
   'film index shift',
   'light, mired shift',
   ...['rg', 'rb', 'gr', 'gb', 'br', 'bg'].map((e) => `colour matrix ${e}`),
+  ...['red', 'green', 'blue'].flatMap((c) =>
+    Array.from({ length: SENSOR_DEPARTURES }, (_, k) => `${c} sensitivity, departure ${k + 1}`),
+  ),
 ];
 
 /** What is believed before the photo is looked at: a Gaussian by its mean and precision (inverse covariance). */
@@ -79,6 +86,7 @@ export function statedPrior(spread: PriorSpread, mean: Float64Array): Prior {
   set(AT.index, spread.index);
   set(AT.mired, spread.mired);
   for (let k = 0; k < 6; k++) set(AT.matrix + k, 0.12 * own);
+  for (let k = 0; k < 3 * SENSOR_DEPARTURES; k++) set(AT.departure + k, own);
   // Gains: covariance channel^2 I + common^2 11', inverted by Sherman-Morrison.
   const a = spread.channelGain ** 2;
   const b = spread.commonGain ** 2;

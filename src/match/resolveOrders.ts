@@ -8,6 +8,8 @@ export interface Smoothness {
   readonly edge: number;
   /** What a nanometre costs beyond the edge. */
   readonly perNmBeyond: number;
+  /** Share of its weight that a place's own colour keeps: places share errors of the chart and of compression. */
+  readonly trust: number;
   /** A draining film: a place below that is thinner than the one above costs more. */
   readonly thickerDown: boolean;
 }
@@ -16,6 +18,7 @@ export const STATED_SMOOTHNESS: Smoothness = {
   perNm: 0.1,
   edge: 12,
   perNmBeyond: 0.02,
+  trust: 1,
   thickerDown: false,
 };
 /** How much dearer a step against the trend is. */
@@ -71,7 +74,9 @@ export function resolveOrders(
     let chosen = 0;
     for (let k = 0; k < n; k++) {
       // Each of the paths counted the place's own cost; it belongs in the sum once.
-      const c = total[i * MOST_CANDIDATES + k]! - (PATHS.length - 1) * cost[i * MOST_CANDIDATES + k]!;
+      const c =
+        total[i * MOST_CANDIDATES + k]! -
+        (PATHS.length - 1) * smoothness.trust * cost[i * MOST_CANDIDATES + k]!;
       if (c < best) {
         second = best;
         best = c;
@@ -97,7 +102,7 @@ function sweep(
   const { width, height, spacing, count, thicknessNm, sdNm, cost } = field;
   const K = MOST_CANDIDATES;
   const perNm = smoothness.perNm / (spacing * Math.hypot(dx, dy));
-  const edge = smoothness.edge;
+  const { edge, trust } = smoothness;
   // Each place passes on the path costs of the last place with candidates: `message` there, `sourceOf` says where.
   sourceOf.fill(-1);
   const trend = smoothness.thickerDown ? Math.sign(dy) : 0;
@@ -121,8 +126,8 @@ function sweep(
       const own = i * K;
       if (source < 0) {
         for (let k = 0; k < n; k++) {
-          message[own + k] = cost[own + k]!;
-          total[own + k]! += cost[own + k]!;
+          message[own + k] = trust * cost[own + k]!;
+          total[own + k]! += trust * cost[own + k]!;
         }
         continue;
       }
@@ -142,7 +147,7 @@ function sweep(
           const c = message[from + q]! + price;
           if (c < best) best = c;
         }
-        const value = cost[own + k]! + best - floor;
+        const value = trust * cost[own + k]! + best - floor;
         message[own + k] = value;
         total[own + k]! += value;
       }

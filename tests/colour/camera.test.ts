@@ -5,7 +5,7 @@ import { matrixMaker } from '../../src/colour/cameraMatrix.ts';
 import { apply3, bradford, invert3, multiply3 } from '../../src/colour/matrix3.ts';
 import { naturalReflectances } from '../../src/colour/naturalReflectances.ts';
 import { colourMatchingFunctions, observerWeights, whiteOf } from '../../src/colour/observer.ts';
-import { cameraBasis, cameraWeights, sensorRows } from '../../src/colour/photoCamera.ts';
+import { BASIS_ROWS, cameraBasis, cameraWeights, sensorRows } from '../../src/colour/photoCamera.ts';
 import { DISPLAY_P3, SRGB } from '../../src/colour/rgb.ts';
 import { FILM_WAVELENGTHS_NM } from '../../src/colour/sampled.ts';
 import { SENSOR_COMPONENTS, sensorComponents, sensorCurves } from '../../src/colour/sensorFamily.ts';
@@ -57,7 +57,7 @@ describe('photo camera', () => {
       const mixed = new Float64Array(n);
       for (let k = 0; k < SENSOR_COMPONENTS; k++) {
         const weight = k === 0 ? 1 : a[3 * c + k - 1]!;
-        for (let i = 0; i < n; i++) mixed[i]! += weight * basis[(c * SENSOR_COMPONENTS + k) * n + i]!;
+        for (let i = 0; i < n; i++) mixed[i]! += weight * basis[(c * BASIS_ROWS + k) * n + i]!;
       }
       const white = mixed.reduce((total, v) => total + v, 0);
       for (let i = 0; i < n; i++) expect(mixed[i]! / white).toBeCloseTo(rows[c * n + i]!, 14);
