@@ -2,12 +2,12 @@ import { orderBoundaries, orderOf } from '../chart/orders.ts';
 import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import type { ActivityMap } from '../match/activity.ts';
-import { buildCodeChart, type ThicknessScale } from '../match/buildCodeChart.ts';
+import { buildCodeCharts, type ThicknessScale } from '../match/buildCodeChart.ts';
 import { withCamera } from '../match/cameraKnowledge.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import { type CommonError, commonError } from '../match/commonError.ts';
-import { type FilmBasis, type FilmScene, filmBasis, pathRatio } from '../match/filmBasis.ts';
+import { type FilmBasis, type FilmScene, filmBasis, pathRatio, thinnedBasis } from '../match/filmBasis.ts';
 import { type CameraFit, type FitInput, fitCamera } from '../match/fitCamera.ts';
 import type { ReadingRules } from '../match/mapPixels.ts';
 import { observerBasis } from '../match/observerBasis.ts';
@@ -69,7 +69,7 @@ export interface Calibration {
 const USUAL_MAX_NM = 1500;
 /** The fit looks no further: colours past it do not tell one camera from another. */
 const FIT_MAX_NM = 1500;
-const FIT_STEP_NM = 2;
+const FIT_STEP_NM = 3;
 const SAMPLES = 3000;
 /** What a chart colour may be off in calm, changing and lively surroundings, codes of 255: luma, chroma. */
 const CHART_ERRORS = [
@@ -137,8 +137,6 @@ export function calibrate(
     encoding: pixels.encoding,
     matrixFor: asObserver ? () => Float64Array.of(1, 0, 0, 0, 1, 0, 0, 0, 1) : matrices.matrixFor,
   });
-  const modelAt = (stepNm: number, count: number) =>
-    modelOf(makeBasis(scene, stepNm, count, FILM_WAVELENGTHS_NM));
   const slanted = plan
     ? slantedOptics(
         plan,
@@ -151,9 +149,9 @@ export function calibrate(
         setup.windMS ?? null,
       )
     : null;
-  const coarse = slanted
-    ? modelOf(slanted.fitBasis)
-    : modelAt(FIT_STEP_NM, Math.ceil(Math.min(maxNm, FIT_MAX_NM) / FIT_STEP_NM) + 1);
+  const fine = slanted ? null : makeBasis(scene, 1, Math.ceil(maxNm) + 1, FILM_WAVELENGTHS_NM);
+  const fitCount = Math.floor(Math.min(Math.ceil(maxNm), FIT_MAX_NM) / FIT_STEP_NM) + 1;
+  const coarse = modelOf(fine ? thinnedBasis(fine, FIT_STEP_NM, fitCount) : slanted!.fitBasis);
   const references = slanted ? withBareRow(marked, slanted.bareRow) : marked;
   const taken = sampleFilm(pixels, usableFor(leftOut, plan, pixels.width), SAMPLES);
   const placed = slanted ? slanted.place(taken, pixels.encoding) : null;
@@ -220,10 +218,7 @@ export function calibrate(
   const seen = slantedCharts(outcome.fit, 1);
   const angles = seen && canBeBare(setup, scene.stack) ? withBareLimits(seen, pixels, leftOut) : seen;
   const middle = angles ? nearestOf(angles.charts.incidenceRad, scene.incidenceRad) : 0;
-  const model =
-    slanted && angles
-      ? modelOf(slanted.basisAt(angles.charts.incidenceRad[middle]!))
-      : modelAt(1, Math.ceil(maxNm) + 1);
+  const model = modelOf(fine ?? slanted!.basisAt(angles!.charts.incidenceRad[middle]!));
   const charts = angles?.charts.charts[middle] ?? chartsFor(model, outcome.fit);
   const factor = pathRatio(scene, outcome.fit.parameters[AT.index]!);
   const boundaries = orders.map((d) => d * factor);
@@ -289,15 +284,9 @@ function drawCharts(
 ): CodeChart[] {
   const scale = scaleOf(scene, fit, Math.hypot(OUTSIDE_FAMILY, angleSd.relative));
   const boundaries = nominalOrdersNm.map((d) => d * scale.factor);
-  return CHART_ERRORS.map((error) =>
-    buildCodeChart(
-      model,
-      fit,
-      { codes: [noise[0]!, noise[1]!, noise[2]!], ...error, brightness: angleSd.brightness },
-      scale,
-      (d) => orderOf(d, boundaries),
-    ),
-  );
+  const codes = [noise[0]!, noise[1]!, noise[2]!] as const;
+  const noises = CHART_ERRORS.map((error) => ({ codes, ...error, brightness: angleSd.brightness }));
+  return buildCodeCharts(model, fit, noises, scale, (d) => orderOf(d, boundaries));
 }
 
 function scaleOf(scene: FilmScene, fit: CameraFit, relativeSd: number): ThicknessScale {

@@ -24,7 +24,7 @@ export function assignSamples(
   sd: number,
   sampleNm: Float64Array,
 ): Assignment {
-  const { chart, weight, sum, cost, tangent, reach } = work;
+  const { chart, weight, sum, cost, tangent, reach, open, slide } = work;
   const { samples } = input;
   const labels = weight.length;
   const perAngle = work.basis.rowsPerAngle ?? labels;
@@ -41,32 +41,33 @@ export function assignSamples(
     const b = samples[3 * i + 2]!;
     const from = input.allowed ? input.allowed[2 * i]! : 0;
     const to = input.allowed ? input.allowed[2 * i + 1]! : labels;
-    let least = Number.POSITIVE_INFINITY;
+    // Distance of the nearest label's stretch, codes; a label can be nearer only within that and its own reach.
+    let nearest = Number.POSITIVE_INFINITY;
     for (let j = from; j < to; j++) {
       const dr = r - chart[3 * j]!;
       const dg = g - chart[3 * j + 1]!;
       const db = b - chart[3 * j + 2]!;
       const d = dr * dr + dg * dg + db * db;
       cost[j] = d;
-      const gap = Math.sqrt(d) - reach[j]!;
-      const bound = gap > 0 ? gap * gap : 0;
-      if (bound < least) least = bound;
+      const within = nearest + reach[j]!;
+      if (d < within * within) nearest = Math.max(0, Math.sqrt(d) - reach[j]!);
     }
     // Labels stand for stretches of the chart: where one could matter, its distance is that of the stretch.
-    const window = (Math.sqrt(least) + sd * WINDOW) ** 2;
-    least = Number.POSITIVE_INFINITY;
+    const window = nearest + sd * WINDOW;
+    let least = Number.POSITIVE_INFINITY;
+    let opened = 0;
     for (let j = from; j < to; j++) {
-      const gap = Math.sqrt(cost[j]!) - reach[j]!;
-      if (gap > 0 && gap * gap > window) {
-        cost[j] = Number.POSITIVE_INFINITY;
-        continue;
-      }
+      const within = window + reach[j]!;
+      if (cost[j]! > within * within) continue;
       const s = slideOf(work, j, r, g, b);
       const dr = r - chart[3 * j]! - s * tangent[3 * j]!;
       const dg = g - chart[3 * j + 1]! - s * tangent[3 * j + 1]!;
       const db = b - chart[3 * j + 2]! - s * tangent[3 * j + 2]!;
       const d = (dr * dr + dg * dg + db * db) * perCode;
-      cost[j] = d;
+      cost[opened] = d;
+      open[opened] = j;
+      slide[opened] = s;
+      opened++;
       if (d < least) least = d;
     }
     if (!(least < DISTANT)) {
@@ -78,21 +79,21 @@ export function assignSamples(
     let evidence = 0;
     let moment = 0;
     let distance = 0;
-    for (let j = from; j < to; j++) {
-      const excess = cost[j]! - least;
-      if (excess > NEGLIGIBLE) continue;
-      const w = Math.exp(-excess / 2);
+    for (let k = 0; k < opened; k++) {
+      const excess = cost[k]! - least;
+      const w = excess > NEGLIGIBLE ? 0 : Math.exp(-excess / 2);
       evidence += w;
-      moment += w * (j - first + slideOf(work, j, r, g, b));
-      distance += w * cost[j]!;
+      moment += w * (open[k]! - first + slide[k]!);
+      distance += w * cost[k]!;
+      cost[k] = w;
     }
     const likelihood = Math.exp(-least / 2);
     const membership = likelihood / (likelihood + outlier);
-    for (let j = from; j < to; j++) {
-      const excess = cost[j]! - least;
-      if (excess > NEGLIGIBLE) continue;
-      const w = (membership * Math.exp(-excess / 2)) / evidence;
-      const s = slideOf(work, j, r, g, b);
+    for (let k = 0; k < opened; k++) {
+      if (cost[k] === 0) continue;
+      const j = open[k]!;
+      const w = (membership * cost[k]!) / evidence;
+      const s = slide[k]!;
       weight[j]! += w;
       sum[3 * j]! += w * (r - s * tangent[3 * j]!);
       sum[3 * j + 1]! += w * (g - s * tangent[3 * j + 1]!);

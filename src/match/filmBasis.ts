@@ -114,6 +114,23 @@ export function filmBasis(
   };
 }
 
+/** Every n-th row of a basis, the first `count` of them: the same optics at a coarser step. */
+export function thinnedBasis(basis: FilmBasis, n: number, count: number): FilmBasis {
+  const thin = (table: Float64Array) => {
+    const out = new Float64Array(count * ROW);
+    for (let j = 0; j < count; j++) out.set(table.subarray(j * n * ROW, (j * n + 1) * ROW), j * ROW);
+    return out;
+  };
+  return {
+    ...basis,
+    stepNm: basis.stepNm * n,
+    count,
+    table: thin(basis.table),
+    perIndex: thin(basis.perIndex),
+    perMired: thin(basis.perMired),
+  };
+}
+
 /** Temperatures a few mired to either side of a daylight, within the locus; null for a lamp. */
 export function miredNeighbours(light: Light): readonly [number, number] | null {
   if (!('daylightK' in light)) return null;

@@ -52,6 +52,8 @@ export function fitCamera(input: FitInput): CameraFit {
     weight: new Float64Array(labels),
     sum: new Float64Array(3 * labels),
     cost: new Float64Array(labels),
+    open: new Int32Array(labels),
+    slide: new Float64Array(labels),
     jacobian: new Float64Array(3 * PARAMETERS),
     hessian: new Float64Array(PARAMETERS * PARAMETERS),
     gradient: new Float64Array(PARAMETERS),
@@ -59,7 +61,7 @@ export function fitCamera(input: FitInput): CameraFit {
   };
   const sampleNm = new Float64Array(count);
   const parameters = Float64Array.from(input.start);
-  const rounds = ANNEALING.length + SETTLING_ROUNDS;
+  const rounds = ANNEALING.length + (input.scout ? 0 : SETTLING_ROUNDS);
   for (let round = input.near ? NEAR_FROM_ROUND : 0; round < rounds; round++) {
     const sd = Math.max(input.sampleSd, ANNEALING[round] ?? 0);
     drawChart(work, parameters);

@@ -27,6 +27,8 @@ export interface FitInput {
   readonly references: readonly ReferenceEvidence[];
   /** True when `start` is already near: the annealing is skipped. */
   readonly near?: boolean;
+  /** True to stop after the annealing: enough to tell which of several starts leads somewhere. */
+  readonly scout?: boolean;
   /** Allowed labels of each sample as [from, to) rows, or null for all: orders already settled by neighbours or pins. */
   readonly allowed?: Uint32Array | null;
 }
@@ -43,6 +45,9 @@ export interface Workspace {
   readonly weight: Float64Array;
   readonly sum: Float64Array;
   readonly cost: Float64Array;
+  /** Labels that could matter to a sample, and where in their stretch it comes nearest. */
+  readonly open: Int32Array;
+  readonly slide: Float64Array;
   readonly jacobian: Float64Array;
   readonly hessian: Float64Array;
   readonly gradient: Float64Array;
