@@ -69,7 +69,7 @@ export interface Calibration {
 const USUAL_MAX_NM = 1500;
 /** The fit looks no further: colours past it do not tell one camera from another. */
 const FIT_MAX_NM = 1500;
-const FIT_STEP_NM = 3;
+const FIT_STEP_NM = 2;
 const SAMPLES = 3000;
 /** What a chart colour may be off in calm, changing and lively surroundings, codes of 255: luma, chroma. */
 const CHART_ERRORS = [

@@ -24,7 +24,7 @@ export function assignSamples(
   sd: number,
   sampleNm: Float64Array,
 ): Assignment {
-  const { chart, weight, sum, cost, tangent, reach, open, slide } = work;
+  const { chart, weight, sum, cost, tangent, bend, reach, open, slide } = work;
   const { samples } = input;
   const labels = weight.length;
   const perAngle = work.basis.rowsPerAngle ?? labels;
@@ -60,9 +60,9 @@ export function assignSamples(
       const within = window + reach[j]!;
       if (cost[j]! > within * within) continue;
       const s = slideOf(work, j, r, g, b);
-      const dr = r - chart[3 * j]! - s * tangent[3 * j]!;
-      const dg = g - chart[3 * j + 1]! - s * tangent[3 * j + 1]!;
-      const db = b - chart[3 * j + 2]! - s * tangent[3 * j + 2]!;
+      const dr = r - chart[3 * j]! - s * (tangent[3 * j]! + s * bend[3 * j]!);
+      const dg = g - chart[3 * j + 1]! - s * (tangent[3 * j + 1]! + s * bend[3 * j + 1]!);
+      const db = b - chart[3 * j + 2]! - s * (tangent[3 * j + 2]! + s * bend[3 * j + 2]!);
       const d = (dr * dr + dg * dg + db * db) * perCode;
       cost[opened] = d;
       open[opened] = j;
@@ -95,9 +95,9 @@ export function assignSamples(
       const w = (membership * cost[k]!) / evidence;
       const s = slide[k]!;
       weight[j]! += w;
-      sum[3 * j]! += w * (r - s * tangent[3 * j]!);
-      sum[3 * j + 1]! += w * (g - s * tangent[3 * j + 1]!);
-      sum[3 * j + 2]! += w * (b - s * tangent[3 * j + 2]!);
+      sum[3 * j]! += w * (r - s * (tangent[3 * j]! + s * bend[3 * j]!));
+      sum[3 * j + 1]! += w * (g - s * (tangent[3 * j + 1]! + s * bend[3 * j + 1]!));
+      sum[3 * j + 2]! += w * (b - s * (tangent[3 * j + 2]! + s * bend[3 * j + 2]!));
     }
     total -= 2 * Math.log(likelihood + outlier);
     square += (membership * (distance / evidence)) / perCode;

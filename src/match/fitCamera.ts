@@ -24,7 +24,7 @@ export interface CameraFit {
 /** Noise scales of the annealed assignment, codes; after Ueda & Nakano 1998 (deterministic annealing EM). */
 const ANNEALING = [16, 12, 9, 7, 5, 4, 3, 2.5, 2, 1.5];
 /** Rounds at the final noise, and the round from which samples slide along the chart. */
-const SETTLING_ROUNDS = 8;
+const SETTLING_ROUNDS = 16;
 const SLIDE_FROM_ROUND = 5;
 /** Round at which a fit begins that starts near its end. */
 const NEAR_FROM_ROUND = 7;
@@ -48,6 +48,7 @@ export function fitCamera(input: FitInput): CameraFit {
     evaluator: modelEvaluator(input.model),
     chart: new Float64Array(3 * labels),
     tangent: new Float64Array(3 * labels),
+    bend: new Float64Array(3 * labels),
     reach: new Float64Array(labels),
     weight: new Float64Array(labels),
     sum: new Float64Array(3 * labels),

@@ -41,6 +41,8 @@ export interface Workspace {
   /** Change of the codes a label, and half its length: the stretch a label stands for. */
   readonly tangent: Float64Array;
   readonly reach: Float64Array;
+  /** Half the second difference of the codes: a stretch is an arc, and its chord would lie to one side of the colours. */
+  readonly bend: Float64Array;
   /** Soft count of samples assigned to each label, and the sum of their codes. */
   readonly weight: Float64Array;
   readonly sum: Float64Array;
@@ -57,7 +59,7 @@ export interface Workspace {
 
 /** Draws the chart at a parameter vector, with the stretch that each label stands for. */
 export function drawChart(work: Workspace, parameters: Float64Array): void {
-  const { chart, tangent, reach, evaluator } = work;
+  const { chart, tangent, bend, reach, evaluator } = work;
   const labels = reach.length;
   const { basis } = work;
   const perAngle = basis.rowsPerAngle ?? basis.count;
@@ -71,6 +73,10 @@ export function drawChart(work: Workspace, parameters: Float64Array): void {
     for (let c = 0; c < 3; c++) {
       const t = (chart[3 * after + c]! - chart[3 * before + c]!) / Math.max(1, after - before);
       tangent[3 * j + c] = t;
+      bend[3 * j + c] =
+        after - before === 2
+          ? (chart[3 * after + c]! - 2 * chart[3 * j + c]! + chart[3 * before + c]!) / 2
+          : 0;
       square += t * t;
     }
     reach[j] = Math.sqrt(square) / 2;

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { wavelengths } from '../../src/colour/sampled.ts';
 import { angleBasis, bareRow, stackBases } from '../../src/match/angleBasis.ts';
 import { angleCursor } from '../../src/match/angleCharts.ts';
-import { filmBasis } from '../../src/match/filmBasis.ts';
+import { COMPONENTS, filmBasis, ROW } from '../../src/match/filmBasis.ts';
 import { SHARP } from '../../src/optics/blur.ts';
 import { filmStackFor } from '../../src/optics/filmPresets.ts';
 
@@ -24,7 +24,7 @@ describe('bases between computed angles', () => {
       const exact = basisAt(degrees * DEGREE);
       const mixed = between.at(degrees * DEGREE);
       // Component 0 of each channel is its mean sensitivity: a positive sum, unlike the family's components.
-      for (let at = 0; at < exact.table.length; at += 4) {
+      for (let at = 0; at < exact.table.length; at += COMPONENTS) {
         expect(Math.abs(mixed.table[at]! / exact.table[at]! - 1)).toBeLessThan(2.5e-3);
       }
     }
@@ -36,8 +36,8 @@ describe('bases between computed angles', () => {
     const stacked = stackBases([one, other], bareRow(other));
     expect(stacked.count).toBe(243);
     expect(stacked.rowsPerAngle).toBe(121);
-    expect(stacked.table.slice(121 * 12, 122 * 12)).toEqual(other.table.slice(0, 12));
-    expect(stacked.table.slice(242 * 12)).toEqual(other.table.slice(0, 12));
+    expect(stacked.table.slice(121 * ROW, 122 * ROW)).toEqual(other.table.slice(0, ROW));
+    expect(stacked.table.slice(242 * ROW)).toEqual(other.table.slice(0, ROW));
   });
 });
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { SENSOR_DEPARTURES } from '../../src/colour/sensorDepartures.ts';
 import {
   atNextPhoto,
   type CameraKnowledge,
@@ -60,8 +61,9 @@ function asFit(mean: Float64Array, covariance: Float64Array) {
 }
 
 describe('what is kept of a camera', () => {
-  it('takes sensor, tone and matrix out of a fit, and nothing of gains, veil, light or index', () => {
-    expect(KEPT).toBe(18);
+  it('takes sensor, tone, matrix and departures out of a fit, and nothing of gains, veil, light or index', () => {
+    expect(KEPT).toBe(18 + 3 * SENSOR_DEPARTURES);
+    expect(KEPT_PLACES).toContain(AT.departure);
     for (const place of [AT.logGain, AT.veil, AT.index, AT.mired]) expect(KEPT_PLACES).not.toContain(place);
     const whole = {
       parameters: Float64Array.from({ length: PARAMETERS }, (_, p) => p),
