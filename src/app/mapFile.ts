@@ -1,7 +1,7 @@
 import type { ThicknessMap } from '../match/types.ts';
 import { mapKeyColours, niceTop, paintMap, thicknessRamp } from '../record/thicknessColours.ts';
 import { ticksTo } from './reading/ticks.ts';
-import { inTurns } from './turns.ts';
+import { inTurns, pause } from './turns.ts';
 
 /** Largest canvas that phones give, pixels (some stop at 16.7 million). */
 const MOST_PIXELS = 16_000_000;
@@ -85,7 +85,9 @@ export async function mapFile(map: ThicknessMap, foot: string): Promise<Blob> {
   context.scale(scale, scale);
   context.fillStyle = '#ffffff';
   context.fillRect(0, 0, map.width, map.height + legendHeight);
+  await pause();
   const topNm = niceTop(map);
+  await pause();
   const breathe = inTurns();
   for (let y = 0; y < map.height; y += BAND) {
     const rows = Math.min(BAND, map.height - y);
@@ -105,6 +107,7 @@ export async function mapFile(map: ThicknessMap, foot: string): Promise<Blob> {
     }
     await breathe();
   }
+  await pause();
   drawLegend(context, { width: map.width, top: map.height, unit }, topNm, foot);
   return new Promise((resolve, reject) => {
     canvas.toBlob(
