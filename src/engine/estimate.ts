@@ -1,5 +1,6 @@
 import { activityMap } from '../match/activity.ts';
 import { type CandidateField, MOST_CANDIDATES, makeCandidateField } from '../match/candidates.ts';
+import { widenAtEdges } from '../match/edgeIntervals.ts';
 import { finishAngleRows, finishRows } from '../match/finishRows.ts';
 import { fillCandidates, type MapRows, makeMapRows, mapRows, type SettledField } from '../match/mapPixels.ts';
 import { mendSpeckles } from '../match/mendSpeckles.ts';
@@ -68,6 +69,7 @@ export function readBand(
     const cosineAt = cosineReader(angles.view, task.firstRow);
     finishAngleRows(rows, pixels.width, angles.charts, cosineAt, rules, ownShare);
   } else finishRows(rows, charts[0]!, rules, ownShare);
+  widenAtEdges(rows, pixels.width);
   return rows;
 }
 
