@@ -4,6 +4,7 @@ import type { MapRows } from './mapPixels.ts';
 const REACH_PX = 2;
 /** Thicknesses this far apart, nm, are two sides of an edge and no slope. */
 const EDGE_NM = 30;
+const HALF_NM = EDGE_NM / 2;
 
 /**
  * Beside an edge a pixel's colour is a mixture, and its thickness may be that of either side or lie between: there the
@@ -18,6 +19,15 @@ export function widenAtEdges(rows: MapRows, width: number): void {
       const i = y * width + x;
       let least = thicknessNm[i]!;
       if (Number.isNaN(least)) continue;
+      // Quick way out for the smooth majority: no step of half an edge on either side, along or across.
+      const own = least;
+      if (
+        Math.abs(thicknessNm[i - REACH_PX]! - own) < HALF_NM &&
+        Math.abs(thicknessNm[i + REACH_PX]! - own) < HALF_NM &&
+        Math.abs(thicknessNm[i - REACH_PX * width]! - own) < HALF_NM &&
+        Math.abs(thicknessNm[i + REACH_PX * width]! - own) < HALF_NM
+      )
+        continue;
       let most = least;
       for (let k = 0; k < offsets.length; k++) {
         // A neighbour without a thickness is NaN, which is neither less nor more.

@@ -113,7 +113,10 @@ export function mapRows(
 ): void {
   const { width } = pixels;
   const nearby = new Float64Array(4);
+  const half = settled ? settled.spacing >> 1 : 0;
   for (let y = rows.fromRow; y < rows.toRow; y++) {
+    // The settled places about a pixel stay the same for as many pixels as lie between them.
+    let aboutColumn = -2;
     for (let x = 0; x < width; x++) {
       const pixel = y * width + x;
       const out = (y - rows.fromRow) * width + x;
@@ -131,9 +134,13 @@ export function mapRows(
       let chosen = 0;
       let margin = Number.POSITIVE_INFINITY;
       if (count > 1 && settled) {
-        const neighbours = settledAround(settled, x, y, nearby);
-        chosen = choose(records, offset, count, scale, nearby, neighbours.count);
-        margin = neighbours.margin;
+        const column = Math.floor((x - half) / settled.spacing);
+        if (column !== aboutColumn) {
+          settledAround(settled, column, Math.floor((y - half) / settled.spacing), nearby);
+          aboutColumn = column;
+        }
+        chosen = choose(records, offset, count, scale, nearby, NEIGHBOURS.count);
+        margin = NEIGHBOURS.margin;
       } else if (count > 1) {
         margin = (records[offset + 2 + MODE_FIELDS + 3]! - records[offset + 2 + 3]!) / 2;
       }
@@ -156,16 +163,8 @@ function noAnswer(rows: MapRows, at: number, status: PixelStatus): void {
   rows.order[at] = 255;
 }
 
-/** Settled thicknesses of the four places about a pixel into `out`; how many, and the least margin among them. */
-function settledAround(
-  settled: SettledField,
-  x: number,
-  y: number,
-  out: Float64Array,
-): { count: number; margin: number } {
-  const half = settled.spacing >> 1;
-  const left = Math.floor((x - half) / settled.spacing);
-  const top = Math.floor((y - half) / settled.spacing);
+/** Settled thicknesses of the four places from (left, top) on into `out`; `NEIGHBOURS` tells how many, and the least margin. */
+function settledAround(settled: SettledField, left: number, top: number, out: Float64Array): void {
   let margin = Number.POSITIVE_INFINITY;
   let count = 0;
   const reach = settled.spacing === 1 ? 1 : 2;
@@ -182,7 +181,6 @@ function settledAround(
   }
   NEIGHBOURS.count = count;
   NEIGHBOURS.margin = margin;
-  return NEIGHBOURS;
 }
 
 const NEIGHBOURS = { count: 0, margin: 0 };

@@ -51,8 +51,9 @@ export function smoothRows(rows: MapRows, width: number, reach: 1 | 2, bareNm = 
         const mean = (source[a]! + source[b]!) / 2;
         const gap = mean - centre;
         if (gap * gap > agree * (own + spread)) continue;
-        weight += 1 / spread;
-        sum += mean / spread;
+        const precision = 1 / spread;
+        weight += precision;
+        sum += mean * precision;
       }
       const moved = sum / weight;
       thicknessNm[i] = moved;
