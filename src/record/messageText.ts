@@ -1,3 +1,4 @@
+import { ANSWER_WORDS, amountAnswer } from './amountAnswer.ts';
 import {
   areaFigures,
   codeVolumeFigures,
@@ -47,7 +48,9 @@ function amountLines({ result, slickByEye }: Observation): string[] {
     const oiled = coverage === undefined ? '' : `, ${percentWords(coverage)} of that oiled`;
     lines.push(`By eye ${lengthM} metres long, ${widthM} ${plural('metre', widthM)} wide${oiled}.`);
   }
-  if (result?.byThickness) {
+  const answer = result && amountAnswer(result);
+  if (answer === 'noOil' || answer === 'noAnswer') lines.push(`${ANSWER_WORDS[answer]}.`);
+  if (answer === 'figures' && result?.byThickness) {
     const { least, best, most, unit } = areaFigures(result.byThickness.oiledM2);
     const coverage = result.area?.coverage;
     const share = coverage == null ? '' : `; ${percentWords(coverage)} of the water is oiled`;

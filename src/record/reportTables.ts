@@ -1,4 +1,5 @@
 import { APPEARANCE_CODE_SCOPE, APPEARANCES } from '../tally/appearanceCode.ts';
+import { ANSWER_WORDS, amountAnswer } from './amountAnswer.ts';
 import { html, type SafeHtml } from './html.ts';
 import { areaFigures, codeVolumeFigures, percentWords, plural, volumeFigures } from './inWords.ts';
 import type { Observation, RecordedResult } from './observation.ts';
@@ -7,8 +8,10 @@ import type { Observation, RecordedResult } from './observation.ts';
 export function amountTables({ result, slickByEye, viewpoint }: Observation): SafeHtml {
   if (!result) return html`<p class="report-none">No result is in this record.</p>`;
   const eye = slickByEye?.lengthM !== undefined && slickByEye.widthM !== undefined ? slickByEye : null;
-  return html`${(result.byThickness || result.byCode) && volumeTable(result)}
-${result.byThickness && areaTable(result)}
+  const answer = amountAnswer(result);
+  const said = answer === 'noOil' || answer === 'noAnswer' ? ANSWER_WORDS[answer] : null;
+  return html`${said ? html`<p>${said}.</p>` : (result.byThickness || result.byCode) && volumeTable(result)}
+${!said && result.byThickness && areaTable(result)}
 ${eye && html`<p>By eye ${eye.lengthM} m × ${eye.widthM} m${eye.coverage === undefined ? '' : `, ${percentWords(eye.coverage)} oiled`}.</p>`}
 ${result.byCode && shareTable(result.byCode)}
 ${result.byCode && viewpoint.from !== 'aircraft' && html`<p class="report-small">${APPEARANCE_CODE_SCOPE}</p>`}

@@ -8,6 +8,7 @@ import {
   volumeFigures,
 } from '../../src/record/inWords.ts';
 import { messageText } from '../../src/record/messageText.ts';
+import { reportDocument } from '../../src/record/report.ts';
 import { resultsCsv } from '../../src/record/resultsCsv.ts';
 import { notebookObservation, quayObservation } from './sample.ts';
 
@@ -101,4 +102,21 @@ test('the table of results: every row as wide as the header, figures unrounded i
   );
   expect(lines).toContain('record,latitude,47.251,,,deg,exif');
   expect(lines).toContain('not_known,,Who has been told.,,,,');
+});
+
+test('no oil, and no answer, are said as such and never as a nought', () => {
+  const { result, ...rest } = quayObservation();
+  const none = { least: 0, best: 0, most: 0 };
+  const empty = {
+    ...result!,
+    byThickness: { ...result!.byThickness!, volumeM3: none, oiledM2: none, meanThicknessNm: null },
+    byCode: null,
+  };
+  const bare = { ...rest, result: { ...empty, area: { ...result!.area!, coverage: 0 } } };
+  expect(messageText(bare)).toContain('No oil was read on the water that was looked at.');
+  expect(messageText(bare)).not.toMatch(/0 to 0/);
+  const unread = { ...rest, result: { ...empty, area: { ...result!.area!, coverage: null } } };
+  expect(messageText(unread)).toContain('none of the water that was looked at gave an answer.');
+  expect(reportDocument(unread)).toContain('none of the water that was looked at gave an answer.');
+  expect(reportDocument(unread)).not.toContain('<caption>Area</caption>');
 });

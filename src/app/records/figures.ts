@@ -1,3 +1,4 @@
+import { ANSWER_WORDS, amountAnswer } from '../../record/amountAnswer.ts';
 import { areaFigures, codeVolumeFigures, plural, volumeFigures } from '../../record/inWords.ts';
 import type { Observation, ObservedPosition } from '../../record/observation.ts';
 
@@ -11,7 +12,14 @@ export interface Figure {
 export function figuresOf({ result, slickByEye }: Observation): Figure[] {
   const figures: Figure[] = [];
   const { byThickness, byCode, area, summary } = result ?? {};
-  if (byThickness) {
+  const answer = result && amountAnswer(result);
+  if (answer === 'noOil' || answer === 'noAnswer') {
+    figures.push({
+      name: 'Oiled area',
+      value: answer === 'noOil' ? 'no oil read' : 'no answer',
+      more: `${ANSWER_WORDS[answer]}.`,
+    });
+  } else if (byThickness) {
     const oiled = areaFigures(byThickness.oiledM2);
     const coverage = area?.coverage;
     figures.push({
