@@ -1,7 +1,7 @@
 import { computed, effect, signal } from '@preact/signals';
 import type { EstimateResult } from '../engine/contract.ts';
+import { withWholeView } from '../engine/partialView.ts';
 import type { Setup } from '../engine/setup.ts';
-import { withWholeView } from '../engine/setupView.ts';
 import type { TallyOptions, TallyReport } from '../engine/tallyContract.ts';
 import type { AppearanceCode, AppearanceShares } from '../tally/appearanceCode.ts';
 import { withObserverShares } from '../tally/appearanceShares.ts';

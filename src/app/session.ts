@@ -1,8 +1,8 @@
 import { effect } from '@preact/signals';
 import { Cancelled, type Job } from '../engine/contract.ts';
 import type { Engine } from '../engine/engine.client.ts';
+import { withWholeView } from '../engine/partialView.ts';
 import type { Setup } from '../engine/setup.ts';
-import { withWholeView } from '../engine/setupView.ts';
 import { keepPhoto } from './keep.ts';
 import {
   begin,

@@ -1,12 +1,12 @@
 import { computed, signal } from '@preact/signals';
-import type { Point, ViewSetup } from '../engine/setup.ts';
 import {
   type LensFacts,
   type MissingView,
   missingOfView,
   type SketchedView,
   sketchView,
-} from '../engine/setupView.ts';
+} from '../engine/partialView.ts';
+import type { Point, ViewSetup } from '../engine/setup.ts';
 import { change, draftSetup, image, selected, setup } from './state.ts';
 
 /** How a person tells where the camera looked. */

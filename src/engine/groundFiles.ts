@@ -10,9 +10,9 @@ import { straightDownFromPixelSize } from '../view/straightDown.ts';
 import { dropExcluded, viewStatus } from '../view/viewLimits.ts';
 import { groundAreaField, incidenceField } from '../view/waterFields.ts';
 import { groundAt, placeOf, type WaterView } from '../view/waterView.ts';
+import { missingOfView } from './partialView.ts';
 import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import type { PositionSetup, Setup } from './setup.ts';
-import { missingOfView } from './setupView.ts';
 
 /** Where the photo was taken and how it looked, as far as known. */
 export interface GroundFacts {

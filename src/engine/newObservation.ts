@@ -12,9 +12,9 @@ import {
   type ViewpointKind,
 } from '../record/observation.ts';
 import { sunPosition } from '../view/sun.ts';
+import { withWholeView } from './partialView.ts';
 import { photoViewOf, withPhotoFocal } from './photoView.ts';
 import type { Setup } from './setup.ts';
-import { withWholeView } from './setupView.ts';
 
 export interface NewObservation {
   readonly id: string;

@@ -50,14 +50,15 @@ export function photoViewOf(setup: Setup, widthPx: number, heightPx: number): Ph
   const given = setup.view;
   if (!given) return null;
   try {
-    return viewOf(given, widthPx, heightPx);
+    return viewOver(given, widthPx, heightPx);
   } catch (error) {
     if (error instanceof RangeError) throw new SetupError(error.message);
     throw error;
   }
 }
 
-function viewOf(given: ViewSetup, widthPx: number, heightPx: number): PhotoView {
+/** The same for a view alone. @throws RangeError, SetupError with a sentence that says what to do */
+export function viewOver(given: ViewSetup, widthPx: number, heightPx: number): PhotoView {
   const sd = sdOf(given, widthPx, heightPx);
   const size = { widthPx, heightPx, sd };
   const focalPx = focalPxOf(given, widthPx, heightPx);
@@ -81,8 +82,8 @@ function viewOf(given: ViewSetup, widthPx: number, heightPx: number): PhotoView 
   let heightM = given.heightM ?? 1;
   let view = lookingFrom(given, camera, heightM);
   if (settling) {
-    // The dip of the horizon depends weakly on the height that is sought: twice round settles it.
-    for (let round = 0; round < 2; round++) {
+    // The dip of the horizon depends weakly on the height that is sought: three times round settle it to a millimetre.
+    for (let round = 0; round < 3; round++) {
       heightM = scaleFromLength(view, ...settling.ends, settling.lengthM).impliedHeightM;
       view = lookingFrom(given, camera, heightM);
     }

@@ -1,6 +1,6 @@
 import { useEffect, useState } from 'preact/hooks';
+import { missingOfView } from '../../engine/partialView.ts';
 import type { ExportKind } from '../../engine/recordJobs.ts';
-import { missingOfView } from '../../engine/setupView.ts';
 import type { Observation } from '../../record/observation.ts';
 import { Icon, type IconName } from '../parts/Icon.tsx';
 import { attempt, show, shown } from './desk.ts';

@@ -1,5 +1,5 @@
+import type { SketchedView } from '../../engine/partialView.ts';
 import type { Point } from '../../engine/setup.ts';
-import type { SketchedView } from '../../engine/setupView.ts';
 import { horizonDipRad, horizonInPhoto } from '../../view/horizon.ts';
 import { LIMIT_RAD, WARNING_RAD } from '../../view/viewLimits.ts';
 import { incidenceAtRad, placeOf, type WaterView } from '../../view/waterView.ts';

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
+import { missingOfView, sketchView, withWholeView } from '../../src/engine/partialView.ts';
 import type { ViewSetup } from '../../src/engine/setup.ts';
-import { missingOfView, sketchView, withWholeView } from '../../src/engine/setupView.ts';
 import { demoHarbour } from '../../src/scene/demoScenes.ts';
 import { groundAt, groundDistanceM } from '../../src/view/waterView.ts';
 
