@@ -1,24 +1,24 @@
-import { orderBoundaries, orderOf } from '../chart/orders.ts';
+import { orderBoundaries } from '../chart/orders.ts';
 import { matrixMaker } from '../colour/cameraMatrix.ts';
 import { FILM_WAVELENGTHS_NM } from '../colour/sampled.ts';
 import type { ActivityMap } from '../match/activity.ts';
-import { buildCodeCharts, type ThicknessScale } from '../match/buildCodeChart.ts';
 import { withCamera } from '../match/cameraKnowledge.ts';
 import type { CameraModel } from '../match/cameraModel.ts';
 import type { CodeChart } from '../match/codeChart.ts';
 import { type CommonError, commonError } from '../match/commonError.ts';
 import { type FilmBasis, type FilmScene, filmBasis, pathRatio, thinnedBasis } from '../match/filmBasis.ts';
-import { type CameraFit, type FitInput, fitCamera } from '../match/fitCamera.ts';
+import { type CameraFit, fitCamera } from '../match/fitCamera.ts';
 import type { ReadingRules } from '../match/mapPixels.ts';
 import { observerBasis } from '../match/observerBasis.ts';
 import { AT, FIXED_CAMERA, type Prior, statedPrior } from '../match/parameters.ts';
-import { type FilmSample, SAMPLE_VARIANCE_SHARE, sampleFilm } from '../match/sampleFilm.ts';
+import { sampleFilm } from '../match/sampleFilm.ts';
 import type { PhotoPixels } from '../photo/types.ts';
 import { planAngles } from './anglePlan.ts';
 import { assumedIncidence } from './assumedIncidence.ts';
-import { bareLimits } from './bareLimits.ts';
 import type { FitReport, Notice } from './contract.ts';
 import { describeFit } from './describeFit.ts';
+import { drawCharts, OUTSIDE_FAMILY, scaleOf } from './drawCharts.ts';
+import { fitInput } from './fitInput.ts';
 import {
   fitWithFallback,
   LEAST_SPAN_KNOWN_NM,
@@ -30,7 +30,8 @@ import { cameraOfFilm, type FittedCamera } from './keptCamera.ts';
 import { isOtherCamera, keptName, knownCamera } from './knownCamera.ts';
 import { photoViewOf } from './photoView.ts';
 import { canBeBare, prepareScene } from './prepareScene.ts';
-import { type References, readReferences } from './references.ts';
+import { rulesFor, withBareLimits } from './readingRules.ts';
+import { readReferences } from './references.ts';
 import { resolvableRange } from './resolvable.ts';
 import {
   angleCharts,
@@ -71,28 +72,8 @@ const USUAL_MAX_NM = 1500;
 const FIT_MAX_NM = 1500;
 const FIT_STEP_NM = 2;
 const SAMPLES = 3000;
-/** What a chart colour may be off in calm, changing and lively surroundings, codes of 255: luma, chroma. */
-const CHART_ERRORS = [
-  { luma: 1.2, chroma: 1.2 },
-  { luma: 1.5, chroma: 2 },
-  { luma: 3, chroma: 5 },
-] as const;
-/** Share of its weight that a sample keeps, because samples share errors of compression and processing. */
-const SAMPLE_WEIGHT = 0.05;
-/** What a sampled colour may be off for reasons other than noise, codes of 255. */
-const SAMPLE_ERROR = 2;
-/**
- * Relative scale error left by cameras that are not of the family: 0.3 % is 1.7 nm in the place of a sensor's peak.
- * Set on seeded scenes with sensors outside the family.
- */
-const OUTSIDE_FAMILY = 0.003;
 /** Fitted covariances are widened by this: cameras are not exactly of the family (set on seeded scenes, `npm run validate`). */
 const COVARIANCE_FACTOR = 2;
-/** Squared distance (in noise) of colours that are no film: about 18 codes. */
-const OUTLIER_DISTANCE = 100;
-/** Oil thinner than this cannot be told from bare water by eye or camera (the codes start at 40 nm). */
-const BARE_NM = 8;
-const AMBIGUITY_MARGIN = 0.7;
 export type OnStep = (share: number, step: string) => void;
 
 /**
@@ -258,60 +239,4 @@ export function calibrate(
     camera,
     notices,
   };
-}
-
-function withBareLimits(seen: SeenAngles, pixels: PhotoPixels, leftOut: Uint8Array | null): SeenAngles {
-  return { ...seen, charts: { ...seen.charts, bareNm: bareLimits(pixels, leftOut, seen, BARE_NM) } };
-}
-
-function rulesFor(setup: Setup, scene: FilmScene, resolvableNm: number): ReadingRules {
-  return {
-    outlierDistance: OUTLIER_DISTANCE,
-    bareNm: canBeBare(setup, scene.stack) ? BARE_NM : 0,
-    resolvableNm,
-    ambiguityMargin: AMBIGUITY_MARGIN,
-  };
-}
-
-/** One chart for each activity class, at a fitted camera. */
-function drawCharts(
-  model: CameraModel,
-  fit: CameraFit,
-  scene: FilmScene,
-  noise: Float64Array,
-  nominalOrdersNm: readonly number[],
-  angleSd: { readonly relative: number; readonly brightness: number },
-): CodeChart[] {
-  const scale = scaleOf(scene, fit, Math.hypot(OUTSIDE_FAMILY, angleSd.relative));
-  const boundaries = nominalOrdersNm.map((d) => d * scale.factor);
-  const codes = [noise[0]!, noise[1]!, noise[2]!] as const;
-  const noises = CHART_ERRORS.map((error) => ({ codes, ...error, brightness: angleSd.brightness }));
-  return buildCodeCharts(model, fit, noises, scale, (d) => orderOf(d, boundaries));
-}
-
-function scaleOf(scene: FilmScene, fit: CameraFit, relativeSd: number): ThicknessScale {
-  const shift = fit.parameters[AT.index]!;
-  const perIndex = -1 / (scene.stack.film.refractiveIndex(550) + shift);
-  return { factor: pathRatio(scene, shift), perIndex, relativeSd };
-}
-
-function fitInput(
-  model: CameraModel,
-  prior: Prior,
-  sample: FilmSample,
-  references: References,
-): Omit<FitInput, 'start'> {
-  return {
-    model,
-    prior,
-    samples: sample.codes,
-    sampleWeight: SAMPLE_WEIGHT,
-    references: references.evidence,
-    sampleSd: sampleSd(sample),
-  };
-}
-
-function sampleSd(sample: FilmSample): number {
-  const noise = Math.hypot(...sample.pixelNoise) / Math.sqrt(3);
-  return Math.hypot(noise * Math.sqrt(SAMPLE_VARIANCE_SHARE), SAMPLE_ERROR);
 }
