@@ -178,7 +178,7 @@ describe('a kept camera as data', () => {
     const setup = { film: 'soap', camera: { fit: true, kept: kept[0]! } };
     expect(parseSetup(JSON.parse(JSON.stringify(setup)))).toEqual(setup);
     const bad = (kept: unknown) => () => parseSetup({ film: 'soap', camera: { fit: true, kept } });
-    expect(bad({ ...kept[0], mean: [1, 2] })).toThrow(/camera\.kept\.mean.*18 numbers/);
+    expect(bad({ ...kept[0], mean: [1, 2] })).toThrow(/camera\.kept\.mean.*36 numbers/);
     expect(bad({ ...kept[0], lens: 'wide' })).toThrow(/no key "camera\.kept\.lens"/);
     expect(bad({ ...kept[0], covariance: kept[0]!.covariance.map((v) => -v) })).toThrow(/not a covariance/);
     expect(bad({ ...kept[0], version: 9 })).toThrow(/camera\.kept\.version/);
