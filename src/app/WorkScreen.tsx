@@ -53,7 +53,9 @@ export function WorkScreen() {
   const current = steps.includes(step.value) ? step.value : 'map';
   // Pins are set on the map itself, those of an order on the map of orders.
   const pins = current === 'mark' && (marking.value === 'bare' || marking.value === 'order');
-  const mapShown = pins && marking.value === 'order' ? 'order' : mapView.value;
+  // The amount goes by thickness, whatever the map step shows.
+  const mapShown =
+    pins && marking.value === 'order' ? 'order' : current === 'amount' ? 'thickness' : mapView.value;
   const picture = useMapPicture(measured?.map ?? preview.value, mapShown);
   useEffect(followMarks, []);
   const busy = progress.value;
@@ -92,7 +94,11 @@ export function WorkScreen() {
           mapShown === 'order' ? (
             <OrderScale ramp={picture.ramp} orders={picture.orders} />
           ) : (
-            <Scale ramp={picture.ramp} topNm={picture.topNm} probe={probe.value} />
+            <Scale
+              ramp={picture.ramp}
+              topNm={picture.topNm}
+              probe={current === 'amount' ? null : probe.value}
+            />
           )
         ) : null}
         {/* A new element for each step, so that each begins at its top. */}

@@ -1,4 +1,5 @@
 /** Figures of an observation in words: units spelt out, no more digits than the interval allows. */
+import type { EstimateSummary } from '../engine/contract.ts';
 import { formatInterval } from '../tally/rounding.ts';
 import { inUnit, readableAreaUnit, readableVolumeUnit, type Unit } from '../tally/units.ts';
 import type { Spread } from '../tally/volumeByThickness.ts';
@@ -159,6 +160,14 @@ export function twoDigits(value: number): string {
 export function percentWords(share: number): string {
   const percent = 100 * share;
   return percent > 0 && percent < 1 ? 'under 1 percent' : `${Math.round(percent)} percent`;
+}
+
+/** Film as a share of the pixels that gave an answer, for a photo without a scale; null where none did. */
+export function pixelCoverageWords({ counts, quantilesNm }: EstimateSummary): string | null {
+  const film = counts.measured + counts.ambiguous + counts.atLeast;
+  const read = film + counts.bare;
+  if (read === 0 || !quantilesNm) return null;
+  return `Film on ${percentWords(film / read)} of the part of the photo that was read.`;
 }
 
 /** The unit in words for a printed figure: "1 litre", "0.5 litres", "84 millilitres", "3 barrels (42 US gallons)". */

@@ -1,9 +1,12 @@
+import { thicknessQuantiles } from '../tally/rounding.ts';
 import { ANSWER_WORDS, amountAnswer } from './amountAnswer.ts';
+import { filmName } from './filmWords.ts';
 import {
   areaFigures,
   codeVolumeFigures,
   conditionWords,
   percentWords,
+  pixelCoverageWords,
   plural,
   positionWords,
   timeWords,
@@ -20,17 +23,21 @@ const MOST_UNKNOWN = 4;
  * Lines about what is not in the record say so or are left out.
  */
 export function messageText(observation: Observation): string {
+  const isBench = observation.viewpoint.from === 'bench';
   return [
-    `Film on water, indicative report. ${observation.title}.`.replace(/\.\.$/, '.'),
+    `${isBench ? 'Liquid film' : 'Film on water'}, indicative report. ${observation.title}.`.replace(
+      /\.\.$/,
+      '.',
+    ),
     observation.time ? `Seen ${timeWords(observation.time)}.` : 'Time not known.',
     positionLine(observation),
     `Seen ${viewpointWords(observation.viewpoint)}.`,
-    observation.substance ? `Oil type: ${observation.substance.name}.` : 'Oil type not known.',
-    ...amountLines(observation),
+    isBench ? '' : oilLine(observation),
+    ...(isBench ? thicknessLines(observation) : amountLines(observation)),
     sentence(conditionWords(observation.conditions)),
     observation.lookAlikes?.reason ?? '',
     unknownLine(observation.notKnown),
-    'Figures are indicative; the responsible authority decides.',
+    isBench ? 'Figures are indicative.' : 'Figures are indicative; the responsible authority decides.',
   ]
     .filter((line) => line !== '')
     .join('\n');
@@ -41,7 +48,24 @@ function positionLine({ position, leftOut, placeName }: Observation): string {
   return `Position ${positionWords(position)}${placeName ? `, ${placeName}` : ''}.`;
 }
 
-function amountLines({ result, slickByEye }: Observation): string[] {
+/** What it is, or else as what its colours were read: a title that names an oil is not taken for knowledge. */
+function oilLine({ substance, setup }: Observation): string {
+  if (substance) return `Oil type: ${substance.name}.`;
+  if (!setup) return 'Oil type not known.';
+  const name = filmName(setup.film);
+  return `Oil type not known; colours read as ${name[0]!.toLowerCase()}${name.slice(1)}.`;
+}
+
+/** Thickness alone, where there is no more to say. */
+function thicknessLines({ result }: Observation): string[] {
+  const quantiles = result?.summary?.quantilesNm;
+  if (!quantiles) return ['Thickness not known.'];
+  const { p05, p50, p95 } = thicknessQuantiles(quantiles);
+  return [`Thickness: median ${p50} nanometres, nine tenths of the pixels from ${p05} to ${p95}.`];
+}
+
+function amountLines(observation: Observation): string[] {
+  const { result, slickByEye } = observation;
   const lines: string[] = [];
   if (slickByEye?.lengthM !== undefined && slickByEye.widthM !== undefined) {
     const { lengthM, widthM, coverage } = slickByEye;
@@ -66,7 +90,10 @@ function amountLines({ result, slickByEye }: Observation): string[] {
     const atLeast = result.byCode.atLeast ? 'at least ' : '';
     lines.push(`Volume by appearance code ${atLeast}${least} to ${most} ${plural(unit.name, most)}.`);
   }
-  if (lines.length === 0) lines.push('Amount not known.');
+  if (lines.length > 0) return lines;
+  lines.push('Amount not known.');
+  const coverage = result?.summary && pixelCoverageWords(result.summary);
+  if (coverage) lines.push(coverage, ...thicknessLines(observation));
   return lines;
 }
 

@@ -27,7 +27,7 @@ const QUESTIONS: readonly Unknown[] = [
   (o) => isOnWater(o) && o.conditions.windMS === undefined && 'The speed of the wind.',
   (o) => isOnWater(o) && o.conditions.windFromDeg === undefined && 'The direction of the wind.',
   (o) => isOnWater(o) && o.conditions.seaState === undefined && 'The state of the sea.',
-  ({ conditions }) => !conditions.sky && 'The sky.',
+  (o) => isOnWater(o) && !o.conditions.sky && 'The sky.',
   (o) => isOnWater(o) && !o.conditions.sun && !o.leftOut.includes('position') && 'Where the sun stood.',
   ({ conditions, photo }) =>
     photo && !conditions.polariser && 'Whether a polariser, or polarised glass, was in front of the lens.',

@@ -1,5 +1,6 @@
 import { APPEARANCE_CODE_SCOPE } from '../tally/appearanceCode.ts';
 import { SAFETY_CAUTIONS, USE_CAUTIONS } from '../tally/cautions.ts';
+import { filmName } from './filmWords.ts';
 import { type HtmlPart, html, SafeHtml } from './html.ts';
 import { conditionWords, positionWords, sourceWords, timeWords, viewpointWords } from './inWords.ts';
 import { legendSvg } from './legendSvg.ts';
@@ -16,8 +17,6 @@ export interface ReportPicture {
 
 export interface ReportOptions {
   readonly picture?: ReportPicture | null;
-  /** The film of the set-up as a person calls it. */
-  readonly filmName?: string;
 }
 
 const BENCH_CAUTION =
@@ -38,7 +37,7 @@ export function reportMarkup(observation: Observation, options: ReportOptions = 
 <div class="report-columns">
 ${picture(observation, options)}
 ${amountTables(observation)}
-<section><h2>Record</h2>${pairs(recordPairs(observation, options))}</section>
+<section><h2>Record</h2>${pairs(recordPairs(observation))}</section>
 <section><h2>Conditions</h2>${list(conditionWords(observation.conditions), 'None noted.')}</section>
 <section><h2>Not known</h2>${list(observation.notKnown, 'Nothing that is usually recorded is missing.')}</section>
 ${result && result.reasons.length > 0 && html`<section><h2>Why the two methods differ</h2>${list(result.reasons.map(({ text }) => text))}</section>`}
@@ -88,7 +87,7 @@ function picture({ photo, result }: Observation, { picture: given }: ReportOptio
   return html`<figure><img src="${given.url}" alt="Map of film thickness"><figcaption>Film thickness.${calibrated}</figcaption>${legendSvg(given.topNm)}</figure>`;
 }
 
-function recordPairs(o: Observation, { filmName }: ReportOptions): readonly (readonly [string, HtmlPart])[] {
+function recordPairs(o: Observation): readonly (readonly [string, HtmlPart])[] {
   const { time, position, observer, substance, setup } = o;
   const lensNotes = o.viewpoint.heightM ? ` (height ${sourceWords(o.viewpoint.heightM.source)})` : '';
   return [
@@ -105,7 +104,7 @@ function recordPairs(o: Observation, { filmName }: ReportOptions): readonly (rea
     ['Observer', [observer.role, observer.organisation, observer.platform].filter(Boolean).join(', ')],
     ['Incident', observer.incident],
     ['Oil type', substance && `${substance.name}${substance.howKnown ? `, ${substance.howKnown}` : ''}`],
-    ['Read as', filmName ?? (typeof setup?.film === 'string' ? setup.film : setup && 'a film of their own')],
+    ['Read as', setup && filmName(setup.film)],
     ['Look-alikes', o.lookAlikes?.reason],
     ['Camera fit', o.result?.summary?.fit?.advice],
     [
@@ -118,7 +117,7 @@ function recordPairs(o: Observation, { filmName }: ReportOptions): readonly (rea
 function footer({ photo, leftOut, madeWith, id, changedUtc, result }: Observation): SafeHtml {
   const original = photo && {
     name: photo.metadata.fileName,
-    size: `${photo.metadata.byteLength} bytes, ${photo.metadata.originalWidth} × ${photo.metadata.originalHeight} pixels`,
+    size: `${photo.metadata.byteLength.toLocaleString('en-GB')} bytes, ${photo.metadata.originalWidth} × ${photo.metadata.originalHeight} pixels`,
     kept: leftOut.includes('original') ? 'left out of this record' : 'kept unedited with this record',
   };
   return html`<footer>

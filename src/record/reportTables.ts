@@ -1,7 +1,15 @@
 import { APPEARANCE_CODE_SCOPE, APPEARANCES } from '../tally/appearanceCode.ts';
+import { thicknessQuantiles } from '../tally/rounding.ts';
 import { ANSWER_WORDS, amountAnswer } from './amountAnswer.ts';
 import { html, type SafeHtml } from './html.ts';
-import { areaFigures, codeVolumeFigures, percentWords, plural, volumeFigures } from './inWords.ts';
+import {
+  areaFigures,
+  codeVolumeFigures,
+  percentWords,
+  pixelCoverageWords,
+  plural,
+  volumeFigures,
+} from './inWords.ts';
 import type { Observation, RecordedResult } from './observation.ts';
 
 /** Tables of how much: both volumes side by side, the area, the shares of the code, and the thickness of the film. */
@@ -11,7 +19,7 @@ export function amountTables({ result, slickByEye, viewpoint }: Observation): Sa
   const answer = amountAnswer(result);
   const said = answer === 'noOil' || answer === 'noAnswer' ? ANSWER_WORDS[answer] : null;
   return html`${said ? html`<p>${said}.</p>` : (result.byThickness || result.byCode) && volumeTable(result)}
-${!said && result.byThickness && areaTable(result)}
+${!said && (result.byThickness ? areaTable(result) : coverageLine(result))}
 ${eye && html`<p>By eye ${eye.lengthM} m × ${eye.widthM} m${eye.coverage === undefined ? '' : `, ${percentWords(eye.coverage)} oiled`}.</p>`}
 ${result.byCode && shareTable(result.byCode)}
 ${result.byCode && viewpoint.from !== 'aircraft' && html`<p class="report-small">${APPEARANCE_CODE_SCOPE}</p>`}
@@ -45,6 +53,12 @@ ${area && html`<tr><th scope="row">Coverage</th><td>${share(area.coverageLeast)}
 </table>`;
 }
 
+/** How much of what was read is film, where no area is known. */
+function coverageLine({ summary, byCode }: RecordedResult): SafeHtml | null {
+  const words = summary && !byCode && pixelCoverageWords(summary);
+  return words ? html`<p>${words}</p>` : null;
+}
+
 function shareTable({ shares, parts }: NonNullable<RecordedResult['byCode']>): SafeHtml {
   const rows = APPEARANCES.flatMap(({ code, name, minUm, maxUm, openEnded }) => {
     const share = shares[code - 1] ?? 0;
@@ -65,10 +79,10 @@ function shareTable({ shares, parts }: NonNullable<RecordedResult['byCode']>): S
 
 function thicknessLine({ summary, byThickness }: RecordedResult): SafeHtml | null {
   if (!summary?.quantilesNm) return null;
-  const { p05, p50, p95 } = summary.quantilesNm;
-  const nm = (value: number) => String(Math.round(value));
+  const { p05, p50, p95 } = thicknessQuantiles(summary.quantilesNm);
+  const nm = (value: number) => value.toLocaleString('en-GB');
   const mean = byThickness?.meanThicknessNm;
-  return html`<p>Thickness: nine tenths of the pixels lie between ${nm(p05)} and ${nm(p95)} nm, the median is ${nm(p50)} nm${mean == null ? '' : `; the mean over the oiled area is ${nm(mean)} nm`}. Colour can tell up to about ${nm(summary.resolvableNm.toNm)} nm here.</p>`;
+  return html`<p>Thickness: nine tenths of the pixels lie between ${p05} and ${p95} nm, the median is ${p50} nm${mean == null ? '' : `; the mean over the oiled area is ${nm(Math.round(mean))} nm`}. Colour can tell up to about ${nm(10 * Math.round(summary.resolvableNm.toNm / 10))} nm here.</p>`;
 }
 
 function drainageTable({ law, parameters, rootMeanSquareNm }: RecordedResult['drainage'][number]): SafeHtml {

@@ -7,7 +7,7 @@ export type ResultRow = readonly [string, string, CsvValue, CsvValue, CsvValue, 
 
 /**
  * The observation and its results as one table, a quantity a row, for spreadsheets and scripts. Values stand unrounded in
- * SI units; low and high are the ends of the 90 % interval, or least and most by the code. What was not known has
+ * SI units, but for what is known to a tenth at best; low and high are the ends of the 90 % interval, or least and most by the code. What was not known has
  * no row of its own but is listed at the end.
  */
 export function resultsCsv(observation: Observation): string {
@@ -34,6 +34,10 @@ const sourced = (
   of: Sourced<number> | undefined,
   unit: string,
 ): ResultRow[] => figure(group, quantity, of?.value, unit, of?.source);
+
+/** Of what is known no better: the sun's place, and the ends of what colour can tell. */
+const tenth = <T extends number | undefined>(value: T) =>
+  (value === undefined ? value : Math.round(10 * value) / 10) as T;
 
 function recordRows({ time, position, ...o }: Observation): ResultRow[] {
   return [
@@ -73,8 +77,8 @@ function viewRows({ viewpoint, conditions }: Observation): ResultRow[] {
     ...figure('conditions', 'sea_state_wmo_3700', conditions.seaState, ''),
     ...figure('conditions', 'wave_height', conditions.waveHeightM, 'm'),
     ...text('conditions', 'sky', conditions.sky),
-    ...figure('conditions', 'sun_elevation', sun?.value.elevationDeg, 'deg', sun?.source),
-    ...figure('conditions', 'sun_azimuth', sun?.value.azimuthDeg, 'deg', sun?.source),
+    ...figure('conditions', 'sun_elevation', tenth(sun?.value.elevationDeg), 'deg', sun?.source),
+    ...figure('conditions', 'sun_azimuth', tenth(sun?.value.azimuthDeg), 'deg', sun?.source),
     ...figure('conditions', 'visibility', conditions.visibilityKm, 'km'),
     ...figure('conditions', 'air_temperature', conditions.airTemperatureC, 'degC'),
     ...figure('conditions', 'water_temperature', conditions.waterTemperatureC, 'degC'),
@@ -90,7 +94,15 @@ export function resultRows({ summary, area, byThickness, byCode, drainage }: Rec
     const { quantilesNm: q, resolvableNm, counts } = summary;
     if (q)
       rows.push(['thickness', 'median', q.p50, q.p05, q.p95, 'nm', 'low and high: 5 % and 95 % of pixels']);
-    rows.push(['thickness', 'resolvable', null, resolvableNm.fromNm, resolvableNm.toNm, 'nm', '']);
+    rows.push([
+      'thickness',
+      'resolvable',
+      null,
+      tenth(resolvableNm.fromNm),
+      tenth(resolvableNm.toNm),
+      'nm',
+      '',
+    ]);
     for (const [name, count] of Object.entries(counts)) {
       rows.push(['pixels', name, count, null, null, '1', '']);
     }

@@ -50,10 +50,10 @@ export function mapKeyColours(): readonly { readonly name: string; readonly colo
   const middle = [0, 1, 2].map((c) => ramp[3 * 128 + c]!);
   return [
     { name: 'bare surface', colours: [`rgb(${BARE.join(',')})`] },
-    { name: 'past what colour can tell', colours: AT_LEAST.map(grey) },
+    { name: 'too thick for colour', colours: AT_LEAST.map(grey) },
     { name: 'no film colour', colours: [grey(NO_FILM)] },
     {
-      name: 'two orders fit',
+      name: 'order not sure',
       colours: [`rgb(${middle.join(',')})`, `rgb(${middle.map((v) => Math.floor(v * DIM)).join(',')})`],
     },
     { name: 'not looked at', colours: [grey(OUTSIDE)] },

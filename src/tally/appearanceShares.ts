@@ -57,7 +57,7 @@ export function sharesFromMap(film: FilmRegion, atLeastCode: 2 | 3 = 2): MappedS
   if (belowM2 > 0) {
     notices.push({
       code: 'code-below',
-      text: `${percent(belowM2 / (belowM2 + codedM2))} of the film is under 0.04 µm and has no appearance code: the code's volumes leave it out.`,
+      text: `${percent(belowM2 / (belowM2 + codedM2))} of the film is under 0.04 µm and has no appearance code: the code’s volumes leave it out.`,
     });
   }
   if (atLeastM2 > 0) {

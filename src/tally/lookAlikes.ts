@@ -52,7 +52,7 @@ export const LOOK_ALIKE_QUESTIONS: readonly LookAlikeQuestion[] = [
   {
     id: 'breaksIntoPlates',
     text: 'Poked with a stick from a safe place, does it break into plates that stay apart?',
-    help: 'Only without contact and from firm ground; otherwise answer "cannot tell". Old or waxy oil can break up as well.',
+    help: 'Only without contact and from firm ground; otherwise answer “Cannot tell”. Old or waxy oil can break up as well.',
     ifYes: -2.5,
     ifNo: 0.5,
     yesMeans: 'it broke into plates that stayed apart, as films of bacteria and plants do',

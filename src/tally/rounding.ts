@@ -29,6 +29,37 @@ export function formatInterval(
   };
 }
 
+/** Step to which a thickness is rounded, from the width of its interval; both in nanometres. */
+export function thicknessStepNm(widthNm: number): number {
+  if (!(widthNm >= 12)) return 1;
+  return widthNm < 60 ? 5 : 10;
+}
+
+/** Coarsest interval whose rounding a median is given: medians of many pixels are sharper than one pixel. */
+const MEDIAN_WIDTH_NM = 20;
+
+/** 5th, 50th and 95th percentile of a map's thickness as a person says them, "1,010": for nanometres. */
+export function thicknessQuantiles({
+  p05,
+  p50,
+  p95,
+}: {
+  readonly p05: number;
+  readonly p50: number;
+  readonly p95: number;
+}) {
+  const text = (nm: number, widthNm: number) => {
+    const step = thicknessStepNm(widthNm);
+    return (Math.round(nm / step) * step).toLocaleString('en-GB');
+  };
+  const spread = p95 - p05;
+  return {
+    p05: text(p05, spread),
+    p50: text(p50, Math.min(spread, MEDIAN_WIDTH_NM)),
+    p95: text(p95, spread),
+  };
+}
+
 /** The power of ten to round to. */
 function placeOf(value: number, halfWidth: number): number {
   if (!(halfWidth > 0 && Number.isFinite(halfWidth))) {

@@ -185,7 +185,7 @@ function codeScope({ shares, viewpoint }: SanityFacts): Notice | null {
   return shares && (viewpoint === 'shore' || viewpoint === 'vessel')
     ? {
         code: 'code-scope',
-        text: `Volumes by appearance code are meant for trained observers in aircraft; from ${viewpoint === 'shore' ? 'the shore' : 'a vessel'} they are outside the code's scope (codes ${APPEARANCES[0]!.code} to ${APPEARANCES[4]!.code}).`,
+        text: `Volumes by appearance code are meant for trained observers in aircraft; from ${viewpoint === 'shore' ? 'the shore' : 'a vessel'} they are outside the code’s scope (codes ${APPEARANCES[0]!.code} to ${APPEARANCES[4]!.code}).`,
       }
     : null;
 }

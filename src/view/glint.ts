@@ -77,7 +77,7 @@ export function glintReport(
       share > 0
         ? {
             code: 'sun-glint',
-            text: `Sun glitter is likely on ${Math.max(1, Math.round(100 * share))} % of the water in this photo: turn so that the sun is behind you or to the side.`,
+            text: `Sun glitter is likely on ${Math.max(1, Math.round(100 * share))} % of the water in this photo: it hides the film there. Take one from another side, if you can.`,
           }
         : null,
   };

@@ -12,6 +12,7 @@ import {
 import { setup, undo } from '../../src/app/state.ts';
 import type { KeptCamera } from '../../src/engine/keptCamera.ts';
 import { readKeptCamera } from '../../src/engine/keptCameraSchema.ts';
+import { KEPT } from '../../src/match/cameraKnowledge.ts';
 
 const held = new Map<string, string>();
 let isFull = false;
@@ -24,10 +25,10 @@ vi.stubGlobal('localStorage', {
 });
 
 function camera(name: string, firstMean = 0): KeptCamera {
-  const covariance = Array.from({ length: 18 }, (_, i) =>
+  const covariance = Array.from({ length: KEPT }, (_, i) =>
     Array.from({ length: i + 1 }, (_, j) => (i === j ? 0.04 : 0)),
   ).flat();
-  const mean = Array.from({ length: 18 }, (_, k) => (k === 0 ? firstMean : 0));
+  const mean = Array.from({ length: KEPT }, (_, k) => (k === 0 ? firstMean : 0));
   return {
     format: 'tintfathom camera',
     version: 1,

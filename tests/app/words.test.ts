@@ -1,16 +1,11 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { incidenceWords, skyWords } from '../../src/app/words/names.ts';
-import {
-  intervalText,
-  orderText,
-  roundingStep,
-  shareText,
-  thicknessText,
-} from '../../src/app/words/numbers.ts';
+import { intervalText, orderText, shareText, thicknessText } from '../../src/app/words/numbers.ts';
 import { readingWords, summaryWords } from '../../src/app/words/reading.ts';
 import type { EstimateSummary, Probe } from '../../src/engine/contract.ts';
 import { PIXEL_STATUS } from '../../src/match/types.ts';
+import { thicknessStepNm } from '../../src/tally/rounding.ts';
 
 const PROBE: Probe = {
   x: 1,
@@ -36,13 +31,13 @@ describe('the sentence of a reading', () => {
     expect(readingWords(PROBE, 1000)).toEqual({
       big: '310 nm',
       quiet: '295 to 330 nm · second order',
-      sentence: 'About 310 nm, 295 to 330; second order; next best 505 nm.',
+      sentence: '9 in 10 sure; next best 505 nm.',
     });
   });
 
   it('says that it is not sure where orders fit alike', () => {
     const words = readingWords({ ...PROBE, status: PIXEL_STATUS.ambiguous }, 1000);
-    expect(words.sentence).toMatch(/^Not sure: about 310 nm/);
+    expect(words.sentence).toMatch(/^Order not sure: it could be 505 nm/);
   });
 
   it('leaves out another order that is hardly possible', () => {
@@ -86,7 +81,7 @@ describe('numbers', () => {
           expect(from).toBeLessThanOrEqual(low + 1e-3);
           expect(to).toBeGreaterThanOrEqual(low + width - 1e-3);
           // Rounding widens by less than a step at each end.
-          expect((to ?? 0) - (from ?? 0)).toBeLessThan(width + 2 * roundingStep(width));
+          expect((to ?? 0) - (from ?? 0)).toBeLessThan(width + 2 * thicknessStepNm(width));
         },
       ),
     );

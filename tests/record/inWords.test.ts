@@ -88,6 +88,40 @@ test('the message of a notebook says what is missing, and nothing that is not th
   expect(message).toContain('Volume by appearance code 16 to 180 litres.');
 });
 
+test('the message of a soap film speaks of no water and no oil, but of its thickness', () => {
+  const quay = quayObservation();
+  const summary = quay.result!.summary!;
+  const message = messageText({
+    ...quay,
+    viewpoint: { from: 'bench' },
+    result: {
+      ...quay.result!,
+      byThickness: null,
+      byCode: null,
+      summary: { ...summary, quantilesNm: { ...summary.quantilesNm!, p05: 14.2, p50: 511.4, p95: 1014 } },
+    },
+  });
+  expect(message).not.toMatch(/[Ww]ater[,. ]|[Oo]il|responsible/);
+  expect(message).toContain('Thickness: median 510 nanometres, nine tenths of the pixels from 10 to 1,010.');
+});
+
+test('without a scale the message still says how much of what was read is film', () => {
+  const quay = quayObservation();
+  const counts = { ...quay.result!.summary!.counts, measured: 60, ambiguous: 7, atLeast: 0, bare: 33 };
+  const message = messageText({
+    ...quay,
+    substance: null,
+    result: {
+      ...quay.result!,
+      area: null,
+      byThickness: null,
+      byCode: null,
+      summary: { ...quay.result!.summary!, counts },
+    },
+  });
+  expect(message).toContain('Amount not known.\nFilm on 67 percent of the part of the photo that was read.');
+});
+
 test('a position that was left out is called that', () => {
   const message = messageText({ ...quayObservation(), position: null, leftOut: ['position'] });
   expect(message).toContain('Position left out.');

@@ -25,7 +25,7 @@ test('a hostile record makes no markup', () => {
         : value,
     ),
   ) as Observation;
-  const page = reportDocument(poisoned, { picture, filmName: evil });
+  const page = reportDocument(poisoned, { picture });
   expect(page).not.toContain('<img src=x');
   expect(page.match(/<\/style>/g)).toHaveLength(1);
   expect(page).toContain('&lt;img src=x');

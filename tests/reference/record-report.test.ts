@@ -52,7 +52,7 @@ test.each([
     const observation = quayObservation();
     const pdf = await printed(
       `${name}.pdf`,
-      reportDocument(observation, { picture: mapPicture(width, height), filmName: 'Diesel' }),
+      reportDocument(observation, { picture: mapPicture(width, height) }),
     );
     expect(pagesOf(pdf)).toBe(1);
     expect(tool('pdfinfo', [pdf])).toMatch(/Page size:.*A4/);

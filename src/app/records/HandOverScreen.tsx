@@ -46,6 +46,7 @@ function Files({ observation }: { readonly observation: Observation }) {
     void attempt(words, async () => setNotices(await handOver(kind, { id, ...choice })));
   const { headingDeg, headingReference } = observation.viewpoint;
   const isPlaced = !leaves && observation.position !== null && !!headingDeg && headingReference === 'true';
+  const isBench = observation.viewpoint.from === 'bench';
   const noScale = hasScale(observation) ? null : NO_SCALE;
   const offered: readonly FileButton[] = [
     {
@@ -80,18 +81,23 @@ function Files({ observation }: { readonly observation: Observation }) {
             icon: 'save',
             make: write('rows', 'writing the rows'),
           },
-          {
-            name: 'GeoJSON',
-            content: noScale ?? (isPlaced ? 'outline and classes, for a map program' : NO_PLACE),
-            icon: 'save',
-            make: noScale ? null : write('geojson', 'drawing outlines'),
-          },
-          {
-            name: 'GeoTIFF',
-            content: noScale ?? `thickness on the water, metres${isPlaced ? '' : '; on a grid of its own'}`,
-            icon: 'save',
-            make: noScale ? null : write('geotiff', 'laying it on the water'),
-          },
+          ...(isBench
+            ? []
+            : ([
+                {
+                  name: 'GeoJSON',
+                  content: noScale ?? (isPlaced ? 'outline and classes, for a map program' : NO_PLACE),
+                  icon: 'save',
+                  make: noScale ? null : write('geojson', 'drawing outlines'),
+                },
+                {
+                  name: 'GeoTIFF',
+                  content:
+                    noScale ?? `thickness on the water, metres${isPlaced ? '' : '; on a grid of its own'}`,
+                  icon: 'save',
+                  make: noScale ? null : write('geotiff', 'laying it on the water'),
+                },
+              ] as const)),
         ] as const)
       : []),
   ];
@@ -108,7 +114,7 @@ function Files({ observation }: { readonly observation: Observation }) {
         />
         <span>
           Leave the position out
-          <small class="quiet">of every file below, the sun’s place with it</small>
+          <small class="quiet">of the message and of every file; the sun’s place too</small>
         </span>
       </label>
       {leaves && hasOriginal ? (

@@ -25,6 +25,12 @@ const ANSWERS: readonly (readonly [Answer, string])[] = [
   ['unknown', 'Cannot tell'],
 ];
 
+/** The reason without the conclusion, which stands above it as a heading. */
+function said(reason: string): string {
+  const rest = reason.replace(/^[A-Z][a-z ]+: /, '');
+  return `${(rest[0] ?? '').toUpperCase()}${rest.slice(1)}`;
+}
+
 /** Is it oil? Safety first, then one question at a time; the answers and the conclusion are kept in the record. */
 export function LookAlikeScreen({ id }: { readonly id: string }) {
   useEffect(() => {
@@ -89,7 +95,7 @@ export function LookAlikeScreen({ id }: { readonly id: string }) {
         <>
           <section class="question" role="status">
             <h2 class="lead">{CONCLUSIONS[observation.lookAlikes?.conclusion ?? 'cannotSay']}</h2>
-            <p>{observation.lookAlikes?.reason}</p>
+            <p>{said(observation.lookAlikes?.reason ?? '')}</p>
             <p class="small quiet">A screen, not a proof: a sample settles it. It stands in the record.</p>
           </section>
           <div class="low">

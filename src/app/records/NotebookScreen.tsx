@@ -31,7 +31,7 @@ const empty = (): Notes => {
     coveragePercent: undefined,
     sharesPercent: APPEARANCES.map(() => undefined),
     windMS: undefined,
-    from: from && from !== 'bench' && from !== 'unknown' ? from : 'aircraft',
+    from: from && from !== 'bench' ? from : 'unknown',
   };
 };
 
@@ -67,10 +67,10 @@ export function NotebookScreen() {
       </p>
       <ChoiceField
         label="Seen from"
-        value={notes.from}
+        value={notes.from === 'unknown' ? undefined : notes.from}
         choices={FROM}
-        none={null}
-        onValue={(from) => change({ from: from ?? 'aircraft' })}
+        none="not said"
+        onValue={(from) => change({ from: from ?? 'unknown' })}
       />
       <ChoiceField
         label="Lengths are in"

@@ -1,6 +1,7 @@
 import { ANSWER_WORDS, amountAnswer } from '../../record/amountAnswer.ts';
 import { areaFigures, codeVolumeFigures, plural, volumeFigures } from '../../record/inWords.ts';
 import type { Observation, ObservedPosition } from '../../record/observation.ts';
+import { thicknessQuantiles } from '../../tally/rounding.ts';
 
 export interface Figure {
   readonly name: string;
@@ -51,11 +52,11 @@ export function figuresOf({ result, slickByEye }: Observation): Figure[] {
     });
   }
   if (summary?.quantilesNm) {
-    const { p05, p50, p95 } = summary.quantilesNm;
+    const { p05, p50, p95 } = thicknessQuantiles(summary.quantilesNm);
     figures.push({
       name: 'Thickness',
-      value: `${Math.round(p50)} nm, the median`,
-      more: `nine tenths of the pixels from ${Math.round(p05)} to ${Math.round(p95)} nm`,
+      value: `${p50} nm, the median`,
+      more: `nine tenths of the pixels from ${p05} to ${p95} nm`,
     });
   }
   return figures;

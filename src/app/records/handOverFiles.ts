@@ -6,7 +6,6 @@ import { withoutPosition } from '../../record/redact.ts';
 import { reportMarkup } from '../../record/report.ts';
 import { webSha256 } from '../../record/sha256.browser.ts';
 import { footLine, hand } from '../exportFiles.ts';
-import { filmName } from '../words/names.ts';
 import { flush, theDesk } from './desk.ts';
 
 /** Writes a file in the worker and hands it to the person. @returns what they must know before passing it on */
@@ -44,12 +43,7 @@ export async function printRecord(
   picture: { readonly url: string; readonly topNm: number } | null,
 ): Promise<void> {
   const words = await wordsOf(observation, choice);
-  await printReport(
-    reportMarkup(words, {
-      picture,
-      ...(observation.setup && { filmName: filmName(observation.setup.film) }),
-    }),
-  );
+  await printReport(reportMarkup(words, { picture }));
 }
 
 /** The map with scale and key as PNG, at the map's own size. @throws Error without a map */

@@ -118,7 +118,7 @@ function Covered({ report }: { readonly report: TallyReport }) {
         {share === null ? 'no answer' : percent(share)}
         {least !== null && most !== null && percent(least) !== percent(most) ? (
           <small>
-            {percent(least)} to {percent(most)} with water not read
+            {percent(least).replace(/ %$/, '')} to {percent(most)}, as the water not read may be
           </small>
         ) : null}
       </dd>
@@ -134,10 +134,10 @@ function NoScale({ report }: { readonly report: TallyReport }) {
         <Covered report={report} />
       </dl>
       <p class="note">
-        No area and no litres yet: tell {missing.length > 0 ? missing.join(', ') : 'where the camera stood'}.
+        No area and no litres yet: give {missing.length > 0 ? missing.join(', ') : 'where the camera stood'}.
       </p>
       <button type="button" class="primary" onClick={() => (step.value = 'view')}>
-        Tell where the camera stood
+        Set the view
       </button>
     </>
   );

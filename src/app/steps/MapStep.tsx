@@ -88,7 +88,7 @@ export function MapStep() {
             </li>
           ))}
       </ul>
-      {probe.value ? (
+      {probe.value && mapView.value === 'thickness' ? (
         <p class="small quiet">
           Curve: dashed by the place’s own colour, filled with its neighbours; the numbers are interference
           orders.

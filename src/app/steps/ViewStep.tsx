@@ -54,7 +54,7 @@ export function ViewStep() {
         ))}
       </fieldset>
       {mode === 'down' ? <DownEntry /> : <HeightEntry />}
-      {selected.value && viewTarget.value === 'horizon' ? <NudgePad /> : null}
+      {selected.value && view.horizon && viewTarget.value === 'horizon' ? <NudgePad /> : null}
       {mode === 'tilt' ? <TiltEntry /> : null}
       {fault ? (
         <p role="alert" class="note warn">

@@ -1,22 +1,15 @@
 /** Numbers as a person says them: no more digits than the interval allows. */
-
-/** Step to which a thickness is rounded, from the width of its interval. */
-export function roundingStep(widthNm: number): number {
-  if (!(widthNm > 0)) return 1;
-  if (widthNm < 12) return 1;
-  if (widthNm < 60) return 5;
-  return 10;
-}
+import { thicknessStepNm } from '../../tally/rounding.ts';
 
 /** "310", or "1,240": thickness in nanometres rounded to what its interval supports. */
 export function thicknessText(nm: number, widthNm: number): string {
-  const step = roundingStep(widthNm);
+  const step = thicknessStepNm(widthNm);
   return (Math.round(nm / step) * step).toLocaleString('en-GB');
 }
 
 /** "295 to 330": the interval, rounded outwards. */
 export function intervalText(lowNm: number, highNm: number): string {
-  const step = roundingStep(highNm - lowNm);
+  const step = thicknessStepNm(highNm - lowNm);
   const low = Math.max(0, Math.floor(lowNm / step + 1e-6) * step);
   const high = Math.ceil(highNm / step - 1e-6) * step;
   return `${low.toLocaleString('en-GB')} to ${high.toLocaleString('en-GB')}`;

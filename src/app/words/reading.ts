@@ -1,5 +1,6 @@
 import type { EstimateSummary, Probe } from '../../engine/contract.ts';
 import { PIXEL_STATUS } from '../../match/types.ts';
+import { thicknessQuantiles } from '../../tally/rounding.ts';
 import { intervalText, orderText, shareText, thicknessText } from './numbers.ts';
 
 /** What a reading says: a big line, a quiet line, and the sentence a person would say. */
@@ -50,20 +51,23 @@ export function readingWords(probe: Probe, resolvableToNm: number): ReadingWords
   );
   const order = chosen ? orderText(chosen.order) : '';
   const unsure = probe.status === PIXEL_STATUS.ambiguous;
-  const next = other ? `; next best ${thicknessText(other.thicknessNm, other.highNm - other.lowNm)} nm` : '';
+  const next = other ? `${thicknessText(other.thicknessNm, other.highNm - other.lowNm)} nm` : null;
   return {
     big: `${thicknessText(d, high - low)} nm`,
     quiet: `${intervalText(low, high)} nm${order ? ` · ${order}` : ''}`,
-    sentence: `${unsure ? 'Not sure: about' : 'About'} ${thicknessText(d, high - low)} nm, ${intervalText(low, high)}${order ? `; ${order}` : ''}${next}.`,
+    sentence: sentenceOf(unsure, next),
   };
+}
+
+/** What the figures above it leave open. */
+function sentenceOf(unsure: boolean, next: string | null): string {
+  if (unsure) return next ? `Order not sure: it could be ${next}.` : 'Order not sure.';
+  return next ? `9 in 10 sure; next best ${next}.` : '9 in 10 sure; no other order fits.';
 }
 
 function nearest(probe: Probe, d: number) {
   return [...probe.readings].sort((a, b) => Math.abs(a.thicknessNm - d) - Math.abs(b.thicknessNm - d))[0];
 }
-
-/** Coarsest interval whose rounding a median is given: medians of many pixels are sharper than one pixel. */
-const MEDIAN_WIDTH_NM = 20;
 
 /** Two sentences on a whole map. Its quantiles count bare surface as 0 nm. */
 export function summaryWords({ counts, quantilesNm }: EstimateSummary): string {
@@ -75,9 +79,7 @@ export function summaryWords({ counts, quantilesNm }: EstimateSummary): string {
   }
   const parts = [`Film on ${shareText(read, counts.inRegion)} of the region`];
   if (counts.bare > 0) parts.push(`bare surface on ${shareText(counts.bare, counts.inRegion)}`);
-  const spread = quantilesNm.p95 - quantilesNm.p05;
-  const half = thicknessText(quantilesNm.p50, Math.min(spread, MEDIAN_WIDTH_NM));
-  const most = thicknessText(quantilesNm.p95, spread);
+  const { p50: half, p95: most } = thicknessQuantiles(quantilesNm);
   const spans =
     half === '0'
       ? `95 % of what was read is under ${most} nm`

@@ -39,7 +39,7 @@ export function TimeFact({ observation }: { readonly observation: Observation })
 
   return (
     <Fact name="Time" value={time && timeWords(time)}>
-      <div class="pair">
+      <div class="pair clock">
         <label class="field">
           <span>Date and clock</span>
           <input
