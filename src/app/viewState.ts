@@ -22,6 +22,9 @@ export const firstTap = signal<Point | null>(null);
 /** Two ends of a length whose metres are not typed yet. */
 export const lengthEnds = signal<readonly [Point, Point] | null>(null);
 
+/** The horizon that was put away for another way of telling: choosing it again brings it back. */
+let putAway: ViewSetup['horizon'];
+
 /** Straight down is a pitch of -90 degrees. */
 const DOWN_DEG = -90;
 
@@ -67,7 +70,7 @@ export function changeView(
   change(Object.keys(next).length > 0 ? { ...rest, view: next } : rest, series);
 }
 
-/** Chooses how the tilt is told; what another way said is put away with it. */
+/** Chooses how the tilt is told; what another way said is put away. */
 export function chooseViewMode(mode: ViewMode): void {
   if (mode === viewMode.value) return;
   chosenMode.value = mode;
@@ -77,13 +80,16 @@ export function chooseViewMode(mode: ViewMode): void {
   const { horizon, pitchDeg, pixelSizeM } = setup.value.view ?? {};
   const said = horizon ?? pitchDeg ?? pixelSizeM;
   const none = { horizon: undefined, pitchDeg: undefined, rollDeg: undefined, pixelSizeM: undefined };
+  if (horizon) putAway = horizon;
   if (mode === 'down') changeView({ ...none, pitchDeg: DOWN_DEG });
+  else if (mode === 'horizon' && putAway) changeView({ ...none, horizon: putAway });
   else if (said !== undefined) changeView(none);
 }
 
 /** To be called when the step is entered: nothing half done from before. */
 export function beginView(): void {
   chosenMode.value = null;
+  putAway = undefined;
   firstTap.value = null;
   lengthEnds.value = null;
   viewTarget.value = 'horizon';

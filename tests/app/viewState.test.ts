@@ -58,13 +58,14 @@ describe('where the camera stood', () => {
     expect(setup.value.view?.horizon?.[1]).toEqual([850, 90]);
   });
 
-  it('puts away what another way of telling the tilt said, and keeps the height', () => {
+  it('puts away what another way of telling the tilt said, keeps the height, and brings the horizon back', () => {
+    const horizon = [
+      [100, 120],
+      [900, 110],
+    ] as const;
     changeView({
       heightM: 3,
-      horizon: [
-        [100, 120],
-        [900, 110],
-      ],
+      horizon,
     });
     chooseViewMode('tilt');
     expect(setup.value.view).toEqual({ heightM: 3 });
@@ -73,7 +74,7 @@ describe('where the camera stood', () => {
     expect(setup.value.view).toEqual({ heightM: 3, pitchDeg: -90 });
     expect(viewMode.value).toBe('down');
     chooseViewMode('horizon');
-    expect(setup.value.view).toEqual({ heightM: 3 });
+    expect(setup.value.view).toEqual({ heightM: 3, horizon });
   });
 
   it('comes back with an undo, and the way of telling with it', () => {

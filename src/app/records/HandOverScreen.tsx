@@ -149,7 +149,9 @@ function Files({ observation }: { readonly observation: Observation }) {
           </li>
         ))}
       </ul>
-      <p class="small quiet">Indicative only: the responsible authority decides.</p>
+      <p class="small quiet">
+        {isBench ? 'Indicative only.' : 'Indicative only: the responsible authority decides.'}
+      </p>
     </>
   );
 }

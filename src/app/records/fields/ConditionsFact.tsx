@@ -20,12 +20,26 @@ const POLARISERS: readonly (readonly ['on' | 'off', string])[] = [
   ['on', 'Polariser or polarised glass'],
 ];
 
-/** Wind, sea and sky as they were. */
+/** Wind, sea and sky as they were; of a film at a bench only what was in front of the lens. */
 export function ConditionsFact({ observation }: { readonly observation: Observation }) {
   const { conditions } = observation;
   const change = (patch: { readonly [K in keyof Conditions]?: Conditions[K] | undefined }) =>
     edit((before) => ({ ...before, conditions: patched(before.conditions, patch) }));
   const words = conditionWords(conditions);
+  const polariser = (
+    <ChoiceField
+      label="In front of the lens"
+      value={conditions.polariser}
+      choices={POLARISERS}
+      onValue={(chosen) => change({ polariser: chosen })}
+    />
+  );
+  if (observation.viewpoint.from === 'bench')
+    return (
+      <Fact name="Polariser" value={words.length > 0 ? words.join(', ') : null}>
+        {polariser}
+      </Fact>
+    );
   return (
     <Fact name="Wind, sea, sky" value={words.length > 0 ? words.join(', ') : null}>
       <div class="pair">
@@ -57,12 +71,7 @@ export function ConditionsFact({ observation }: { readonly observation: Observat
         />
         <ChoiceField label="Sky" value={conditions.sky} choices={SKIES} onValue={(sky) => change({ sky })} />
       </div>
-      <ChoiceField
-        label="In front of the lens"
-        value={conditions.polariser}
-        choices={POLARISERS}
-        onValue={(polariser) => change({ polariser })}
-      />
+      {polariser}
       <TextField
         label="The water: colour, foam, weed, ice"
         value={conditions.waterRemarks ?? ''}
