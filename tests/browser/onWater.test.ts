@@ -36,9 +36,6 @@ const TRUTH_STEP = 8;
 /** The figure to reach (issue 4): from opening the photo to a finished record. */
 const MOST_TAPS = 12;
 
-/** `npm run screenshots` keeps the amount for the README. */
-const KEEP = process.env.KEEP_SCREENSHOTS === '1';
-
 let app: BuiltApp;
 let browser: Browser;
 let context: BrowserContext;
@@ -48,11 +45,7 @@ const complaints: string[] = [];
 beforeAll(async () => {
   app = await serveBuiltApp();
   browser = await launchChromium();
-  context = await browser.newContext({
-    viewport: { width: 390, height: 844 },
-    deviceScaleFactor: KEEP ? 2 : 1,
-    hasTouch: true,
-  });
+  context = await browser.newContext({ viewport: { width: 390, height: 844 }, hasTouch: true });
   page = await context.newPage();
   page.on('pageerror', (error) => complaints.push(error.message));
   page.on('console', (message) => {
@@ -230,7 +223,6 @@ describe('oil on water, from a slanted photo to an amount', () => {
         .then((all) => all.map((text) => Number(text.replace('%', ''))));
     const sum = (all: readonly number[]) => all.reduce((total, share) => total + share, 0);
     const before = await shares();
-    if (KEEP) await page.screenshot({ path: 'public/screenshots/amount.png' });
     expect(sum(before)).toBe(100);
     expect(before.slice(3)).toEqual([0, 0]);
     await button('Continuous true oil colour: more').click();
@@ -350,7 +342,7 @@ describe('oil on water, from a slanted photo to an amount', () => {
     await page.getByLabel('Lens above the water, in metres').blur();
     await step('Amount').click();
     await page
-      .getByText('No area and no litres yet: tell the height of the lens.')
+      .getByText('No area and no litres yet: give the height of the lens.')
       .waitFor({ timeout: 60_000 });
     expect(await page.locator('.volume').count()).toBe(0);
     expect(await page.locator('.key-figures').textContent()).toMatch(/Coverage\d+ %/);

@@ -226,8 +226,21 @@ describe('the whole job in a real browser, offline', () => {
     expect(await violations(page)).toEqual([]);
     await picture('chart');
     await page.goto(`${app.url}#/about`);
+    for (const part of ['Figures', 'Materials', 'Libraries']) {
+      await page.locator('summary', { hasText: part }).click();
+    }
     await page.getByText('BSD-3-Clause').first().waitFor();
     expect(await violations(page)).toEqual([]);
+  });
+
+  it.runIf(KEEP)('keeps a picture of an amount', async () => {
+    await page.goto(app.url);
+    await page.getByText('Sheen in a harbour').click();
+    await step('Map').click();
+    await page.locator('.legend').waitFor({ timeout: 60_000 });
+    await step('Amount').click();
+    await page.locator('.volume').first().waitFor({ timeout: 30_000 });
+    await picture('amount');
   });
 
   it('never asked anything of another origin, and nothing complained', () => {

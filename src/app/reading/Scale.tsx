@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'preact/hooks';
+import { useLayoutEffect, useRef } from 'preact/hooks';
 import type { Probe } from '../../engine/contract.ts';
 import { orderStep } from '../mapPicture.ts';
 import { orderText } from '../words/numbers.ts';
@@ -21,7 +21,8 @@ export function Scale({
 }) {
   const canvas = useRef<HTMLCanvasElement>(null);
   const endNm = scaleTopNm(topNm, probe);
-  useEffect(() => {
+  // Before the page is drawn: a scale without its colours must not be seen.
+  useLayoutEffect(() => {
     const context = canvas.current?.getContext('2d');
     if (!context) return;
     for (let i = 0; i < 256; i++) {
@@ -34,7 +35,7 @@ export function Scale({
       {probe ? <PosteriorCurve probe={probe} endNm={endNm} /> : null}
       <canvas ref={canvas} width={256} height={1} />
       <ol>
-        {ticksTo(endNm, 4).map(({ nm, text }) => (
+        {ticksTo(endNm, 3.9).map(({ nm, text }) => (
           <li key={nm} class={nm > 0.93 * endNm ? 'end' : ''} style={{ left: `${(100 * nm) / endNm}%` }}>
             {text}
           </li>

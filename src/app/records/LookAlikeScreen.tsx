@@ -96,7 +96,9 @@ export function LookAlikeScreen({ id }: { readonly id: string }) {
           <section class="question" role="status">
             <h2 class="lead">{CONCLUSIONS[observation.lookAlikes?.conclusion ?? 'cannotSay']}</h2>
             <p>{said(observation.lookAlikes?.reason ?? '')}</p>
-            <p class="small quiet">A screen, not a proof: a sample settles it. It stands in the record.</p>
+            <p class="small quiet">
+              A rough check, not a proof: a sample settles it. It is kept in the record.
+            </p>
           </section>
           <div class="low">
             <button type="button" class="plain" onClick={() => setAt(0)}>
