@@ -16,7 +16,7 @@ export interface VolumeInputs {
   readonly correlatedPixels: number;
   /**
    * What gave no answer (glint, mirrored walls, posts) may be water as oily as the read water around it, or none: each
-   * trial takes a share of it drawn evenly from 0 to this, 0 to 1. The best value counts none of it.
+   * trial takes a share of it drawn evenly from 0 to this, 0 to 1. The best value takes the middle of that.
    */
   readonly unreadMost: number;
 }
@@ -55,8 +55,8 @@ export interface VolumeByThickness {
 /**
  * Oil volume as the sum of thickness times area over pixels with an answer, with a Monte Carlo interval (JCGM 101:2008).
  * What all pixels share (view, index, chart, shift) is drawn once a trial; what each pixel has to itself shrinks with
- * their number. Pixels past the resolvable range enter with their lower bound; water without an answer widens the interval
- * upwards only.
+ * their number. Pixels past the resolvable range enter with their lower bound; water without an answer counts half in the
+ * best value, and from nothing to all in the interval.
  * @param draw errors of view and index (`commonDraw`, `indexDraw`)
  * @param alternatives second readings of ambiguous pixels; without them their likeliest reading is taken as right
  * @throws RangeError where arrays or cells do not fit the map
@@ -119,16 +119,18 @@ export function volumeFromSums(
   }
   const filmM2 = total(sums.filmM2);
   const atLeastM2 = total(sums.atLeastM2);
-  const oiledM2 = filmM2 + atLeastM2;
+  const readM2 = filmM2 + atLeastM2;
+  const half = inputs.unreadMost / 2;
+  const oiledM2 = readM2 + half * product(sums.unreadM2, perM2);
   const atLeastM3 = 1e-9 * total(sums.atLeastNmM2);
-  const bestM3 = 1e-9 * total(sums.filmNmM2) + atLeastM3;
+  const bestM3 = 1e-9 * (total(sums.filmNmM2) + half * product(sums.unreadM2, nmPerM2)) + atLeastM3;
   return {
     volumeM3: spread(volumes, bestM3, inputs.coverage),
     oiledM2: spread(areas, oiledM2, inputs.coverage),
     atLeast: atLeastM2 > 0,
     atLeastM3,
-    atLeastShare: oiledM2 > 0 ? atLeastM2 / oiledM2 : 0,
-    ambiguousShare: oiledM2 > 0 ? total(sums.ambiguousM2) / oiledM2 : 0,
+    atLeastShare: readM2 > 0 ? atLeastM2 / readM2 : 0,
+    ambiguousShare: readM2 > 0 ? total(sums.ambiguousM2) / readM2 : 0,
     meanThicknessNm: (1e9 * bestM3) / oiledM2,
     inputs,
   };
@@ -155,6 +157,10 @@ function unreadAsAround(sums: CellSums): { readonly perM2: Float64Array; readonl
 function spread(values: Float64Array, best: number, coverage: number): Spread {
   const { low, high } = summarise(values, coverage).symmetric;
   return { least: low, best, most: high };
+}
+
+function product(a: Float64Array, b: Float64Array): number {
+  return a.reduce((sum, value, i) => sum + value * b[i]!, 0);
 }
 
 function total(values: Float64Array): number {
