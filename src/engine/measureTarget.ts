@@ -258,7 +258,7 @@ function residualOf(
 
 function adviceFor(determined: FittedCamera['determined'], used: number, residualCodes: number): string {
   const told =
-    'It fixes how this phone bends light and mixes colours; its sensor only in part, because paints are smooth.';
+    'It fixes this phone’s tone curve and how it mixes colours; its sensor only in part, because paints are smooth.';
   if (determined === 'well') return `${used} patches agree with one camera. ${told}`;
   const why =
     used < 20

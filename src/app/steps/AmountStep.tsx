@@ -118,7 +118,7 @@ function Covered({ report }: { readonly report: TallyReport }) {
         {share === null ? 'no answer' : percent(share)}
         {least !== null && most !== null && percent(least) !== percent(most) ? (
           <small>
-            {percent(least).replace(/ %$/, '')} to {percent(most)}, as the water not read may be
+            {percent(least).replace(/ %$/, '')} to {percent(most)}: some water gave no answer
           </small>
         ) : null}
       </dd>
