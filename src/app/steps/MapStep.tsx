@@ -1,6 +1,6 @@
 import { KeepCamera } from '../camera/KeepCamera.tsx';
 import { ProbeSheet } from '../reading/ProbeSheet.tsx';
-import { image, mapView, probe, result, setup, wipe } from '../state.ts';
+import { image, mapView, onWater, probe, result, setup, wipe } from '../state.ts';
 import { shareText } from '../words/numbers.ts';
 import { summaryWords } from '../words/reading.ts';
 
@@ -14,16 +14,18 @@ const WIPES = [
 /** The reading: wipe, probe, hand over. */
 export function MapStep() {
   const done = result.value;
+  const { clean, white } = setup.value.references ?? {};
+  const hasReference = Boolean(clean || white);
   if (!done) {
-    const references = setup.value.references ?? {};
-    const hasReference = Boolean(references.clean || references.white);
     return (
       <section aria-label="Map">
         <h1>{hasReference ? 'Ready to measure' : 'Measure without a reference?'}</h1>
         <p class="quiet">
           {hasReference
             ? 'The photo’s own film colours will calibrate its camera.'
-            : 'Without clean surface or a card the reading is uncalibrated. Marking one takes a tap.'}
+            : onWater(setup.value.film)
+              ? 'Without clean surface or a card the reading is uncalibrated. Marking one takes a tap.'
+              : 'The film’s brightest band will have to set the exposure. A marked card is surer, and takes a tap.'}
         </p>
       </section>
     );
@@ -49,7 +51,11 @@ export function MapStep() {
         <>
           <h1>Tap the map to read it</h1>
           <p class={summary.calibrated ? 'badge' : 'badge warn'}>
-            {summary.calibrated ? 'Calibrated by a reference' : 'Uncalibrated: mark clean surface or a card'}
+            {!summary.calibrated
+              ? 'Uncalibrated: mark clean surface or a card'
+              : hasReference
+                ? 'Calibrated by a reference'
+                : 'Calibrated by its brightest band only'}
           </p>
           <p>{summaryWords(summary)}</p>
         </>
