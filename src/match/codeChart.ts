@@ -59,7 +59,11 @@ export function searchable(chart: CodeChart): SearchChart {
   return { ...chart, blocks, balls, leastPrecision };
 }
 
-/** Smallest eigenvalue of a symmetric 3 x 3 given as xx yy zz xy xz yz (closed form; Smith 1961). */
+/**
+ * Lower bound of the smallest eigenvalue of a symmetric 3 x 3 given as xx yy zz xy xz yz (closed form; Smith 1961), within
+ * 1e-7 of the spread of its eigenvalues: where two of them meet, rounding moves the arc cosine by the root of the
+ * machine's precision, and a bound must not lie above.
+ */
 export function leastEigenvalue(m: Float64Array, at: number): number {
   const [xx, yy, zz] = [m[at]!, m[at + 1]!, m[at + 2]!];
   const [xy, xz, yz] = [m[at + 3]!, m[at + 4]!, m[at + 5]!];
@@ -72,8 +76,11 @@ export function leastEigenvalue(m: Float64Array, at: number): number {
   const [d, e, f] = [xy / p, xz / p, yz / p];
   const half = (a * (b * c - f * f) - d * (d * c - f * e) + e * (d * f - b * e)) / 2;
   const angle = Math.acos(Math.max(-1, Math.min(1, half))) / 3;
-  return Math.max(0, mean + 2 * p * Math.cos(angle + (2 * Math.PI) / 3));
+  return Math.max(0, mean + p * (2 * Math.cos(angle + (2 * Math.PI) / 3) - ROUNDING));
 }
+
+/** Share of the spread that rounding may add. */
+const ROUNDING = 1e-7;
 
 /** Precision and log determinant of a covariance xx yy zz xy xz yz, written at label j. */
 export function invertCovariance(

@@ -148,7 +148,11 @@ describe('covariances of the chart', () => {
           }
         },
       ),
-      { numRuns: 200 },
+      // Two least eigenvalues that almost meet: there the closed form loses half its digits.
+      {
+        numRuns: 200,
+        examples: [[[2.9999999988530752, -0.00045815139479675254, 0, 0, 0, 0, 0, 0, 2.9999999295878403]]],
+      },
     );
   });
 });
