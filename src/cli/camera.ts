@@ -5,13 +5,11 @@ import { ILLUMINANT_IDS } from '../colour/light.ts';
 import { cameraNameFrom, nameCamera } from '../engine/keptCamera.ts';
 import { measureTarget } from '../engine/measureTarget.ts';
 import { parseSetup } from '../engine/parseSetup.ts';
-import { SetupError } from '../engine/prepareScene.ts';
 import type { FourCorners } from '../photo/targetColours.ts';
-import { PhotoError } from '../photo/types.ts';
 import { UsageError } from './arguments.ts';
 import { decodePhotoFile } from './decodePhoto.ts';
+import { runCommand } from './runCommand.ts';
 
-const BAD_INPUT = 2;
 const USAGE = `Usage: npm run --silent camera -- PHOTO --corners "x,y x,y x,y x,y" --out camera.json [--name NAME]
   [--daylight K | --illuminant ID]
 
@@ -88,11 +86,4 @@ async function main(): Promise<number> {
   return 0;
 }
 
-try {
-  process.exitCode = await main();
-} catch (error) {
-  const known = error instanceof UsageError || error instanceof SetupError || error instanceof PhotoError;
-  if (!known) throw error;
-  console.error(error.message.replaceAll('\n', ' '));
-  process.exitCode = BAD_INPUT;
-}
+await runCommand(main);

@@ -7,14 +7,13 @@ import { photoViewOf, withPhotoFocal } from '../engine/photoView.ts';
 import { SetupError } from '../engine/prepareScene.ts';
 import type { Setup } from '../engine/setup.ts';
 import { tallyPhoto } from '../engine/tally.ts';
-import { type DecodedPhoto, PhotoError } from '../photo/types.ts';
+import type { DecodedPhoto } from '../photo/types.ts';
 import { placeless } from '../record/redact.ts';
 import { parseEstimateArguments, USAGE, UsageError } from './arguments.ts';
 import { decodePhotoFile } from './decodePhoto.ts';
 import { resultFiles } from './resultFiles.ts';
+import { runCommand } from './runCommand.ts';
 import { GROUND_FILES, tallyFiles } from './tallyFiles.ts';
-
-const BAD_INPUT = 2;
 
 async function readSetup(path: string): Promise<Setup> {
   let text: string;
@@ -75,11 +74,4 @@ async function main(): Promise<number> {
   return 0;
 }
 
-try {
-  process.exitCode = await main();
-} catch (error) {
-  const known = error instanceof UsageError || error instanceof SetupError || error instanceof PhotoError;
-  if (!known) throw error;
-  console.error(error.message.replaceAll('\n', ' '));
-  process.exitCode = BAD_INPUT;
-}
+await runCommand(main);

@@ -5,7 +5,7 @@
  */
 import { SENSOR_DEPARTURES } from '../colour/sensorDepartures.ts';
 import type { CameraFit } from './fitCamera.ts';
-import { AT, PARAMETERS, type Prior } from './parameters.ts';
+import { AT, MATRIX_ENTRIES, PARAMETERS, type Prior } from './parameters.ts';
 import { inverseOf } from './symmetric.ts';
 
 /** Places in the parameter vector that are kept: sensor, tone curve, colour matrix, the sensor's departures from its family. */
@@ -35,15 +35,6 @@ const CHANGE = { sensor: 0.1, tone: [0.04, 0.02, 0.01], matrix: 0.03 } as const;
  * processors do) such an error comes out as a turned matrix; see `turnedBy`. Engineering judgement.
  */
 const BALANCE_SD = 0.08;
-/** Row and column of each kept entry of the matrix, in the order of the parameters. */
-const ENTRIES: readonly (readonly [number, number])[] = [
-  [0, 1],
-  [0, 2],
-  [1, 0],
-  [1, 2],
-  [2, 0],
-  [2, 1],
-];
 
 /** The marginal of a fit over the parameters that belong to the phone. */
 export function cameraKnowledge(fit: Pick<CameraFit, 'parameters' | 'covariance'>): CameraKnowledge {
@@ -83,7 +74,7 @@ export function atNextPhoto(known: CameraKnowledge, matrix: ArrayLike<number>): 
  */
 function turnedBy(matrix: ArrayLike<number>): Float64Array {
   const out = new Float64Array(18);
-  ENTRIES.forEach(([row, column], e) => {
+  MATRIX_ENTRIES.forEach(([row, column], e) => {
     for (let k = 0; k < 3; k++)
       out[3 * e + k] = matrix[3 * row + column]! * ((column === k ? 1 : 0) - matrix[3 * row + k]!);
   });

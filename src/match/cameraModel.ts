@@ -2,7 +2,7 @@ import { SENSOR_DEPARTURES } from '../colour/sensorDepartures.ts';
 import { SENSOR_COMPONENTS } from '../colour/sensorFamily.ts';
 import type { RgbEncoding } from '../colour/types.ts';
 import { COMPONENTS, type FilmBasis, ROW } from './filmBasis.ts';
-import { AT, PARAMETERS } from './parameters.ts';
+import { AT, MATRIX_ENTRIES, PARAMETERS } from './parameters.ts';
 import { toneFourth, toneOf, toneS, toneSkew, toneSlope } from './toneCurve.ts';
 
 /** Everything of the forward model that stays fixed while its parameters move. */
@@ -29,14 +29,6 @@ export interface ModelEvaluator {
 const FULL = 255;
 /** Step for derivatives of the matrix by sensor coefficients, in standard deviations of the family. */
 const SENSOR_STEP = 0.05;
-const OFF_DIAGONAL: readonly (readonly [number, number])[] = [
-  [0, 1],
-  [0, 2],
-  [1, 0],
-  [1, 2],
-  [2, 0],
-  [2, 1],
-];
 
 /** Place of the coefficient of channel c's component k (1 and up) in the parameter vector. */
 function placeOf(c: number, k: number): number {
@@ -85,7 +77,7 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
     }
     matrix.set(nominal);
     for (let e = 0; e < 6; e++) {
-      const [row, column] = OFF_DIAGONAL[e]!;
+      const [row, column] = MATRIX_ENTRIES[e]!;
       matrix[row * 3 + column]! += parameters[AT.matrix + e]!;
       matrix[row * 3 + row]! -= parameters[AT.matrix + e]!;
     }
@@ -186,7 +178,7 @@ export function modelEvaluator(model: CameraModel): ModelEvaluator {
       }
     }
     for (let e = 0; e < 6; e++) {
-      const [c, source] = OFF_DIAGONAL[e]!;
+      const [c, source] = MATRIX_ENTRIES[e]!;
       out[c * PARAMETERS + AT.matrix + e] = gain[c]! * (response[source]! - response[c]!);
     }
     for (let c = 0; c < 3; c++) finishRow(c, out);

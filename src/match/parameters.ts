@@ -27,6 +27,16 @@ export const AT = {
 } as const;
 export const PARAMETERS = 26 + 3 * SENSOR_DEPARTURES;
 
+/** Row and column of each departure of the colour matrix, in the order of the parameters. */
+export const MATRIX_ENTRIES: readonly (readonly [number, number])[] = [
+  [0, 1],
+  [0, 2],
+  [1, 0],
+  [1, 2],
+  [2, 0],
+  [2, 1],
+];
+
 export const PARAMETER_NAMES: readonly string[] = [
   ...['red', 'green', 'blue'].flatMap((c) => [1, 2, 3].map((k) => `${c} sensitivity, component ${k}`)),
   ...['red', 'green', 'blue'].map((c) => `ln gain, ${c}`),
